@@ -1,0 +1,114 @@
+import { z } from 'zod';
+
+/** Refrigerants offered, by ASHRAE 34 number. */
+export const REFRIGERANTS = [
+	'R-134a',
+	'R-1234ze(E)',
+	'R-1234yf',
+	'R-513A',
+	'R-514A',
+	'R-123',
+	'R-22',
+	'R-410A',
+	'R-407C'
+] as const;
+export const refrigerantSchema = z.enum(REFRIGERANTS);
+export type Refrigerant = z.infer<typeof refrigerantSchema>;
+
+const percentField = z.number().min(0).max(150).nullable();
+
+/** What kind of machine a unit is: decides which figures, clues and defaults apply. Everything may be unknown (null). */
+export const natureSchema = z
+	.object({
+		evaporator: z.enum(['flooded', 'falling-film', 'dx']).nullable(),
+		condenser: z.enum(['water', 'air', 'evaporative']).nullable(),
+		metering: z.enum(['electronic-valve', 'thermostatic-valve', 'orifice', 'level']).nullable(),
+		compressor: z.enum(['screw', 'scroll', 'reciprocating', 'centrifugal']).nullable(),
+		capacityControl: z.enum(['slide', 'steps', 'speed', 'vanes']).nullable(),
+		slideActuation: z.enum(['oil-both-ways', 'spring-unload', 'gas', 'unknown']).nullable(),
+		starter: z.enum(['wye-delta', 'solid-state', 'across-line', 'drive', 'unknown']).nullable(),
+		/** seconds from the start to the starter's transition */
+		starterTransition: z.number().min(0).max(120).nullable(),
+		ratedAmps: z.number().positive().nullable(),
+		startsPerHour: z.number().positive().nullable(),
+		maxCapacity: percentField,
+		minCapacity: percentField,
+		oilCooling: z.enum(['none', 'water', 'refrigerant', 'injection', 'unknown']).nullable(),
+		economiser: z.boolean().nullable(),
+		pumpDownOnStop: z.boolean().nullable(),
+		evapFluid: z.object({ kind: z.enum(['water', 'EG', 'PG']), percent: z.number().min(0).max(60) }).nullable(),
+		/** L/s */
+		designEvapFlow: z.number().positive().nullable(),
+		designCondFlow: z.number().positive().nullable(),
+		/** K */
+		designEvapDelta: z.number().positive().nullable(),
+		designCondDelta: z.number().positive().nullable(),
+		/** kW of cooling */
+		designDuty: z.number().positive().nullable()
+	})
+	.partial();
+export type UnitNature = z.infer<typeof natureSchema>;
+
+export const LIMIT_KEYS = [
+	'startUpWindow', // s
+	'firstStartRest', // s
+	'evapSaturationCutout', // °C
+	'evapSaturationCutoutDelay', // s
+	'startBypass', // s
+	'cutoutDegreeSeconds', // K·s
+	'suctionPressureCutout', // kPa absolute
+	'leavingWaterCutout', // °C
+	'freezeLimit', // °C
+	'condSaturationCutout', // °C
+	'condPressureCutout', // kPa absolute
+	'dischargeTempCutout', // °C
+	'oilTempCutout', // °C
+	'oilNetCutout', // kPa
+	'systemDeltaCutout', // kPa
+	'marginCutout', // K
+	'windingTempCutout', // °C
+	'startCapacityUsualLow', // %
+	'startCapacityUsualHigh', // %
+	'startCapacityOverStaged', // %
+	'fullLoading', // %
+	'stallBandLow', // %
+	'stallBandHigh', // %
+	'lineRestrictionMargin', // K, oil minus condensing, negative
+	'marginUsualAtStart', // K
+	'oilTempUsualHigh', // °C
+	'pairedSensorTolerance', // K
+	'hardSensorTolerance', // K
+	'oilLevelLow', // mm above the separator's base
+	'oilLevelHigh', // mm
+	'condWaterLeast', // °C
+	'evapApproachUsualHigh', // K
+	'condApproachUsualHigh', // K
+	'superheatUsualLow', // K
+	'superheatUsualHigh', // K
+	'currentLimit', // % of rated
+	'pumpLead' // s
+] as const;
+export type LimitKey = (typeof LIMIT_KEYS)[number];
+
+/** Where a number comes from: the unit's maker, the trade's common practice, this product's choice, the caller, or learned from the unit's own history. */
+export const provenanceSchema = z.enum(['maker', 'practice', 'ours', 'given', 'learned', 'source']);
+export type Provenance = z.infer<typeof provenanceSchema>;
+
+/** One value of a limit, in stored units, valid from an instant on (ms UTC; −Infinity = for all time). */
+export type LimitValue = { value: number; provenance: Provenance; validFrom: number; note?: string };
+
+/** All values of a unit's limits, each list sorted by `validFrom`. A limit that is not there is not known. */
+export type LimitHistory = Partial<Record<LimitKey, readonly LimitValue[]>>;
+
+/** The value of a limit in force at an instant, or null. */
+export function limitAt(limits: LimitHistory, key: LimitKey, at: number): LimitValue | null {
+	let found: LimitValue | null = null;
+	for (const entry of limits[key] ?? []) if (entry.validFrom <= at) found = entry;
+	return found;
+}
+
+/** Limits every unit has from the beginning: this product's own choices, editable. */
+export const DEFAULT_LIMITS: LimitHistory = {
+	startUpWindow: [{ value: 1200, provenance: 'ours', validFrom: -Infinity }],
+	firstStartRest: [{ value: 21600, provenance: 'ours', validFrom: -Infinity }]
+};
