@@ -100,7 +100,8 @@ export function isMeasureKey(key: string): key is MeasureKey {
  * @throws RangeError when the altitude is not between −500 and 9,000 m
  */
 export function airPressure(altitude: number): number {
-	if (!(altitude >= -500 && altitude <= 9000)) throw new RangeError(`altitude ${altitude} m is outside −500 to 9,000 m`);
+	if (!(altitude >= -500 && altitude <= 9000))
+		throw new RangeError(`altitude ${altitude} m is outside −500 to 9,000 m`);
 	return 101.325 * (1 - 2.25577e-5 * altitude) ** 5.25588;
 }
 

@@ -1,0 +1,90 @@
+import { z } from 'zod';
+import { LIMIT_KEYS, natureSchema, provenanceSchema, refrigerantSchema } from '../unit';
+import { idSchema, instantSchema } from './common';
+
+/** Is `zone` an IANA time zone this machine knows? */
+function isTimeZone(zone: string): boolean {
+	try {
+		return Boolean(new Intl.DateTimeFormat('en', { timeZone: zone }));
+	} catch {
+		return false;
+	}
+}
+const timeZoneSchema = z.string().refine(isTimeZone, 'is not an IANA time zone, for example Europe/Berlin');
+
+export const siteInputSchema = z
+	.object({
+		name: z.string().trim().min(1).max(120),
+		timeZone: timeZoneSchema,
+		address: z.string().trim().max(300).nullable().optional(),
+		altitude: z.number().min(-500).max(9000).nullable().optional().meta({ description: 'm above sea level' })
+	})
+	.meta({ id: 'SiteInput' });
+export const siteSchema = z
+	.object({
+		id: idSchema,
+		name: z.string(),
+		timeZone: z.string(),
+		address: z.string().nullable(),
+		altitude: z.number().nullable()
+	})
+	.meta({ id: 'Site' });
+export type Site = z.infer<typeof siteSchema>;
+
+const limitValueSchema = z.object({
+	value: z.number(),
+	provenance: provenanceSchema.default('given'),
+	validFrom: instantSchema.nullable().optional(),
+	note: z.string().max(300).optional()
+});
+/** A bare number is the caller's own for all time; null takes the limit away. */
+export const limitInputSchema = z.union([z.number(), limitValueSchema, z.array(limitValueSchema), z.null()]);
+const limitsInputSchema = z.partialRecord(z.enum(LIMIT_KEYS), limitInputSchema);
+export type LimitsInput = z.infer<typeof limitsInputSchema>;
+
+const tagSchema = z.string().trim().min(1).max(60);
+export const unitInputSchema = z
+	.object({
+		siteId: idSchema,
+		tag: tagSchema,
+		refrigerant: refrigerantSchema,
+		circuits: z.number().int().min(1).max(4).default(1),
+		nature: natureSchema.default({}),
+		limits: limitsInputSchema.default({})
+	})
+	.meta({ id: 'UnitInput' });
+export const unitPatchSchema = unitInputSchema
+	.omit({ siteId: true })
+	.partial()
+	.extend({
+		nature: natureSchema.optional(),
+		limits: limitsInputSchema.optional(),
+		circuits: z.number().int().min(1).max(4).optional()
+	})
+	.meta({ id: 'UnitPatch' });
+
+export const unitSchema = z
+	.object({
+		id: idSchema,
+		siteId: idSchema,
+		tag: z.string(),
+		refrigerant: refrigerantSchema,
+		circuits: z.number().int(),
+		nature: natureSchema,
+		limits: z.partialRecord(
+			z.enum(LIMIT_KEYS),
+			z.array(
+				z.object({
+					value: z.number(),
+					provenance: provenanceSchema,
+					validFrom: instantSchema.nullable(),
+					note: z.string().optional()
+				})
+			)
+		)
+	})
+	.meta({
+		id: 'Unit',
+		description: 'limits in °C, K, kPa absolute, %, s; each a list by the instant it is valid from'
+	});
+export type Unit = z.infer<typeof unitSchema>;
