@@ -1,0 +1,48 @@
+import { createHash } from 'node:crypto';
+import { existsSync, readFileSync, readdirSync, writeFileSync } from 'node:fs';
+import { join } from 'node:path';
+import { root } from './paths.mjs';
+import { run, say } from './run.mjs';
+
+const stamp = join(root, 'build', '.sources');
+const SOURCES = ['src', 'static', 'fixtures', 'package-lock.json', 'svelte.config.js', 'vite.config.ts', 'tsconfig.json'];
+
+function* files(path) {
+	const full = join(root, path);
+	if (!existsSync(full)) return;
+	let entries;
+	try {
+		entries = readdirSync(full, { withFileTypes: true });
+	} catch {
+		yield path;
+		return;
+	}
+	for (const entry of entries.sort((a, b) => (a.name < b.name ? -1 : 1))) {
+		const below = join(path, entry.name);
+		if (entry.isDirectory()) yield* files(below);
+		else yield below;
+	}
+}
+
+/** A hash over everything a build is made from. */
+function sourcesHash() {
+	const hash = createHash('sha256');
+	for (const source of SOURCES) {
+		for (const file of files(source)) {
+			if (/\.(test\.ts|md)$/.test(file)) continue;
+			hash.update(file).update(readFileSync(join(root, file)));
+		}
+	}
+	return hash.digest('hex');
+}
+
+/** Builds the web and worker programs unless the build on disk is made from these very sources. */
+export async function buildWhenStale() {
+	const now = sourcesHash();
+	if (existsSync(stamp) && readFileSync(stamp, 'utf8') === now) return;
+	say('Building …');
+	const quiet = { cwd: root, stdio: ['ignore', 'ignore', 'inherit'] };
+	await run('npx', ['vite', 'build', '--logLevel', 'error'], quiet);
+	await run('npx', ['vite', 'build', '--mode', 'worker', '--logLevel', 'error'], quiet);
+	writeFileSync(stamp, now);
+}
