@@ -1,3 +1,4 @@
+import type { Role } from '$lib/model/people';
 import {
 	bigint,
 	boolean,
@@ -16,9 +17,6 @@ import {
 
 export const instant = () => timestamp({ withTimezone: true, mode: 'date', precision: 3 });
 const created = () => instant().notNull().defaultNow();
-
-export const ROLES = ['owner', 'manager', 'engineer', 'technician', 'client'] as const;
-export type Role = (typeof ROLES)[number];
 
 export type Preferences = { units: 'ip' | 'si'; paper: 'day' | 'night' | 'system' };
 
