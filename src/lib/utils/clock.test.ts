@@ -1,0 +1,58 @@
+import { describe, expect, it } from 'vitest';
+import * as clock from './clock';
+
+describe('clock and date of a site', () => {
+	// tz cases: New York 2024-11-03 01:30 is 05:30Z and 06:30Z; London 2024-10-27 01:30 is 00:30Z or 01:30Z (IANA tz).
+	it('reads the repeated hour alike and says which by its zone', () => {
+		expect(clock.formatClock('2024-11-03T05:30:00Z', 'America/New_York')).toBe('01:30');
+		expect(clock.formatClock('2024-11-03T06:30:00Z', 'America/New_York')).toBe('01:30');
+		expect(clock.formatClock('2024-10-27T00:30:00Z', 'Europe/London')).toBe('01:30');
+	});
+	it('prints midnight as 00, seconds when asked', () => {
+		expect(clock.formatClock('2025-03-02T00:00:09Z', 'UTC', { seconds: true })).toBe('00:00:09');
+	});
+	it('takes the date of the site, not of UTC', () => {
+		expect(clock.formatDate('2026-05-12T03:00:00Z', 'America/Chicago')).toBe('Mon 11 May');
+		expect(clock.isoDate('2026-05-12T03:00:00Z', 'America/Chicago')).toBe('2026-05-11');
+		expect(clock.formatDateClock('2026-05-12T03:00:00Z', 'America/Chicago', { year: true })).toBe(
+			'Mon 11 May 2026 22:00'
+		);
+	});
+	it('names the zone of the printing', () => {
+		expect(clock.formatPrintedAt('2025-06-01T12:05:00Z', 'UTC')).toBe('2025-06-01 12:05 UTC');
+	});
+	it('refuses what is no instant', () => {
+		expect(() => clock.formatClock('yesterday', 'UTC')).toThrow(RangeError);
+	});
+	it('splits a date that is already the site’s', () => {
+		expect(clock.dayParts('2026-05-10')).toEqual({ weekday: 'Sun', day: '10', month: 'May', weekend: true });
+	});
+});
+
+describe('periods, elapsed and lengths of time', () => {
+	it('leaves out the second year where it is the same', () => {
+		expect(clock.formatPeriod('2026-02-02', '2026-03-06')).toBe('2026-02-02 to 03-06');
+		expect(clock.formatPeriod('2024-12-30T00:00:00Z', '2025-01-05')).toBe('2024-12-30 to 2025-01-05');
+		expect(clock.formatPeriod('2025-01-05', '2025-01-05')).toBe('2025-01-05');
+	});
+	it('counts from the start in minutes and seconds', () => {
+		expect(clock.formatElapsed(95)).toBe('1:35');
+		expect(clock.formatElapsed(-30)).toBe('−0:30');
+		expect(clock.formatElapsed(3800)).toBe('1:03:20');
+		expect(clock.formatElapsed(-0.2)).toBe('0:00');
+	});
+	it('keeps the two largest units', () => {
+		expect(clock.formatDuration(51)).toBe('51\u00a0s');
+		expect(clock.formatDuration(34_800)).toBe('9\u00a0h 40\u00a0min');
+		expect(clock.formatDuration(7200)).toBe('2\u00a0h');
+		expect(clock.formatDuration(3 * 86_400 + 5 * 3600)).toBe('3\u00a0d 5\u00a0h');
+	});
+	it('prints minutes of a day, and 24:00 at its end', () => {
+		expect(clock.formatMinutes(860)).toBe('14:20');
+		expect(clock.formatMinutes(1440)).toBe('24:00');
+	});
+	it('counts whole days', () => {
+		expect(clock.formatDaysSince('2025-01-01T10:00:00Z', '2025-01-02T09:00:00Z')).toBe('today');
+		expect(clock.formatDaysSince('2025-01-01T10:00:00Z', '2025-01-24T11:00:00Z')).toBe('23 days');
+	});
+});
