@@ -1,4 +1,11 @@
-import { fromStored, MEASURES, pageMeasure, type MeasureKey, type Quantity, type UnitSystem } from '../model/quantities';
+import {
+	fromStored,
+	MEASURES,
+	pageMeasure,
+	type MeasureKey,
+	type Quantity,
+	type UnitSystem
+} from '../model/quantities';
 
 /** U+2212; a hyphen is not a minus. */
 export const MINUS = '−';

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { currentPlace, currentSheet, placesFor, sheetHref } from './places';
+import { currentPlace, currentSheet, placesFor, roleName, sheetHref, withQuery } from './places';
 
 describe('places', () => {
 	it('shows the office to those who run it', () => {
@@ -20,5 +20,14 @@ describe('places', () => {
 	it('keeps the circuit in the address', () => {
 		expect(sheetHref('u1', '/nights', '2')).toBe('/units/u1/nights?circuit=2');
 		expect(sheetHref('u1', '', null)).toBe('/units/u1');
+	});
+	it('sets and takes away one field of an address', () => {
+		const url = new URL('http://x/units/u1?from=2026-01-01&circuit=1');
+		expect(withQuery(url, 'circuit', '2')).toBe('/units/u1?from=2026-01-01&circuit=2');
+		expect(withQuery(new URL('http://x/?site=s'), 'site', null)).toBe('/');
+	});
+	it('says a role in words', () => {
+		expect(roleName('engineer')).toBe('service engineer');
+		expect(roleName('guest')).toBe('guest');
 	});
 });

@@ -1,3 +1,5 @@
+import { ROLE_NAMES, RIGHTS } from '$lib/model/people';
+
 /** A place of the product: an entry of the top strip. */
 export type Place = { href: string; label: string };
 
@@ -5,7 +7,7 @@ const ALL: readonly (Place & { roles?: readonly string[] })[] = [
 	{ href: '/', label: 'Units' },
 	{ href: '/cases', label: 'Cases' },
 	{ href: '/visits', label: 'Visits' },
-	{ href: '/office', label: 'Office', roles: ['owner', 'manager'] },
+	{ href: '/office', label: 'Office', roles: RIGHTS.readOffice },
 	{ href: '/method', label: 'Method' }
 ];
 
@@ -46,4 +48,18 @@ export function currentSheet(pathname: string, unit: string): string {
 /** The address of a unit's sheet, keeping the circuit. */
 export function sheetHref(unit: string, path: string, circuit: string | null): string {
 	return `/units/${unit}${path}${circuit ? `?circuit=${encodeURIComponent(circuit)}` : ''}`;
+}
+
+/** A role in words; an unknown one is printed as it is. */
+export function roleName(role: string): string {
+	return Object.hasOwn(ROLE_NAMES, role) ? ROLE_NAMES[role as keyof typeof ROLE_NAMES] : role;
+}
+
+/** The same address with one query field set, or taken away when `value` is null. */
+export function withQuery(url: URL, key: string, value: string | null): string {
+	const query = new URLSearchParams(url.searchParams);
+	if (value === null) query.delete(key);
+	else query.set(key, value);
+	const text = query.toString();
+	return text === '' ? url.pathname : `${url.pathname}?${text}`;
 }
