@@ -71,3 +71,6 @@ export function may(actor: Actor, right: Right): boolean {
 export function maySeeSite(actor: Actor, siteId: string): boolean {
 	return actor.siteIds === null || actor.siteIds.includes(siteId);
 }
+
+/** What a person chose for the pages. */
+export type Preferences = { units: 'ip' | 'si'; paper: 'day' | 'night' | 'system' };

@@ -11,7 +11,11 @@ const schema = z.object({
 	DEMO: onOff.default(true),
 	LOG_LEVEL: z.enum(['debug', 'info', 'warn', 'error', 'silent']).default('info'),
 	/** most bytes of one upload */
-	UPLOAD_LIMIT: z.coerce.number().int().positive().default(2 * 1024 ** 3),
+	UPLOAD_LIMIT: z.coerce
+		.number()
+		.int()
+		.positive()
+		.default(2 * 1024 ** 3),
 	S3_ENDPOINT: optional(z.url()),
 	S3_BUCKET: optional(z.string()),
 	S3_REGION: z.string().default('us-east-1'),

@@ -1,5 +1,4 @@
-import type { Actor, Role, Scope } from '$lib/model/people';
-import type { Preferences } from '$lib/server/db/schema/identity';
+import type { Actor, Preferences, Role, Scope } from '$lib/model/people';
 import { findKeyActor, insertApiKey, touchApiKey } from '$lib/server/repositories/identity';
 import { hashToken, randomToken } from './tokens';
 
@@ -19,12 +18,20 @@ export type NewKey = {
 /** Makes a key; it is shown once, only its hash is stored. */
 export async function createApiKey(key: NewKey): Promise<{ id: string; key: string }> {
 	const secret = PREFIX + randomToken();
-	const id = await insertApiKey({ ...key, scopes: [...key.scopes], keyHash: hashToken(secret), prefix: secret.slice(0, 8) });
+	const id = await insertApiKey({
+		...key,
+		scopes: [...key.scopes],
+		keyHash: hashToken(secret),
+		prefix: secret.slice(0, 8)
+	});
 	return { id, key: secret };
 }
 
 /** The member behind a key, or null when it is unknown, revoked or expired. */
-export async function readApiKey(secret: string, now: Date): Promise<{ actor: Actor; preferences: Preferences } | null> {
+export async function readApiKey(
+	secret: string,
+	now: Date
+): Promise<{ actor: Actor; preferences: Preferences } | null> {
 	if (!secret.startsWith(PREFIX)) return null;
 	const found = await findKeyActor(hashToken(secret), now);
 	if (!found) return null;

@@ -1,4 +1,3 @@
-import type { Preferences } from '$lib/server/db/schema/identity';
 import {
 	deleteSession,
 	deleteSessionsOf,
@@ -6,7 +5,7 @@ import {
 	insertSession,
 	touchSession
 } from '$lib/server/repositories/identity';
-import type { Actor } from '$lib/model/people';
+import type { Actor, Preferences } from '$lib/model/people';
 import { hashToken, randomToken } from './tokens';
 
 export const SESSION_COOKIE = 'firstpull_session';
@@ -25,7 +24,15 @@ export async function beginSession(
 ): Promise<{ token: string; expiresAt: Date }> {
 	const token = randomToken();
 	const expiresAt = new Date(now.getTime() + SESSION_DAYS * DAY);
-	await insertSession({ tokenHash: hashToken(token), personId, organisationId, userAgent, createdAt: now, seenAt: now, expiresAt });
+	await insertSession({
+		tokenHash: hashToken(token),
+		personId,
+		organisationId,
+		userAgent,
+		createdAt: now,
+		seenAt: now,
+		expiresAt
+	});
 	return { token, expiresAt };
 }
 

@@ -1,6 +1,6 @@
-import type { Actor, Role, Scope } from '$lib/model/people';
+import type { Actor, Preferences, Role, Scope } from '$lib/model/people';
 import { database } from '$lib/server/db/client';
-import { apiKeys, members, organisations, people, sessions, type Preferences } from '$lib/server/db/schema/identity';
+import { apiKeys, members, organisations, people, sessions } from '$lib/server/db/schema/identity';
 import { and, asc, count, desc, eq, gt, isNull } from 'drizzle-orm';
 
 /** People, members, sessions and keys: what is read before an organisation is known. */
@@ -17,7 +17,11 @@ export async function findPerson(id: string): Promise<PersonRow | null> {
 	return row ?? null;
 }
 
-export async function insertPerson(person: { email: string; name: string; passwordHash: string | null }): Promise<PersonRow> {
+export async function insertPerson(person: {
+	email: string;
+	name: string;
+	passwordHash: string | null;
+}): Promise<PersonRow> {
 	const [row] = await database()
 		.insert(people)
 		.values({ ...person, email: person.email.trim().toLowerCase() })
@@ -40,13 +44,18 @@ export async function insertOrganisation(name: string): Promise<string> {
 	return row.id;
 }
 
-export async function findOrganisation(id: string): Promise<{ id: string; name: string; settings: Record<string, unknown> } | null> {
+export async function findOrganisation(
+	id: string
+): Promise<{ id: string; name: string; settings: Record<string, unknown> } | null> {
 	const [row] = await database().select().from(organisations).where(eq(organisations.id, id));
 	return row ?? null;
 }
 
 export async function listOrganisations(): Promise<{ id: string; name: string }[]> {
-	return database().select({ id: organisations.id, name: organisations.name }).from(organisations).orderBy(asc(organisations.createdAt));
+	return database()
+		.select({ id: organisations.id, name: organisations.name })
+		.from(organisations)
+		.orderBy(asc(organisations.createdAt));
 }
 
 export async function countOrganisations(): Promise<number> {
@@ -58,7 +67,12 @@ export async function saveSettings(id: string, settings: Record<string, unknown>
 	await database().update(organisations).set({ settings }).where(eq(organisations.id, id));
 }
 
-export async function insertMember(member: { organisationId: string; personId: string; role: Role; siteIds: string[] | null }): Promise<void> {
+export async function insertMember(member: {
+	organisationId: string;
+	personId: string;
+	role: Role;
+	siteIds: string[] | null;
+}): Promise<void> {
 	await database()
 		.insert(members)
 		.values(member)
@@ -109,7 +123,9 @@ export async function listMembers(organisationId: string): Promise<MemberRow[]> 
 }
 
 /** A person's present memberships, oldest first. */
-export async function membershipsOf(personId: string): Promise<{ organisationId: string; role: Role; siteIds: string[] | null }[]> {
+export async function membershipsOf(
+	personId: string
+): Promise<{ organisationId: string; role: Role; siteIds: string[] | null }[]> {
 	return database()
 		.select({ organisationId: members.organisationId, role: members.role, siteIds: members.siteIds })
 		.from(members)
@@ -131,7 +147,10 @@ export async function findSessionActor(tokenHash: string, now: Date): Promise<Se
 		.select({ session: sessions, person: people, role: members.role, siteIds: members.siteIds })
 		.from(sessions)
 		.innerJoin(people, eq(people.id, sessions.personId))
-		.innerJoin(members, and(eq(members.personId, sessions.personId), eq(members.organisationId, sessions.organisationId)))
+		.innerJoin(
+			members,
+			and(eq(members.personId, sessions.personId), eq(members.organisationId, sessions.organisationId))
+		)
 		.where(and(eq(sessions.tokenHash, tokenHash), gt(sessions.expiresAt, now), isNull(members.leftAt)));
 	if (!row) return null;
 	const { session, person, role, siteIds } = row;
@@ -177,7 +196,10 @@ export async function insertApiKey(row: typeof apiKeys.$inferInsert): Promise<st
 }
 
 /** The member behind a key's hash, while the key lives and the member has not left. */
-export async function findKeyActor(keyHash: string, now: Date): Promise<{ keyId: string; usedAt: Date | null; actor: Actor; preferences: Preferences } | null> {
+export async function findKeyActor(
+	keyHash: string,
+	now: Date
+): Promise<{ keyId: string; usedAt: Date | null; actor: Actor; preferences: Preferences } | null> {
 	const [row] = await database()
 		.select({ key: apiKeys, person: people, memberRole: members.role })
 		.from(apiKeys)

@@ -1,4 +1,4 @@
-import type { Role } from '$lib/model/people';
+import type { Preferences, Role } from '$lib/model/people';
 import {
 	bigint,
 	boolean,
@@ -17,8 +17,6 @@ import {
 
 export const instant = () => timestamp({ withTimezone: true, mode: 'date', precision: 3 });
 const created = () => instant().notNull().defaultNow();
-
-export type Preferences = { units: 'ip' | 'si'; paper: 'day' | 'night' | 'system' };
 
 export const organisations = pgTable('organisations', {
 	id: uuid().primaryKey().defaultRandom(),
