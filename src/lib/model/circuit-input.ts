@@ -1,5 +1,5 @@
 import type { EventRecord, Interval, Series, SeriesMap, TextSeries } from './series';
-import type { StartCorrection, StartRecord, TripKind } from './start';
+import type { Protection, StartCorrection, StartRecord, TripKind } from './start';
 import type { LimitHistory, Refrigerant, UnitNature } from './unit';
 
 /** A trade word that names a trip kind; the unit's own come before the product's. */
@@ -23,7 +23,24 @@ export type CircuitInput = {
 	tripWords: readonly TripWord[];
 	corrections: readonly StartCorrection[];
 	/** `running` of the unit's other circuits and of the site's other units (for power failures and staging). */
-	others: readonly { name: string; sameUnit: boolean; running: Series }[];
+	others: readonly { name: string; sameUnit: boolean; running: Series; capacity?: Series }[];
+	/** The shift of the alarm history's clock that a person confirmed, seconds to add; 0 = none; absent = propose one. */
+	alarmShiftSeconds?: number | null;
+};
+
+/** A protection's limit as the unit's own starts show it. Values in stored units. */
+export type LearnedBracket = {
+	protection: Protection;
+	/** The value at a trip that is nearest the survived side. */
+	trippedAt: number;
+	/** The nearest to a trip that a held start survived; null when none was read. */
+	survivedAt: number | null;
+	/** The middle of both; where it tripped when nothing was survived or the bracket is inverted. */
+	limit: number;
+	/** A held start went past a tripping value: this quantity is not what trips it. */
+	inverted: boolean;
+	trips: number;
+	survivals: number;
 };
 
 /** What the analysis of one circuit gives. */
@@ -36,6 +53,8 @@ export type CircuitAnalysis = {
 	smallestEventSeconds: number | null;
 	/** Alarm clocks that differ from the log's: the shift that matches most, seconds (a person confirms). */
 	proposedAlarmShift: number | null;
+	/** Limits learned from this log's trips and held starts, by protection. */
+	brackets: LearnedBracket[];
 	notes: string[];
 };
 
