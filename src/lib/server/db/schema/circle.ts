@@ -1,3 +1,4 @@
+import type { SuspectKey } from '$lib/model/suspect';
 import type { LimitKey } from '$lib/model/unit';
 import {
 	doublePrecision,
@@ -168,6 +169,8 @@ export const changes = pgTable(
 		amount: doublePrecision(),
 		amountUnit: text(),
 		certifiedPerson: text(),
+		/** suspects the change was meant to remove */
+		aimedAt: jsonb().$type<SuspectKey[]>().notNull().default([]),
 		/** splits the history: figures before it are no baseline after it */
 		splits: boolean().notNull().default(false),
 		at: instant().notNull(),

@@ -1,3 +1,4 @@
+import type { UnitSystem } from '$lib/model/quantities';
 import type { SeriesId } from '$lib/model/signals';
 import type { StartRecord } from '$lib/model/start';
 import type { SuspectsResult } from '$lib/model/suspect';
@@ -236,7 +237,8 @@ export const circuitResults = pgTable(
 		circuit: text().notNull(),
 		revision: integer().notNull(),
 		covered: jsonb().$type<[number, number][]>().notNull(),
-		suspects: jsonb().$type<SuspectsResult>(),
+		/** in both systems of units, because the sentences carry figures */
+		suspects: jsonb().$type<Record<UnitSystem, SuspectsResult>>().notNull(),
 		smallestEventSeconds: doublePrecision(),
 		alarmShift: doublePrecision(),
 		notes: jsonb().$type<string[]>().notNull(),

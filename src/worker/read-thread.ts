@@ -1,0 +1,25 @@
+/** A thread of the worker: reads logs and analyses units, with its own connections. */
+import { JOBS, type AnalyseUnitJob, type ReadLogJob } from '$lib/server/jobs/queue';
+import { runAnalysis } from '$lib/server/services/analysing';
+import { runReading } from '$lib/server/services/reading';
+import { parentPort } from 'node:worker_threads';
+
+type Task = { kind: typeof JOBS.readLog; data: ReadLogJob } | { kind: typeof JOBS.analyseUnit; data: AnalyseUnitJob };
+
+async function work(task: Task): Promise<void> {
+	if (task.kind === JOBS.analyseUnit) return runAnalysis(task.data);
+	const { organisationId } = task.data;
+	for (const unitId of (await runReading(task.data)) ?? []) await runAnalysis({ organisationId, unitId });
+}
+
+const port = parentPort;
+if (!port) throw new Error('read-thread runs as a thread of the worker');
+port.on('message', (task: Task) => {
+	work(task).then(
+		() => port.postMessage({ error: null }),
+		(error: unknown) => {
+			console.error(task.kind, error);
+			port.postMessage({ error: error instanceof Error ? error.message : String(error) });
+		}
+	);
+});

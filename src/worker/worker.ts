@@ -1,0 +1,48 @@
+/** The worker process: takes jobs from the queue and gives them to threads, so that its own event loop stays free. */
+import { JOBS, closeQueue, enqueueReading, queue, type AnalyseUnitJob, type ReadLogJob } from '$lib/server/jobs/queue';
+import { unfinished } from '$lib/server/services/recovery';
+import { closeDatabase } from '$lib/server/repositories/transaction';
+import { fileURLToPath } from 'node:url';
+import { ThreadPool } from './thread-pool';
+
+const THREADS = Number(process.env.WORKER_THREADS ?? 2);
+const SWEEP_MS = 30_000;
+
+const pool = new ThreadPool(fileURLToPath(new URL('./read-thread.js', import.meta.url)), THREADS);
+
+async function main(): Promise<void> {
+	const boss = await queue();
+	const options = { batchSize: 1, pollingIntervalSeconds: 0.5 };
+	for (let i = 0; i < THREADS; i++) {
+		await boss.work<ReadLogJob>(JOBS.readLog, options, async ([job]) => {
+			if (job) await pool.run({ kind: JOBS.readLog, data: job.data });
+		});
+		await boss.work<AnalyseUnitJob>(JOBS.analyseUnit, options, async ([job]) => {
+			if (job) await pool.run({ kind: JOBS.analyseUnit, data: job.data });
+		});
+	}
+	// What a killed worker left half done is taken up again; a log that another worker holds is left alone.
+	const sweep = async (): Promise<void> => {
+		for (const log of await unfinished()) await enqueueReading(log);
+	};
+	await sweepSafely(sweep);
+	setInterval(() => void sweepSafely(sweep), SWEEP_MS).unref();
+}
+
+async function sweepSafely(sweep: () => Promise<void>): Promise<void> {
+	await sweep().catch((error: unknown) => console.error('sweep', error));
+}
+
+async function stop(): Promise<void> {
+	await closeQueue();
+	await pool.close();
+	await closeDatabase();
+	process.exit(0);
+}
+process.on('SIGTERM', () => void stop());
+process.on('SIGINT', () => void stop());
+
+main().catch((error: unknown) => {
+	console.error(error);
+	process.exit(1);
+});
