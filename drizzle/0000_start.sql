@@ -154,6 +154,7 @@ CREATE TABLE "visits" (
 	"technician_id" uuid,
 	"arrived_at" timestamp (3) with time zone,
 	"left_at" timestamp (3) with time zone,
+	"purpose" text,
 	"access_notes" text,
 	"result" text,
 	"created_by" uuid,

@@ -8,7 +8,16 @@ import { errorResponse } from '$lib/server/web/problem';
 import { redirect, type Handle, type HandleServerError } from '@sveltejs/kit';
 import { sequence } from '@sveltejs/kit/hooks';
 
-const OPEN = [/^\/sign-in/, /^\/first-run/, /^\/invitation/, /^\/reset/, /^\/unsubscribe/, /^\/healthz$/, /^\/readyz$/];
+const OPEN = [
+	/^\/sign-in/,
+	/^\/sign-out/,
+	/^\/first-run/,
+	/^\/invitation/,
+	/^\/reset/,
+	/^\/unsubscribe/,
+	/^\/healthz$/,
+	/^\/readyz$/
+];
 const OPEN_API = [/^\/api\/openapi\.json$/, /^\/api\/?$/];
 const SAFE = new Set(['GET', 'HEAD', 'OPTIONS']);
 

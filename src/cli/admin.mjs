@@ -12,7 +12,15 @@ if (!databaseUrl || !existsSync(program)) {
 	console.error('Nothing was started from this folder yet: run `npm start` first, or set DATABASE_URL.');
 	process.exit(1);
 }
-const env = { ...process.env, ...state?.env, DATABASE_URL: databaseUrl, DATA_DIR: dataFolder(), ORIGIN: process.env.ORIGIN ?? state?.origin };
-run(process.execPath, ['--enable-source-maps', program, ...process.argv.slice(2)], { env, cwd: process.cwd() }).catch(() => {
-	process.exitCode = 1;
-});
+const env = {
+	...process.env,
+	...state?.env,
+	DATABASE_URL: databaseUrl,
+	DATA_DIR: dataFolder(),
+	ORIGIN: process.env.ORIGIN ?? state?.origin
+};
+run(process.execPath, ['--enable-source-maps', program, ...process.argv.slice(2)], { env, cwd: process.cwd() }).catch(
+	() => {
+		process.exitCode = 1;
+	}
+);

@@ -16,7 +16,11 @@ const children = new Map();
 let stopping = false;
 
 function launch(name, file, env) {
-	const child = spawn(process.execPath, ['--enable-source-maps', join(root, file)], { cwd: root, env, stdio: 'inherit' });
+	const child = spawn(process.execPath, ['--enable-source-maps', join(root, file)], {
+		cwd: root,
+		env,
+		stdio: 'inherit'
+	});
 	children.set(name, child);
 	child.once('exit', (code, signal) => {
 		children.delete(name);
@@ -35,7 +39,9 @@ async function restart(name, file, env) {
 
 async function answers(url) {
 	for (let tries = 0; tries < 300; tries++) {
-		const ready = await fetch(`${url}/readyz`).then((answer) => answer.ok).catch(() => false);
+		const ready = await fetch(`${url}/readyz`)
+			.then((answer) => answer.ok)
+			.catch(() => false);
 		if (ready) return;
 		if (stopping) return;
 		await pause(200);

@@ -5,7 +5,15 @@ import { root } from './paths.mjs';
 import { run, say } from './run.mjs';
 
 const stamp = join(root, 'build', '.sources');
-const SOURCES = ['src', 'static', 'fixtures', 'package-lock.json', 'svelte.config.js', 'vite.config.ts', 'tsconfig.json'];
+const SOURCES = [
+	'src',
+	'static',
+	'fixtures',
+	'package-lock.json',
+	'svelte.config.js',
+	'vite.config.ts',
+	'tsconfig.json'
+];
 
 function* files(path) {
 	const full = join(root, path);

@@ -8,7 +8,9 @@ const stamp = join(root, 'node_modules', '.firstpull-lock');
 
 /** Installs the packages of package-lock.json unless that very lock is installed already. */
 export async function installPackages() {
-	const lock = createHash('sha256').update(readFileSync(join(root, 'package-lock.json'))).digest('hex');
+	const lock = createHash('sha256')
+		.update(readFileSync(join(root, 'package-lock.json')))
+		.digest('hex');
 	if (existsSync(stamp) && readFileSync(stamp, 'utf8') === lock) return;
 	say('Installing packages …');
 	await run('npm', ['ci', '--no-audit', '--no-fund', '--loglevel=error'], { cwd: root });
@@ -30,7 +32,10 @@ export async function installDebian(packages, why) {
 	say(`Installing ${names} from Debian's packages …`);
 	const env = { ...process.env, DEBIAN_FRONTEND: 'noninteractive' };
 	const apt = (args) =>
-		run(isRoot ? 'apt-get' : 'sudo', isRoot ? args : ['-E', 'apt-get', ...args], { env, stdio: ['ignore', 'ignore', 'inherit'] });
+		run(isRoot ? 'apt-get' : 'sudo', isRoot ? args : ['-E', 'apt-get', ...args], {
+			env,
+			stdio: ['ignore', 'ignore', 'inherit']
+		});
 	await apt(['update', '-qq']);
 	await apt(['install', '-y', '-qq', '--no-install-recommends', ...packages]);
 }

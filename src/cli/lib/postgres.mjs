@@ -1,6 +1,16 @@
 import { randomBytes } from 'node:crypto';
 import { spawn } from 'node:child_process';
-import { chmodSync, chownSync, existsSync, mkdirSync, openSync, readFileSync, readdirSync, rmSync, writeFileSync } from 'node:fs';
+import {
+	chmodSync,
+	chownSync,
+	existsSync,
+	mkdirSync,
+	openSync,
+	readFileSync,
+	readdirSync,
+	rmSync,
+	writeFileSync
+} from 'node:fs';
 import { createServer } from 'node:net';
 import { dirname, join } from 'node:path';
 import { installDebian, refuseMainCluster } from './packages.mjs';
@@ -57,7 +67,20 @@ async function initialise(bin, folder, account) {
 	giveTo(account, folder, 0o700);
 	giveTo(account, secret, 0o600);
 	say('Making the database …');
-	const args = ['-D', folder, '-U', 'firstpull_admin', '-A', 'scram-sha-256', '--pwfile', secret, '--locale=C.UTF-8', '-E', 'UTF8', '--data-checksums'];
+	const args = [
+		'-D',
+		folder,
+		'-U',
+		'firstpull_admin',
+		'-A',
+		'scram-sha-256',
+		'--pwfile',
+		secret,
+		'--locale=C.UTF-8',
+		'-E',
+		'UTF8',
+		'--data-checksums'
+	];
 	await run(join(bin, 'initdb'), args, { ...(account ?? {}), cwd: '/', stdio: ['ignore', 'ignore', 'inherit'] });
 	if (account) chownSync(secret, 0, 0);
 }
@@ -84,9 +107,27 @@ function running(folder) {
 function launch(bin, folder, account, port, settings) {
 	const log = `${folder}.log`;
 	const out = openSync(log, 'a');
-	const options = { listen_addresses: '127.0.0.1', unix_socket_directories: '', default_toast_compression: 'lz4', max_connections: '120', shared_buffers: '256MB', ...settings };
-	const args = ['-D', folder, '-p', String(port), ...Object.entries(options).flatMap(([key, value]) => ['-c', `${key}=${value}`])];
-	const child = spawn(join(bin, 'postgres'), args, { ...(account ?? {}), cwd: '/', detached: true, stdio: ['ignore', out, out] });
+	const options = {
+		listen_addresses: '127.0.0.1',
+		unix_socket_directories: '',
+		default_toast_compression: 'lz4',
+		max_connections: '120',
+		shared_buffers: '256MB',
+		...settings
+	};
+	const args = [
+		'-D',
+		folder,
+		'-p',
+		String(port),
+		...Object.entries(options).flatMap(([key, value]) => ['-c', `${key}=${value}`])
+	];
+	const child = spawn(join(bin, 'postgres'), args, {
+		...(account ?? {}),
+		cwd: '/',
+		detached: true,
+		stdio: ['ignore', out, out]
+	});
 	child.unref();
 	return { child, log };
 }
@@ -121,7 +162,8 @@ async function reachable(postgres, url, started) {
 			return;
 		} catch (error) {
 			const ended = started && started.child.exitCode !== null;
-			if (ended || tries > 150) throw new Error(`PostgreSQL does not answer; see ${started?.log ?? 'its log'}`, { cause: error });
+			if (ended || tries > 150)
+				throw new Error(`PostgreSQL does not answer; see ${started?.log ?? 'its log'}`, { cause: error });
 			await pause(200);
 		} finally {
 			await sql.end({ timeout: 1 });
@@ -162,4 +204,3 @@ async function stopServer(pid) {
 export function removeCluster(folder) {
 	for (const path of [folder, `${folder}.log`, `${folder}.password`]) rmSync(path, { recursive: true, force: true });
 }
-

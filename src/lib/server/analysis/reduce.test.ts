@@ -25,13 +25,17 @@ describe('reduceTrace', () => {
 
 	it('gives instants in rising order and the same least and most, whatever the values', () => {
 		fc.assert(
-			fc.property(fc.array(fc.double({ noNaN: true }), { minLength: 60, maxLength: 400 }), fc.integer({ min: 1, max: 8 }), (values, columns) => {
-				const v = Float64Array.from(values);
-				const out = reduceTrace(ramp(v.length), v, columns);
-				for (let i = 1; i < out.t.length; i++) expect(out.t[i]).toBeGreaterThan(out.t[i - 1] ?? NaN);
-				expect(Math.min(...out.v)).toBe(Math.min(...v));
-				expect(Math.max(...out.v)).toBe(Math.max(...v));
-			})
+			fc.property(
+				fc.array(fc.double({ noNaN: true }), { minLength: 60, maxLength: 400 }),
+				fc.integer({ min: 1, max: 8 }),
+				(values, columns) => {
+					const v = Float64Array.from(values);
+					const out = reduceTrace(ramp(v.length), v, columns);
+					for (let i = 1; i < out.t.length; i++) expect(out.t[i]).toBeGreaterThan(out.t[i - 1] ?? NaN);
+					expect(Math.min(...out.v)).toBe(Math.min(...v));
+					expect(Math.max(...out.v)).toBe(Math.max(...v));
+				}
+			)
 		);
 	});
 

@@ -21,7 +21,7 @@ export function reduceTrace(t: Float64Array, v: Float64Array, columns: number): 
 	const scale = columns / (last - first);
 	const kept = new Int32Array(columns * 5 + 5);
 	let count = 0;
-	for (let from = 0; from < t.length; ) {
+	for (let from = 0; from < t.length;) {
 		const column = Math.min(columns - 1, Math.floor(((t[from] ?? 0) - first) * scale));
 		let to = from + 1;
 		while (to < t.length && Math.min(columns - 1, Math.floor(((t[to] ?? 0) - first) * scale)) === column) to++;

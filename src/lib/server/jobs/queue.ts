@@ -50,3 +50,13 @@ export async function closeQueue(): Promise<void> {
 	opened = undefined;
 	await boss?.stop({ graceful: true, wait: true, timeout: 5000 });
 }
+
+/** Is the queue reachable? */
+export async function queueAnswers(): Promise<boolean> {
+	try {
+		await (await queue()).getQueueSize(JOBS.readLog);
+		return true;
+	} catch {
+		return false;
+	}
+}

@@ -10,7 +10,10 @@ export type NewWords = typeof textBlocks.$inferInsert;
 export type NewEvent = typeof events.$inferInsert;
 
 /** Stores what reading has buffered. */
-export async function insertBlocks(tx: Tx, batch: { times: NewTimes[]; blocks: NewBlock[]; words: NewWords[]; events: NewEvent[] }): Promise<void> {
+export async function insertBlocks(
+	tx: Tx,
+	batch: { times: NewTimes[]; blocks: NewBlock[]; words: NewWords[]; events: NewEvent[] }
+): Promise<void> {
 	if (batch.times.length > 0) await tx.insert(blockTimes).values(batch.times);
 	if (batch.blocks.length > 0) await tx.insert(blocks).values(batch.blocks);
 	if (batch.words.length > 0) await tx.insert(textBlocks).values(batch.words);
@@ -21,7 +24,13 @@ export type Window = { from: number; to: number };
 const READABLE = ['analysing', 'ready'] as const;
 
 /** Blocks of a unit's circuits and signals that touch a window, in order of upload and time; of finished logs only. */
-export function findBlocks(tx: Tx, unitId: string, circuits: readonly string[], window: Window | null, signals: readonly string[] | null) {
+export function findBlocks(
+	tx: Tx,
+	unitId: string,
+	circuits: readonly string[],
+	window: Window | null,
+	signals: readonly string[] | null
+) {
 	return tx
 		.select({
 			circuit: blocks.circuit,

@@ -16,12 +16,17 @@ export async function listVisitSpans(tx: Tx, unitId: string): Promise<Interval[]
 		.select({ from: visits.arrivedAt, to: visits.leftAt })
 		.from(visits)
 		.where(and(eq(visits.unitId, unitId), isNotNull(visits.arrivedAt)));
-	return rows.flatMap(({ from, to }) => (from ? [{ from: from.getTime(), to: to?.getTime() ?? from.getTime() + 12 * 3_600_000 }] : []));
+	return rows.flatMap(({ from, to }) =>
+		from ? [{ from: from.getTime(), to: to?.getTime() ?? from.getTime() + 12 * 3_600_000 }] : []
+	);
 }
 
 /** A unit's own trade words that name a trip kind. */
 export async function listTripWords(tx: Tx, unitId: string): Promise<{ words: string; kind: string }[]> {
-	return tx.select({ words: tripWords.words, kind: tripWords.kind }).from(tripWords).where(eq(tripWords.unitId, unitId));
+	return tx
+		.select({ words: tripWords.words, kind: tripWords.kind })
+		.from(tripWords)
+		.where(eq(tripWords.unitId, unitId));
 }
 
 export function listChecks(tx: Tx, unitId: string): Promise<CheckRow[]> {
@@ -34,10 +39,16 @@ export async function findCheck(tx: Tx, id: string): Promise<CheckRow | null> {
 }
 
 /** Stores a check once: a second one with the same client key gives the first back. */
-export async function insertCheck(tx: Tx, row: typeof checks.$inferInsert): Promise<{ row: CheckRow; repeated: boolean }> {
+export async function insertCheck(
+	tx: Tx,
+	row: typeof checks.$inferInsert
+): Promise<{ row: CheckRow; repeated: boolean }> {
 	const [stored] = await tx.insert(checks).values(row).onConflictDoNothing().returning();
 	if (stored) return { row: stored, repeated: false };
-	const [first] = await tx.select().from(checks).where(eq(checks.clientKey, row.clientKey ?? ''));
+	const [first] = await tx
+		.select()
+		.from(checks)
+		.where(eq(checks.clientKey, row.clientKey ?? ''));
 	if (!first) throw new Error('the check was not stored');
 	return { row: first, repeated: true };
 }
@@ -59,10 +70,16 @@ export function listChanges(tx: Tx, unitId: string): Promise<ChangeRow[]> {
 	return tx.select().from(changes).where(eq(changes.unitId, unitId)).orderBy(asc(changes.at));
 }
 
-export async function insertChange(tx: Tx, row: typeof changes.$inferInsert): Promise<{ row: ChangeRow; repeated: boolean }> {
+export async function insertChange(
+	tx: Tx,
+	row: typeof changes.$inferInsert
+): Promise<{ row: ChangeRow; repeated: boolean }> {
 	const [stored] = await tx.insert(changes).values(row).onConflictDoNothing().returning();
 	if (stored) return { row: stored, repeated: false };
-	const [first] = await tx.select().from(changes).where(eq(changes.clientKey, row.clientKey ?? ''));
+	const [first] = await tx
+		.select()
+		.from(changes)
+		.where(eq(changes.clientKey, row.clientKey ?? ''));
 	if (!first) throw new Error('the change was not stored');
 	return { row: first, repeated: true };
 }

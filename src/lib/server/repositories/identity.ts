@@ -1,6 +1,6 @@
 import type { Actor, Preferences, Role, Scope } from '$lib/model/people';
 import { database } from '$lib/server/db/client';
-import { apiKeys, members, organisations, people, sessions } from '$lib/server/db/schema/identity';
+import { apiKeys, members, organisations, people, sessions, tokens } from '$lib/server/db/schema/identity';
 import { and, asc, count, desc, eq, gt, isNull } from 'drizzle-orm';
 
 /** People, members, sessions and keys: what is read before an organisation is known. */
@@ -242,4 +242,26 @@ export async function revokeApiKey(organisationId: string, id: string, at: Date)
 		.where(and(eq(apiKeys.organisationId, organisationId), eq(apiKeys.id, id), isNull(apiKeys.revokedAt)))
 		.returning({ id: apiKeys.id });
 	return rows.length > 0;
+}
+
+export type TokenRow = typeof tokens.$inferSelect;
+
+/** Keeps a single-use token's hash. */
+export async function insertToken(row: typeof tokens.$inferInsert): Promise<void> {
+	await database().insert(tokens).values(row);
+}
+
+/** A token that is unused and has not expired. */
+export async function findToken(tokenHash: string, kind: TokenRow['kind'], now: Date): Promise<TokenRow | null> {
+	const [row] = await database()
+		.select()
+		.from(tokens)
+		.where(
+			and(eq(tokens.tokenHash, tokenHash), eq(tokens.kind, kind), isNull(tokens.usedAt), gt(tokens.expiresAt, now))
+		);
+	return row ?? null;
+}
+
+export async function markTokenUsed(tokenHash: string, at: Date): Promise<void> {
+	await database().update(tokens).set({ usedAt: at }).where(eq(tokens.tokenHash, tokenHash));
 }

@@ -67,7 +67,10 @@ export async function unitsTouchedBy(tx: Tx, logId: string): Promise<string[]> {
 }
 
 /** Logs whose work is not finished, over every organisation: what a restarted worker takes up again. */
-export async function unfinishedLogs(organisationIds: readonly string[], withOrganisation: <T>(id: string, work: (tx: Tx) => Promise<T>) => Promise<T>) {
+export async function unfinishedLogs(
+	organisationIds: readonly string[],
+	withOrganisation: <T>(id: string, work: (tx: Tx) => Promise<T>) => Promise<T>
+) {
 	const open: { organisationId: string; logId: string }[] = [];
 	for (const organisationId of organisationIds) {
 		const rows = await withOrganisation(organisationId, (tx) =>

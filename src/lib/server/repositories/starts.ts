@@ -37,7 +37,10 @@ export async function findStart(tx: Tx, id: string): Promise<StartRow | null> {
 const SAME_START_MS = 120_000;
 
 /** Ids that starts had before, by circuit and nearest start within two minutes: a recomputed start keeps its address. */
-function keepIds(before: readonly { id: string; circuit: string; startedAt: number }[], records: readonly StartRecord[]): (string | undefined)[] {
+function keepIds(
+	before: readonly { id: string; circuit: string; startedAt: number }[],
+	records: readonly StartRecord[]
+): (string | undefined)[] {
 	const free = new Set(before);
 	return records.map((record) => {
 		let best: { id: string; distance: number; row: (typeof before)[number] } | undefined;
@@ -53,7 +56,12 @@ function keepIds(before: readonly { id: string; circuit: string; startedAt: numb
 }
 
 /** Replaces a unit's starts; those that stay keep their ids. */
-export async function replaceStarts(tx: Tx, organisationId: string, unitId: string, records: readonly StartRecord[]): Promise<void> {
+export async function replaceStarts(
+	tx: Tx,
+	organisationId: string,
+	unitId: string,
+	records: readonly StartRecord[]
+): Promise<void> {
 	const before = await tx
 		.select({ id: starts.id, circuit: starts.circuit, startedAt: starts.startedAt })
 		.from(starts)
@@ -87,7 +95,10 @@ export async function saveCircuitResult(tx: Tx, row: typeof circuitResults.$infe
 	await tx
 		.insert(circuitResults)
 		.values(row)
-		.onConflictDoUpdate({ target: [circuitResults.organisationId, circuitResults.unitId, circuitResults.circuit], set: { ...set, computedAt: new Date() } });
+		.onConflictDoUpdate({
+			target: [circuitResults.organisationId, circuitResults.unitId, circuitResults.circuit],
+			set: { ...set, computedAt: new Date() }
+		});
 }
 
 export function listCircuitResults(tx: Tx, unitIds: readonly string[]): Promise<CircuitResultRow[]> {

@@ -17,7 +17,8 @@ import { loadEvents, loadSeries, loadTexts } from './series';
 
 type Job = { organisationId: string; unitId: string };
 
-export const circuitsOf = (unit: { circuits: number }): string[] => Array.from({ length: unit.circuits }, (_, i) => String(i + 1));
+export const circuitsOf = (unit: { circuits: number }): string[] =>
+	Array.from({ length: unit.circuits }, (_, i) => String(i + 1));
 
 /** `running` of the site's other machines: power failures and staging show across them. */
 async function runningOfOthers(tx: Tx, site: SiteRow, unit: UnitRow): Promise<CircuitInput['others'][number][]> {
@@ -75,14 +76,21 @@ async function compute(job: Job): Promise<{ computed: Computed[]; revision: numb
 			const analysis = analyseCircuit(input);
 			const evidence = { input, starts: analysis.starts, ...facts(input.circuit) };
 			// The sentences carry figures, so they are kept in both systems of units.
-			const suspects = { si: evaluateSuspects({ ...evidence, units: 'si' }), ip: evaluateSuspects({ ...evidence, units: 'ip' }) };
+			const suspects = {
+				si: evaluateSuspects({ ...evidence, units: 'si' }),
+				ip: evaluateSuspects({ ...evidence, units: 'ip' })
+			};
 			computed.push({ analysis, suspects });
 		}
 		return { computed, revision: unit.revision };
 	});
 }
 
-async function store(job: Job, { computed, revision }: { computed: Computed[]; revision: number }, logIds: readonly string[]): Promise<void> {
+async function store(
+	job: Job,
+	{ computed, revision }: { computed: Computed[]; revision: number },
+	logIds: readonly string[]
+): Promise<void> {
 	await withOrganisation(job.organisationId, async (tx) => {
 		const starts = computed.flatMap(({ analysis }) => analysis.starts);
 		await replaceStarts(tx, job.organisationId, job.unitId, starts);

@@ -36,11 +36,20 @@ function loggedOn(covered: Covered, midnight: number, next: number): [number, nu
 /**
  * One strip for each date, with the runs that touch it. `lastAt` (ms) ends a run that still goes on at the log's end.
  */
-export function dayStrips(rows: readonly StartRow[], covered: Covered, from: string, to: string, zone: string, lastAt: number): DayStrip[] {
+export function dayStrips(
+	rows: readonly StartRow[],
+	covered: Covered,
+	from: string,
+	to: string,
+	zone: string,
+	lastAt: number
+): DayStrip[] {
 	return datesBetween(from, to).map((date) => {
 		const midnight = dayStart(date, zone);
 		const next = dayStart(addDays(date, 1), zone);
-		const strokes = rows.flatMap((row) => strokeOn(row, row.endedAt ?? Math.max(lastAt, row.startedAt), midnight, next) ?? []);
+		const strokes = rows.flatMap(
+			(row) => strokeOn(row, row.endedAt ?? Math.max(lastAt, row.startedAt), midnight, next) ?? []
+		);
 		return { date, strokes, logged: loggedOn(covered, midnight, next) };
 	});
 }

@@ -39,7 +39,9 @@ async function pinsOf(tx: Tx, unitId: string, zone: string): Promise<Pin[]> {
 		clock: siteClock(at.getTime(), zone),
 		text
 	});
-	const pins = (await listChanges(tx, unitId)).map((row) => pin('change', row.id, row.at, `${row.text}, ${row.byName}`));
+	const pins = (await listChanges(tx, unitId)).map((row) =>
+		pin('change', row.id, row.at, `${row.text}, ${row.byName}`)
+	);
 	for (const row of await listCases(tx, [unitId])) pins.push(pin('case', row.id, row.openedAt, row.complaint));
 	for (const row of await listVisits(tx, [unitId])) {
 		const at = row.arrivedAt ?? new Date(dayStart(row.date, zone) + clockMinutes(row.beThereBy ?? '12:00') * 60_000);
@@ -50,7 +52,8 @@ async function pinsOf(tx: Tx, unitId: string, zone: string): Promise<Pin[]> {
 
 const clockMinutes = (clock: string): number => Number(clock.slice(0, 2)) * 60 + Number(clock.slice(3, 5));
 
-const minuteOf = (row: StartRow, zone: string): number => (row.startedAt - dayStart(siteDate(row.startedAt, zone), zone)) / 60_000;
+const minuteOf = (row: StartRow, zone: string): number =>
+	(row.startedAt - dayStart(siteDate(row.startedAt, zone), zone)) / 60_000;
 
 /** The shortest stretch of clock, at most two hours, that holds the most start-up trips; null under three trips or 60 % inside. */
 export function tripCluster(trips: readonly number[], others: readonly number[]): Days['cluster'] {
@@ -67,7 +70,14 @@ export function tripCluster(trips: readonly number[], others: readonly number[])
 	const from = Math.floor((best.from - 2) / 5) * 5;
 	const to = Math.ceil((best.to + 2) / 5) * 5;
 	const outside = others.filter((minute) => minute < from || minute > to);
-	return { from, to, inside: best.inside, trips: sorted.length, otherTrips: sorted.length - best.inside, others: outside.length };
+	return {
+		from,
+		to,
+		inside: best.inside,
+		trips: sorted.length,
+		otherTrips: sorted.length - best.inside,
+		others: outside.length
+	};
 }
 
 function titleOf(rows: readonly StartRow[], cluster: Days['cluster']): string {
@@ -78,8 +88,10 @@ function titleOf(rows: readonly StartRow[], cluster: Days['cluster']): string {
 		if (late > 0) return `${late === 1 ? 'One run' : `${late} runs`} tripped after the start-up window, none inside it`;
 		return `None of ${rows.length} starts tripped`;
 	}
-	const clock = (minute: number): string => `${String(Math.floor(minute / 60)).padStart(2, '0')}:${String(Math.round(minute % 60)).padStart(2, '0')}`;
-	if (cluster) return `${cluster.inside} of ${cluster.trips} start-up trips lie between ${clock(cluster.from)} and ${clock(cluster.to)}`;
+	const clock = (minute: number): string =>
+		`${String(Math.floor(minute / 60)).padStart(2, '0')}:${String(Math.round(minute % 60)).padStart(2, '0')}`;
+	if (cluster)
+		return `${cluster.inside} of ${cluster.trips} start-up trips lie between ${clock(cluster.from)} and ${clock(cluster.to)}`;
 	const first = trips.filter((row) => row.record.firstStart).length;
 	if (first === trips.length) return `Every one of ${trips.length} start-up trips was a first start`;
 	return `${trips.length} of ${rows.length} starts tripped inside the start-up window`;
@@ -96,13 +108,18 @@ export async function daysOf(actor: Actor, unitId: string, query: Query, system:
 		const end = dayStart(addDays(to, 1), zone);
 		const filter = { from: begin - 3 * DAY_MS, to: end, ...(query.circuit ? { circuit: query.circuit } : {}) };
 		const rows = await listStarts(tx, [unitId], filter);
-		const results = (await listCircuitResults(tx, [unitId])).filter((row) => !query.circuit || row.circuit === query.circuit);
+		const results = (await listCircuitResults(tx, [unitId])).filter(
+			(row) => !query.circuit || row.circuit === query.circuit
+		);
 		const covered = joinCovered(results.map((row) => row.covered));
 		const limits = limitsOf(await listLimits(tx, [unitId]));
 		const inside = rows.filter((row) => row.startedAt >= begin);
 		const trips = inside.filter((row) => row.record.startupTrip);
 		const held = inside.filter((row) => row.outcome === 'held');
-		const cluster = tripCluster(trips.map((row) => minuteOf(row, zone)), held.map((row) => minuteOf(row, zone)));
+		const cluster = tripCluster(
+			trips.map((row) => minuteOf(row, zone)),
+			held.map((row) => minuteOf(row, zone))
+		);
 		const days = dayStrips(rows, covered, from, to, zone, covered.at(-1)?.[1] ?? end).map((strip) => {
 			const today = inside.filter((row) => siteDate(row.startedAt, zone) === strip.date);
 			const first = today.find((row) => row.record.firstStart) ?? null;

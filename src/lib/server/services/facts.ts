@@ -7,7 +7,13 @@ import type { Tx } from '$lib/server/repositories/transaction';
 function checkFact(row: CheckRow): FieldCheckFact {
 	const readings = row.readings as Record<string, never>;
 	// The readings were validated against the form of their kind when they were taken in (model/wire/field.ts).
-	return { ...readings, kind: row.kind, at: row.at.getTime(), indicative: row.indicative, signed: row.signedAt !== null } as unknown as FieldCheckFact;
+	return {
+		...readings,
+		kind: row.kind,
+		at: row.at.getTime(),
+		indicative: row.indicative,
+		signed: row.signedAt !== null
+	} as unknown as FieldCheckFact;
 }
 
 const changeFact = (row: ChangeRow): ChangeFact => ({
@@ -19,10 +25,14 @@ const changeFact = (row: ChangeRow): ChangeFact => ({
 });
 
 /** Gives, for a circuit, what was checked and changed on it or on the whole unit. */
-export async function factsOf(tx: Tx, unitId: string): Promise<(circuit: string) => { checks: FieldCheckFact[]; changes: ChangeFact[] }> {
+export async function factsOf(
+	tx: Tx,
+	unitId: string
+): Promise<(circuit: string) => { checks: FieldCheckFact[]; changes: ChangeFact[] }> {
 	const checks = await listChecks(tx, unitId);
 	const changes = await listChanges(tx, unitId);
-	const concerns = (row: { circuit: string | null }, circuit: string): boolean => row.circuit === null || row.circuit === circuit;
+	const concerns = (row: { circuit: string | null }, circuit: string): boolean =>
+		row.circuit === null || row.circuit === circuit;
 	return (circuit) => ({
 		checks: checks.filter((row) => concerns(row, circuit)).map(checkFact),
 		changes: changes.filter((row) => concerns(row, circuit)).map(changeFact)

@@ -22,7 +22,12 @@ async function incomingPath(): Promise<string> {
 
 /** A base name without path or control characters. */
 function safeName(name: string): string {
-	const base = name.replaceAll('\\', '/').split('/').at(-1)?.replaceAll(/\p{Cc}/gu, '') ?? '';
+	const base =
+		name
+			.replaceAll('\\', '/')
+			.split('/')
+			.at(-1)
+			?.replaceAll(/\p{Cc}/gu, '') ?? '';
 	return base.trim().slice(0, 200) || 'log';
 }
 
@@ -44,7 +49,8 @@ export async function receiveFile(source: Readable, name: string): Promise<Incom
 		transform(chunk: Buffer, _encoding, done) {
 			try {
 				bytes += chunk.length;
-				if (bytes > limit) throw new AppError('too-large', `A log may have ${Math.floor(limit / 1024 ** 2)} MiB at most.`);
+				if (bytes > limit)
+					throw new AppError('too-large', `A log may have ${Math.floor(limit / 1024 ** 2)} MiB at most.`);
 				if (head) {
 					head = Buffer.concat([head, chunk]);
 					if (head.length >= SNIFF) {
@@ -116,9 +122,12 @@ export async function receiveUpload(request: Request, name: string): Promise<Inc
 	const type = request.headers.get('content-type') ?? '';
 	if (!request.body) throw new AppError('invalid', 'The upload is empty, or its Content-Type is missing.');
 	const declared = Number(request.headers.get('content-length') ?? 0);
-	if (declared > config().UPLOAD_LIMIT) throw new AppError('too-large', `A log may have ${Math.floor(config().UPLOAD_LIMIT / 1024 ** 2)} MiB at most.`);
+	if (declared > config().UPLOAD_LIMIT)
+		throw new AppError('too-large', `A log may have ${Math.floor(config().UPLOAD_LIMIT / 1024 ** 2)} MiB at most.`);
 	const body = Readable.fromWeb(request.body as Parameters<typeof Readable.fromWeb>[0]);
-	const files = type.startsWith('multipart/form-data') ? await receiveParts(body, type) : [await receiveFile(body, name)];
+	const files = type.startsWith('multipart/form-data')
+		? await receiveParts(body, type)
+		: [await receiveFile(body, name)];
 	if (files.length > 0 && files.some((file) => file.bytes > 0)) return files;
 	await discard(files);
 	throw new AppError('invalid', 'The upload is empty.');

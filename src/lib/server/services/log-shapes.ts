@@ -5,7 +5,14 @@ import type { LogRow } from '$lib/server/repositories/logs';
 /** What is kept of a look at a log, beside the log's own columns. */
 export type KeptInspection = { inspection: Inspection; signals: SignalQuality[] };
 
-const NO_QUALITY: Log['quality'] = { gaps: 0, longestGapSeconds: 0, repeats: 0, outOfOrder: 0, badValues: {}, coverage: 0 };
+const NO_QUALITY: Log['quality'] = {
+	gaps: 0,
+	longestGapSeconds: 0,
+	repeats: 0,
+	outOfOrder: 0,
+	badValues: {},
+	coverage: 0
+};
 
 /** A log as the API gives it. */
 export function logShape(row: LogRow): Log {
@@ -37,7 +44,10 @@ export function previewShape(row: LogRow): LogPreview & { questions: string[]; s
 	const { columns, lines, choices, questions } = kept.inspection;
 	const current = new Map(row.mapping.map((entry) => [`${entry.file}\n${entry.column}`, entry]));
 	return {
-		columns: columns.map((column) => ({ ...column, guess: current.get(`${column.file}\n${column.column}`) ?? column.guess })),
+		columns: columns.map((column) => ({
+			...column,
+			guess: current.get(`${column.file}\n${column.column}`) ?? column.guess
+		})),
 		lines,
 		choices,
 		questions,

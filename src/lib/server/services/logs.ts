@@ -6,7 +6,16 @@ import { demand } from '$lib/server/auth/guard';
 import { now } from '$lib/server/config';
 import { enqueueAnalysis, enqueueReading } from '$lib/server/jobs/queue';
 import { recordAudit } from '$lib/server/repositories/audit';
-import { deleteLog, findLog, findLogByHash, insertLog, listLogs, unitsTouchedBy, updateLog, type LogRow } from '$lib/server/repositories/logs';
+import {
+	deleteLog,
+	findLog,
+	findLogByHash,
+	insertLog,
+	listLogs,
+	unitsTouchedBy,
+	updateLog,
+	type LogRow
+} from '$lib/server/repositories/logs';
 import { listUnits, raiseRevision } from '$lib/server/repositories/plant';
 import { withOrganisation, type Tx } from '$lib/server/repositories/transaction';
 import { objectStore } from '$lib/server/store';
@@ -20,18 +29,28 @@ export type UploadOptions = { timeZone: string | null; mapping: 'auto' | 'ask'; 
 
 /** One hash for a log: over its files' hashes, sorted, so that the order of its parts does not matter. */
 export const logHash = (hashes: readonly string[]): string =>
-	createHash('sha256').update([...hashes].sort().join('')).digest('hex');
+	createHash('sha256')
+		.update([...hashes].sort().join(''))
+		.digest('hex');
 
 async function sameBytes(tx: Tx, unitId: string, sha256: string): Promise<void> {
 	const taken = await findLogByHash(tx, unitId, sha256);
-	if (taken) throw new AppError('conflict', `These bytes are here already, as “${taken.name}”.`, { location: `/api/logs/${taken.id}` });
+	if (taken)
+		throw new AppError('conflict', `These bytes are here already, as “${taken.name}”.`, {
+			location: `/api/logs/${taken.id}`
+		});
 }
 
 /**
  * Takes in an upload: the bytes are in the object store, and the reading is queued, before this resolves.
  * @throws AppError `conflict` with the first log's address when the unit has the same bytes already
  */
-export async function takeLog(actor: Actor, unitId: string, files: IncomingFile[], options: UploadOptions): Promise<Log> {
+export async function takeLog(
+	actor: Actor,
+	unitId: string,
+	files: IncomingFile[],
+	options: UploadOptions
+): Promise<Log> {
 	const { organisationId } = actor;
 	try {
 		demand(actor, 'logs');
@@ -41,7 +60,7 @@ export async function takeLog(actor: Actor, unitId: string, files: IncomingFile[
 			await sameBytes(tx, unitId, sha256);
 		});
 		const id = randomUUID();
-		const stored = [];
+		const stored: LogRow['files'] = [];
 		for (const [index, file] of files.entries()) {
 			const key = `${organisationId}/logs/${id}/${index}`;
 			await objectStore().keepFile(key, file.path);
@@ -49,7 +68,9 @@ export async function takeLog(actor: Actor, unitId: string, files: IncomingFile[
 		}
 		const row = await withOrganisation(organisationId, async (tx) => {
 			await sameBytes(tx, unitId, sha256);
-			const name = options.name ?? (files.length === 1 ? (files[0]?.name ?? 'log') : `${files[0]?.name ?? 'log'} and ${files.length - 1} more`);
+			const name =
+				options.name ??
+				(files.length === 1 ? (files[0]?.name ?? 'log') : `${files[0]?.name ?? 'log'} and ${files.length - 1} more`);
 			const log = await insertLog(tx, {
 				organisationId,
 				id,
@@ -62,7 +83,12 @@ export async function takeLog(actor: Actor, unitId: string, files: IncomingFile[
 				createdBy: actor.personId,
 				createdAt: now()
 			});
-			await recordAudit(tx, actor, { action: 'uploaded', subject: 'log', subjectId: id, after: { name: log.name, unitId, bytes: log.bytes } });
+			await recordAudit(tx, actor, {
+				action: 'uploaded',
+				subject: 'log',
+				subjectId: id,
+				after: { name: log.name, unitId, bytes: log.bytes }
+			});
 			return log;
 		});
 		await enqueueReading({ organisationId, logId: id });
@@ -103,7 +129,12 @@ export async function removeLog(actor: Actor, logId: string): Promise<void> {
 		const units = new Set([row.unitId, ...(await unitsTouchedBy(tx, logId))]);
 		await deleteLog(tx, logId);
 		for (const unitId of units) await raiseRevision(tx, unitId);
-		await recordAudit(tx, actor, { action: 'removed', subject: 'log', subjectId: logId, before: { name: row.name, sha256: row.sha256 } });
+		await recordAudit(tx, actor, {
+			action: 'removed',
+			subject: 'log',
+			subjectId: logId,
+			before: { name: row.name, sha256: row.sha256 }
+		});
 		return { units, files: row.files };
 	});
 	for (const file of touched.files) await objectStore().remove(file.key);
@@ -129,7 +160,13 @@ export async function confirmMapping(actor: Actor, logId: string, input: Mapping
 		const choices = { ...log.options.choices, ...(input.choices ?? {}) };
 		const options = { ...log.options, choices, timeZone: input.timeZone ?? log.options.timeZone };
 		await updateLog(tx, logId, { mapping, options, state: 'received', progress: 0, problems: [] });
-		await recordAudit(tx, actor, { action: 'mapped', subject: 'log', subjectId: logId, before: log.mapping, after: mapping });
+		await recordAudit(tx, actor, {
+			action: 'mapped',
+			subject: 'log',
+			subjectId: logId,
+			before: log.mapping,
+			after: mapping
+		});
 		return { ...log, mapping, options, state: 'received' as const, progress: 0 };
 	});
 	await enqueueReading({ organisationId, logId });
@@ -137,8 +174,14 @@ export async function confirmMapping(actor: Actor, logId: string, input: Mapping
 }
 
 /** The stored mapping with a person's changes; every entry is confirmed then. */
-function mergeMapping(log: LogRow, input: MappingInput, units: ReadonlyMap<string, { circuits: number }>): Log['mapping'] {
-	const entries = new Map(log.mapping.map((entry) => [`${entry.file}\n${entry.column}`, { ...entry, confirmed: true }]));
+function mergeMapping(
+	log: LogRow,
+	input: MappingInput,
+	units: ReadonlyMap<string, { circuits: number }>
+): Log['mapping'] {
+	const entries = new Map(
+		log.mapping.map((entry) => [`${entry.file}\n${entry.column}`, { ...entry, confirmed: true }])
+	);
 	for (const change of input.mapping) {
 		const key = `${change.file}\n${change.column}`;
 		const before = entries.get(key);

@@ -14,8 +14,23 @@ import {
 	type SourceFile,
 	type UnitRef
 } from '$lib/server/ingest';
-import { insertBlocks, type NewBlock, type NewEvent, type NewTimes, type NewWords } from '$lib/server/repositories/blocks';
-import { clearSamples, findLog, findRemembered, remember, updateLog, withLock, type LogChange, type LogRow } from '$lib/server/repositories/logs';
+import {
+	insertBlocks,
+	type NewBlock,
+	type NewEvent,
+	type NewTimes,
+	type NewWords
+} from '$lib/server/repositories/blocks';
+import {
+	clearSamples,
+	findLog,
+	findRemembered,
+	remember,
+	updateLog,
+	withLock,
+	type LogChange,
+	type LogRow
+} from '$lib/server/repositories/logs';
 import { findSite, findUnit, listUnits, raiseRevision, type UnitRow } from '$lib/server/repositories/plant';
 import { withOrganisation } from '$lib/server/repositories/transaction';
 import { objectStore } from '$lib/server/store';
@@ -30,7 +45,8 @@ const PROGRESS_EVERY_MS = 400;
 const LOOK_SHARE = 0.08;
 const READ_SHARE = 0.82;
 
-const save = (job: Job, change: LogChange): Promise<void> => withOrganisation(job.organisationId, (tx) => updateLog(tx, job.logId, change));
+const save = (job: Job, change: LogChange): Promise<void> =>
+	withOrganisation(job.organisationId, (tx) => updateLog(tx, job.logId, change));
 
 const unitRef = (unit: UnitRow): UnitRef => ({
 	unitId: unit.id,
@@ -54,7 +70,10 @@ async function contextOf(job: Job, log: LogRow): Promise<{ context: ReadContext;
 			zoneOverride: log.options.timeZone,
 			airPressure: airPressure(site.altitude ?? 0),
 			now: now().getTime(),
-			remembered: remembered.map((row) => ({ headerSignature: row.signature, ...(row.mapping as { mapping: ColumnMapping[]; choices: Record<string, string> }) })),
+			remembered: remembered.map((row) => ({
+				headerSignature: row.signature,
+				...(row.mapping as { mapping: ColumnMapping[]; choices: Record<string, string> })
+			})),
 			ask: log.options.mapping === 'ask',
 			answers: log.options.choices
 		};
@@ -135,7 +154,18 @@ class StoringSink implements ReadSink {
 		const { organisationId, logId } = this.job;
 		this.touched.add(raw.unitId);
 		const { unitId, circuit, at, text, code, severity, what } = raw;
-		this.#events.push({ organisationId, logId, line: this.#line++, unitId, circuit, at: Math.round(at), text, code: code ?? null, severity, what });
+		this.#events.push({
+			organisationId,
+			logId,
+			line: this.#line++,
+			unitId,
+			circuit,
+			at: Math.round(at),
+			text,
+			code: code ?? null,
+			severity,
+			what
+		});
 		if (this.#events.length >= 500) await this.flush();
 	}
 
@@ -162,12 +192,27 @@ class StoringSink implements ReadSink {
 }
 
 const lines = (problems: Inspection['problems'], several: boolean) =>
-	problems.map(({ file, line, column, kind, message }) => ({ line, column, kind, message: several && file ? `${file}: ${message}` : message }));
+	problems.map(({ file, line, column, kind, message }) => ({
+		line,
+		column,
+		kind,
+		message: several && file ? `${file}: ${message}` : message
+	}));
 
-async function refuse(job: Job, problems: Inspection['problems'], several: boolean, kept: KeptInspection | null): Promise<void> {
+async function refuse(
+	job: Job,
+	problems: Inspection['problems'],
+	several: boolean,
+	kept: KeptInspection | null
+): Promise<void> {
 	await withOrganisation(job.organisationId, async (tx) => {
 		await clearSamples(tx, job.logId);
-		await updateLog(tx, job.logId, { state: 'refused', problems: lines(problems, several), progress: 1, ...(kept ? { inspection: kept, layout: kept.inspection.layout } : {}) });
+		await updateLog(tx, job.logId, {
+			state: 'refused',
+			problems: lines(problems, several),
+			progress: 1,
+			...(kept ? { inspection: kept, layout: kept.inspection.layout } : {})
+		});
 	});
 }
 
@@ -186,12 +231,25 @@ async function lookAndRead(job: Job, log: LogRow): Promise<string[] | null> {
 		return null;
 	}
 	if (inspection.decision === 'needs-mapping' && !confirmed) {
-		await save(job, { state: 'needs-mapping', progress: LOOK_SHARE, inspection: kept, layout: inspection.layout, mapping, problems: lines(inspection.problems, several) });
+		await save(job, {
+			state: 'needs-mapping',
+			progress: LOOK_SHARE,
+			inspection: kept,
+			layout: inspection.layout,
+			mapping,
+			problems: lines(inspection.problems, several)
+		});
 		return null;
 	}
 	await withOrganisation(job.organisationId, async (tx) => {
 		await clearSamples(tx, job.logId);
-		await updateLog(tx, job.logId, { inspection: kept, layout: inspection.layout, mapping, progress: LOOK_SHARE, rows: 0 });
+		await updateLog(tx, job.logId, {
+			inspection: kept,
+			layout: inspection.layout,
+			mapping,
+			progress: LOOK_SHARE,
+			rows: 0
+		});
 	});
 	const sink = new StoringSink(job);
 	let saved = 0;
@@ -213,7 +271,13 @@ async function lookAndRead(job: Job, log: LogRow): Promise<string[] | null> {
 	return [...new Set([...sink.touched, log.unitId])];
 }
 
-async function finish(job: Job, log: LogRow, result: ReadResult, kept: KeptInspection, touched: string[]): Promise<void> {
+async function finish(
+	job: Job,
+	log: LogRow,
+	result: ReadResult,
+	kept: KeptInspection,
+	touched: string[]
+): Promise<void> {
 	await withOrganisation(job.organisationId, async (tx) => {
 		await updateLog(tx, job.logId, {
 			state: 'analysing',
@@ -230,9 +294,21 @@ async function finish(job: Job, log: LogRow, result: ReadResult, kept: KeptInspe
 	});
 }
 
-async function keepMapping(job: Job, siteId: string, signature: string, mapping: ColumnMapping[], log: LogRow): Promise<void> {
+async function keepMapping(
+	job: Job,
+	siteId: string,
+	signature: string,
+	mapping: ColumnMapping[],
+	log: LogRow
+): Promise<void> {
 	await withOrganisation(job.organisationId, (tx) =>
-		remember(tx, { organisationId: job.organisationId, siteId, signature, mapping: { mapping, choices: log.options.choices }, confirmedBy: log.createdBy })
+		remember(tx, {
+			organisationId: job.organisationId,
+			siteId,
+			signature,
+			mapping: { mapping, choices: log.options.choices },
+			confirmedBy: log.createdBy
+		})
 	);
 }
 
@@ -264,4 +340,3 @@ export async function runReading(job: Job): Promise<string[] | null> {
 		}
 	});
 }
-

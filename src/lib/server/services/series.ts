@@ -1,7 +1,14 @@
 import type { EventRecord, Series, SeriesMap, TextSeries } from '$lib/model/series';
 import { SIGNALS, signalOf, type SeriesId } from '$lib/model/signals';
 import { decodeTimes, decodeValues, mergeBlocks, type DecodedBlock } from '$lib/server/ingest';
-import { findBlocks, findEvents, findTimes, findWords, type FoundBlock, type Window } from '$lib/server/repositories/blocks';
+import {
+	findBlocks,
+	findEvents,
+	findTimes,
+	findWords,
+	type FoundBlock,
+	type Window
+} from '$lib/server/repositories/blocks';
 import type { Tx } from '$lib/server/repositories/transaction';
 
 /** Stored blocks as series: what analysis and traces read. */
@@ -84,7 +91,9 @@ export async function loadSeries(
 	options: { window?: Window; signals?: readonly string[] } = {}
 ): Promise<Map<string, SeriesMap>> {
 	const found = await findBlocks(tx, unitId, ALL_CIRCUITS, options.window ?? null, options.signals ?? null);
-	const parts = new Map(found.map((block) => [partKey(block.logId, block.part), { logId: block.logId, part: block.part }]));
+	const parts = new Map(
+		found.map((block) => [partKey(block.logId, block.part), { logId: block.logId, part: block.part }])
+	);
 	const builder = new SeriesBuilder(await findTimes(tx, [...parts.values()]));
 	const groups = new Map<string, FoundBlock[]>();
 	for (const block of found) {
@@ -110,7 +119,9 @@ type Words = NonNullable<Awaited<ReturnType<typeof findWords>>[number]>;
 
 /** Words of one column in time order; the later upload wins where logs overlap. */
 function textSeries(parts: readonly Words[]): TextSeries {
-	const rows = parts.flatMap((part) => part.words.t.map((t, i) => ({ t, text: part.words.text[i] ?? '', ordinal: part.ordinal })));
+	const rows = parts.flatMap((part) =>
+		part.words.t.map((t, i) => ({ t, text: part.words.text[i] ?? '', ordinal: part.ordinal }))
+	);
 	rows.sort((a, b) => a.t - b.t || a.ordinal - b.ordinal);
 	const kept = rows.filter((row, i) => rows[i + 1]?.t !== row.t);
 	return { t: Float64Array.from(kept, (row) => row.t), text: kept.map((row) => row.text) };
@@ -119,14 +130,20 @@ function textSeries(parts: readonly Words[]): TextSeries {
 export type CircuitTexts = { unitMode?: TextSeries; activeLimit?: TextSeries; alarm?: TextSeries };
 
 /** Mode, limit and alarm columns by circuit. An alarm column of the whole unit counts for each circuit that has none. */
-export async function loadTexts(tx: Tx, unitId: string, circuits: readonly string[], window?: Window): Promise<Map<string, CircuitTexts>> {
+export async function loadTexts(
+	tx: Tx,
+	unitId: string,
+	circuits: readonly string[],
+	window?: Window
+): Promise<Map<string, CircuitTexts>> {
 	const found = await findWords(tx, unitId, ALL_CIRCUITS, window ?? null);
 	const texts = new Map<string, CircuitTexts>();
 	for (const circuit of circuits) {
 		const own: CircuitTexts = {};
 		for (const signal of ['unitMode', 'activeLimit', 'alarm'] as const) {
 			const mine = found.filter((part) => part.signal === signal && part.circuit === circuit);
-			const parts = mine.length > 0 ? mine : signal === 'unitMode' ? found.filter((part) => part.signal === signal) : [];
+			const parts =
+				mine.length > 0 ? mine : signal === 'unitMode' ? found.filter((part) => part.signal === signal) : [];
 			if (parts.length > 0) own[signal] = textSeries(parts);
 		}
 		texts.set(circuit, own);

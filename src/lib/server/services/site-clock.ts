@@ -9,10 +9,12 @@ export const siteDate = (ms: number, zone: string): string => DateTime.fromMilli
 export const siteClock = (ms: number, zone: string): string => DateTime.fromMillis(ms, { zone }).toFormat('HH:mm');
 
 /** The instant a site's date begins. */
-export const dayStart = (date: string, zone: string): number => DateTime.fromISO(date, { zone }).startOf('day').toMillis();
+export const dayStart = (date: string, zone: string): number =>
+	DateTime.fromISO(date, { zone }).startOf('day').toMillis();
 
 /** The date some days later (or earlier). */
-export const addDays = (date: string, days: number): string => DateTime.fromISO(date, { zone: 'utc' }).plus({ days }).toFormat('yyyy-MM-dd');
+export const addDays = (date: string, days: number): string =>
+	DateTime.fromISO(date, { zone: 'utc' }).plus({ days }).toFormat('yyyy-MM-dd');
 
 /** Every date from one to another, both included. */
 export function datesBetween(from: string, to: string): string[] {

@@ -36,7 +36,8 @@ export function unitsObject(system: UnitSystem): Units {
 }
 
 /** A stored value in the units of an answer (pressures absolute). */
-export const inUnits = (value: number, quantity: Quantity, system: UnitSystem): number => fromStored(value, apiMeasure(quantity, system));
+export const inUnits = (value: number, quantity: Quantity, system: UnitSystem): number =>
+	fromStored(value, apiMeasure(quantity, system));
 
 /** One figure in the units of an answer. */
 export function figureInUnits(key: FigureKey, value: number, system: UnitSystem): number {
@@ -50,10 +51,16 @@ const span = ({ from, to }: { from: number; to: number }) => ({ from: iso(from),
 const SAME_START_MS = 120_000;
 
 /** The newest correction that concerns a start. */
-export function correctionOf(row: { circuit: string; startedAt: number }, corrections: readonly CorrectionRow[]): Start['corrected'] {
+export function correctionOf(
+	row: { circuit: string; startedAt: number },
+	corrections: readonly CorrectionRow[]
+): Start['corrected'] {
 	const found = corrections.findLast((entry) => {
 		const at = entry.correction.newStartedAt ?? entry.startedAt;
-		return entry.circuit === row.circuit && Math.min(Math.abs(entry.startedAt - row.startedAt), Math.abs(at - row.startedAt)) <= SAME_START_MS;
+		return (
+			entry.circuit === row.circuit &&
+			Math.min(Math.abs(entry.startedAt - row.startedAt), Math.abs(at - row.startedAt)) <= SAME_START_MS
+		);
 	});
 	return found ? { reason: found.reason, by: found.byName, at: found.at.toISOString() } : null;
 }

@@ -5,7 +5,14 @@ import type { Start, startCorrectionSchema } from '$lib/model/wire/start';
 import { demand } from '$lib/server/auth/guard';
 import { recordAudit } from '$lib/server/repositories/audit';
 import type { SiteRow, UnitRow } from '$lib/server/repositories/plant';
-import { findStart, insertCorrection, listCorrections, listStarts, type StartFilter, type StartRow } from '$lib/server/repositories/starts';
+import {
+	findStart,
+	insertCorrection,
+	listCorrections,
+	listStarts,
+	type StartFilter,
+	type StartRow
+} from '$lib/server/repositories/starts';
 import { withOrganisation, type Tx } from '$lib/server/repositories/transaction';
 import type { z } from 'zod';
 import { runAnalysis } from './analysing';
@@ -13,7 +20,12 @@ import { startShape } from './start-shapes';
 import { visibleUnit } from './units';
 
 /** A unit's starts, oldest first. */
-export async function startsOf(actor: Actor, unitId: string, filter: StartFilter, system: UnitSystem): Promise<Start[]> {
+export async function startsOf(
+	actor: Actor,
+	unitId: string,
+	filter: StartFilter,
+	system: UnitSystem
+): Promise<Start[]> {
 	return withOrganisation(actor.organisationId, async (tx) => {
 		await visibleUnit(tx, actor, unitId);
 		const corrections = await listCorrections(tx, unitId);
@@ -22,7 +34,11 @@ export async function startsOf(actor: Actor, unitId: string, filter: StartFilter
 }
 
 /** A start with its unit and site, when this person may know of them. @throws AppError `not-found` */
-export async function visibleStart(tx: Tx, actor: Actor, startId: string): Promise<{ row: StartRow; unit: UnitRow; site: SiteRow }> {
+export async function visibleStart(
+	tx: Tx,
+	actor: Actor,
+	startId: string
+): Promise<{ row: StartRow; unit: UnitRow; site: SiteRow }> {
 	const row = await findStart(tx, startId);
 	if (!row) throw notFound('start');
 	const { unit, site } = await visibleUnit(tx, actor, row.unitId).catch(() => {
@@ -32,7 +48,12 @@ export async function visibleStart(tx: Tx, actor: Actor, startId: string): Promi
 }
 
 /** A person's correction with its reason: kept apart, so that it survives recomputation; the unit is recomputed with it. */
-export async function correctStart(actor: Actor, startId: string, input: z.output<typeof startCorrectionSchema>, system: UnitSystem): Promise<Start> {
+export async function correctStart(
+	actor: Actor,
+	startId: string,
+	input: z.output<typeof startCorrectionSchema>,
+	system: UnitSystem
+): Promise<Start> {
 	demand(actor, 'logs');
 	const { organisationId } = actor;
 	const unitId = await withOrganisation(organisationId, async (tx) => {

@@ -2,7 +2,13 @@ import { SUSPECT_WORDS } from '$lib/model/words';
 import { may, maySeeSite, type Actor } from '$lib/model/people';
 import type { UnitSummary } from '$lib/model/wire/views';
 import { now } from '$lib/server/config';
-import { listCases, listSignedSuspects, listVisits, type CaseRow, type VisitRow } from '$lib/server/repositories/circle';
+import {
+	listCases,
+	listSignedSuspects,
+	listVisits,
+	type CaseRow,
+	type VisitRow
+} from '$lib/server/repositories/circle';
 import { listMembers } from '$lib/server/repositories/identity';
 import { listLogStates } from '$lib/server/repositories/logs';
 import { listLimits, listSites, listUnits, type SiteRow, type UnitRow } from '$lib/server/repositories/plant';
@@ -47,13 +53,24 @@ function verdictsOf(actor: Actor, results: readonly CircuitResultRow[], settled:
 
 function openCaseOf(cases: readonly CaseRow[]): UnitSummary['openCase'] {
 	const open = cases.find((entry) => entry.state !== 'closed');
-	return open ? { id: open.id, number: `C-${open.number}`, openedAt: open.openedAt.toISOString(), state: open.state } : null;
+	return open
+		? { id: open.id, number: `C-${open.number}`, openedAt: open.openedAt.toISOString(), state: open.state }
+		: null;
 }
 
-function nextVisitOf(visits: readonly VisitRow[], today: string, names: ReadonlyMap<string, string>): UnitSummary['nextVisit'] {
+function nextVisitOf(
+	visits: readonly VisitRow[],
+	today: string,
+	names: ReadonlyMap<string, string>
+): UnitSummary['nextVisit'] {
 	const next = visits.find((visit) => visit.date >= today && visit.leftAt === null);
 	if (!next) return null;
-	return { id: next.id, date: next.date, beThereBy: next.beThereBy, who: next.technicianId ? (names.get(next.technicianId) ?? null) : null };
+	return {
+		id: next.id,
+		date: next.date,
+		beThereBy: next.beThereBy,
+		who: next.technicianId ? (names.get(next.technicianId) ?? null) : null
+	};
 }
 
 function summary(actor: Actor, unit: UnitRow, site: SiteRow, shaped: UnitSummary['unit'], from: Sources): UnitSummary {
@@ -84,7 +101,12 @@ function summary(actor: Actor, unit: UnitRow, site: SiteRow, shaped: UnitSummary
 			siteDate(now().getTime(), site.timeZone),
 			from.names
 		),
-		logs: { ready: count('ready'), waiting: count('needs-mapping'), refused: count('refused'), reading: count('received', 'reading', 'analysing') }
+		logs: {
+			ready: count('ready'),
+			waiting: count('needs-mapping'),
+			refused: count('refused'),
+			reading: count('received', 'reading', 'analysing')
+		}
 	};
 }
 
@@ -92,7 +114,9 @@ function summary(actor: Actor, unit: UnitRow, site: SiteRow, shaped: UnitSummary
 function worstFirst(a: UnitSummary, b: UnitSummary): number {
 	const low = (entry: UnitSummary): number => entry.firstTries.low ?? -1;
 	const verdict = (entry: UnitSummary): number => (entry.verdict === 'fault-pattern' ? 1 : 0);
-	return low(b) - low(a) || b.startupTrips - a.startupTrips || verdict(b) - verdict(a) || (a.unit.tag < b.unit.tag ? -1 : 1);
+	return (
+		low(b) - low(a) || b.startupTrips - a.startupTrips || verdict(b) - verdict(a) || (a.unit.tag < b.unit.tag ? -1 : 1)
+	);
 }
 
 function titleOf(rows: readonly UnitSummary[]): string {
@@ -101,7 +125,8 @@ function titleOf(rows: readonly UnitSummary[]): string {
 	const { k, m } = worst.firstTries;
 	if (k > 0) return `${worst.unit.tag} at ${worst.site.name} tripped on ${k} of ${m} first tries`;
 	const reading = rows.reduce((sum, row) => sum + row.logs.reading, 0);
-	if (rows.every((row) => row.starts === 0)) return reading > 0 ? 'The first logs are being read' : 'No start in these logs yet';
+	if (rows.every((row) => row.starts === 0))
+		return reading > 0 ? 'The first logs are being read' : 'No start in these logs yet';
 	return 'No start-up trip in these logs';
 }
 

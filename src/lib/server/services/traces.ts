@@ -68,7 +68,13 @@ function quantityOf(key: TraceKey): Quantity {
 }
 
 /** One trace in the units of the answer, thinned to the width it is drawn at. */
-function traceOf(key: TraceKey, series: Series, window: Window, px: number, system: UnitSystem): { trace: BinaryTraces['traces'][number]; gaps: Window[] } {
+function traceOf(
+	key: TraceKey,
+	series: Series,
+	window: Window,
+	px: number,
+	system: UnitSystem
+): { trace: BinaryTraces['traces'][number]; gaps: Window[] } {
 	const quantity = quantityOf(key);
 	const cut = windowOf(series, window);
 	const { t, v } = reduceTrace(cut.t, cut.v, px);
@@ -77,7 +83,16 @@ function traceOf(key: TraceKey, series: Series, window: Window, px: number, syst
 	const values = new Float32Array(v.length);
 	for (let i = 0; i < v.length; i++) values[i] = fromStored(v[i] ?? NaN, measure);
 	const label = isDerived(key) ? DERIVED[key].label : SIGNALS[key].label;
-	const trace = { signal: key, label, quantity, measure: MEASURES[measure].symbol, logging: series.logging, derived: isDerived(key), t, v: values };
+	const trace = {
+		signal: key,
+		label,
+		quantity,
+		measure: MEASURES[measure].symbol,
+		logging: series.logging,
+		derived: isDerived(key),
+		t,
+		v: values
+	};
 	return { trace, gaps: cut.gaps };
 }
 
@@ -95,7 +110,8 @@ async function tracesOf({ tx, unit, circuit, window, system }: Source, query: Tr
 	for (const key of keysOf(query.signals, map)) {
 		const series = isDerived(key)
 			? deriveSeries(key, map, saturations, unit.nature)
-			: (map[key] ?? (key === 'evapSaturation' ? saturations.evap : key === 'condSaturation' ? saturations.condDew : undefined));
+			: (map[key] ??
+				(key === 'evapSaturation' ? saturations.evap : key === 'condSaturation' ? saturations.condDew : undefined));
 		if (!hasReadings(series)) {
 			if (query.signals) missing.push(key);
 			continue;
@@ -103,7 +119,8 @@ async function tracesOf({ tx, unit, circuit, window, system }: Source, query: Tr
 		const made = traceOf(key, series, window, px, system);
 		traces.push(made.trace);
 		if (!isDerived(key) && made.gaps.length > 0 && gaps.length === 0) gaps = made.gaps;
-		if (!isDerived(key) && series.logging === 'interval') spacing = Math.min(spacing ?? Infinity, spacingWithin(series, window.from, window.to) ?? Infinity);
+		if (!isDerived(key) && series.logging === 'interval')
+			spacing = Math.min(spacing ?? Infinity, spacingWithin(series, window.from, window.to) ?? Infinity);
 	}
 	return {
 		from: iso(window.from),
@@ -141,11 +158,19 @@ async function marksOf({ tx, unit, circuit, window }: Source): Promise<Traces['m
 /** Where a start's traces begin and end: seconds before it, and after it (by default its run and two minutes more). */
 function startWindow(row: StartRow, before: number | undefined, after: number | undefined): Window {
 	const run = ((row.endedAt ?? row.startedAt + 40 * 60_000) - row.startedAt) / 1000;
-	return { from: row.startedAt - (before ?? 60) * 1000, to: row.startedAt + (after ?? Math.min(run + 120, 4 * 3600)) * 1000 };
+	return {
+		from: row.startedAt - (before ?? 60) * 1000,
+		to: row.startedAt + (after ?? Math.min(run + 120, 4 * 3600)) * 1000
+	};
 }
 
 /** The traces around one start. */
-export async function startTraces(actor: Actor, startId: string, query: TraceQuery & { before?: number; after?: number }, system: UnitSystem): Promise<BinaryTraces> {
+export async function startTraces(
+	actor: Actor,
+	startId: string,
+	query: TraceQuery & { before?: number; after?: number },
+	system: UnitSystem
+): Promise<BinaryTraces> {
 	return withOrganisation(actor.organisationId, async (tx) => {
 		const { row, unit } = await visibleStart(tx, actor, startId);
 		const window = startWindow(row, query.before, query.after);
@@ -154,7 +179,12 @@ export async function startTraces(actor: Actor, startId: string, query: TraceQue
 }
 
 /** The traces of any window of a unit's circuit. @throws AppError `invalid` when the window is none */
-export async function unitTraces(actor: Actor, unitId: string, query: TraceQuery & { from: string; to: string; circuit?: string }, system: UnitSystem): Promise<BinaryTraces> {
+export async function unitTraces(
+	actor: Actor,
+	unitId: string,
+	query: TraceQuery & { from: string; to: string; circuit?: string },
+	system: UnitSystem
+): Promise<BinaryTraces> {
 	const window = { from: Date.parse(query.from), to: Date.parse(query.to) };
 	if (!(window.from < window.to)) throw new AppError('invalid', '“from” must be before “to”.');
 	return withOrganisation(actor.organisationId, async (tx) => {
@@ -167,6 +197,10 @@ export async function unitTraces(actor: Actor, unitId: string, query: TraceQuery
 export function plainTraces(traces: BinaryTraces): Traces {
 	return {
 		...traces,
-		traces: traces.traces.map((trace) => ({ ...trace, t: [...trace.t], v: [...trace.v].map((value) => (Number.isNaN(value) ? null : value)) }))
+		traces: traces.traces.map((trace) => ({
+			...trace,
+			t: [...trace.t],
+			v: [...trace.v].map((value) => (Number.isNaN(value) ? null : value))
+		}))
 	};
 }

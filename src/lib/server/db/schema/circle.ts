@@ -79,6 +79,7 @@ export const visits = pgTable(
 		technicianId: uuid(),
 		arrivedAt: instant(),
 		leftAt: instant(),
+		purpose: text(),
 		accessNotes: text(),
 		result: text(),
 		createdBy: uuid(),

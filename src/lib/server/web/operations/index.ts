@@ -1,0 +1,10 @@
+import type { Operation } from '../operation';
+import * as logs from './logs';
+import * as people from './people';
+import * as plant from './plant';
+import * as starts from './starts';
+
+/** Every call of the public API, for the OpenAPI document. */
+export const OPERATIONS: readonly Operation[] = [plant, logs, starts, people].flatMap(
+	(group) => Object.values(group) as Operation[]
+);

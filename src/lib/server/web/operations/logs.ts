@@ -1,0 +1,67 @@
+import { pageQuerySchema } from '$lib/model/wire/common';
+import { logPreviewSchema, logSchema, mappingInputSchema } from '$lib/model/wire/log';
+import { z } from 'zod';
+import { operation } from '../operation';
+
+const log = '/api/logs/{log}';
+
+export const listLogs = operation({
+	method: 'get',
+	path: '/api/units/{unit}/logs',
+	summary: 'A unit’s logs, newest first',
+	right: 'read',
+	query: pageQuerySchema,
+	response: z.object({ logs: z.array(logSchema), nextCursor: z.string().nullable() })
+});
+export const addLog = operation({
+	method: 'post',
+	path: '/api/units/{unit}/logs',
+	summary: 'Uploads a log: the file itself as the body, or multipart with several parts that make one log',
+	right: 'logs',
+	query: z.object({
+		name: z.string().max(200).optional(),
+		timeZone: z.string().max(60).optional(),
+		mapping: z.enum(['auto', 'ask']).default('auto')
+	}),
+	bodyTypes: ['text/csv', 'application/gzip', 'application/zip', 'application/octet-stream', 'multipart/form-data'],
+	response: z.object({ log: logSchema }),
+	status: 202
+});
+export const getLog = operation({ method: 'get', path: log, summary: 'One log', right: 'read', response: logSchema });
+export const removeLog = operation({
+	method: 'delete',
+	path: log,
+	summary: 'Removes a log with its samples and what was computed from them',
+	right: 'logs',
+	status: 204
+});
+export const watchLog = operation({
+	method: 'get',
+	path: `${log}/progress`,
+	summary: 'Server-sent events with the log until it is ready, needs-mapping or refused',
+	right: 'read',
+	responseTypes: ['text/event-stream']
+});
+export const previewLog = operation({
+	method: 'get',
+	path: `${log}/preview`,
+	summary: 'What the mapping page shows: columns with their guess, range, trace and cells, and the choices made',
+	right: 'read',
+	response: logPreviewSchema
+});
+export const mapLog = operation({
+	method: 'put',
+	path: `${log}/mapping`,
+	summary: 'Confirms or changes a mapping, and reads the log again with it',
+	right: 'logs',
+	body: mappingInputSchema,
+	response: logSchema
+});
+export const originalLog = operation({
+	method: 'get',
+	path: `${log}/original`,
+	summary: 'One file of a log, byte for byte as it came',
+	right: 'read',
+	query: z.object({ file: z.coerce.number().int().min(0).default(0) }),
+	responseTypes: ['application/octet-stream']
+});

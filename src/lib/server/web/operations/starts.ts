@@ -1,0 +1,58 @@
+import { OUTCOMES } from '$lib/model/start';
+import { instantSchema, pageQuerySchema } from '$lib/model/wire/common';
+import { startCorrectionSchema, startSchema } from '$lib/model/wire/start';
+import { tracesSchema } from '$lib/model/wire/views';
+import { TRACES_BINARY } from '$lib/utils/traces-binary';
+import { z } from 'zod';
+import { operation } from '../operation';
+
+const units = z.enum(['si', 'ip']).optional();
+const traceQuery = z.object({
+	signals: z.string().max(2000).optional().meta({ description: 'signal and derived keys, comma-separated' }),
+	px: z.coerce.number().int().min(1).max(20000).optional(),
+	units
+});
+
+export const listStarts = operation({
+	method: 'get',
+	path: '/api/units/{unit}/starts',
+	summary: 'A unit’s starts, oldest first',
+	right: 'read',
+	query: pageQuerySchema.extend({
+		from: instantSchema.optional(),
+		to: instantSchema.optional(),
+		outcome: z.enum(OUTCOMES).optional(),
+		circuit: z.string().optional(),
+		units
+	}),
+	response: z.object({ starts: z.array(startSchema), nextCursor: z.string().nullable() })
+});
+export const correctStart = operation({
+	method: 'patch',
+	path: '/api/starts/{start}',
+	summary: 'A person’s correction of a start, with its reason',
+	right: 'logs',
+	body: startCorrectionSchema,
+	response: startSchema
+});
+export const startTraces = operation({
+	method: 'get',
+	path: '/api/starts/{start}/traces',
+	summary: 'Reduced traces around a start that keep every extreme',
+	right: 'read',
+	query: traceQuery.extend({
+		before: z.coerce.number().min(0).max(86400).optional(),
+		after: z.coerce.number().min(1).max(172800).optional()
+	}),
+	response: tracesSchema,
+	responseTypes: [TRACES_BINARY]
+});
+export const unitTraces = operation({
+	method: 'get',
+	path: '/api/units/{unit}/traces',
+	summary: 'The same for any window of a unit’s circuit',
+	right: 'read',
+	query: traceQuery.extend({ from: instantSchema, to: instantSchema, circuit: z.string().optional() }),
+	response: tracesSchema,
+	responseTypes: [TRACES_BINARY]
+});
