@@ -37,11 +37,24 @@ const web: ViteUserConfig = {
 	// Small fonts must stay files: inlined data: URLs would need a wider content security policy.
 	build: { assetsInlineLimit: (path) => (path.endsWith('.woff2') ? false : undefined) },
 	test: {
-		// Database tests live in *.db.test.ts, browser walks in tests/browser; src/cli/test.mjs runs every kind.
-		include: ['src/**/*.test.ts', 'fixtures/**/*.test.ts', 'tests/**/*.test.ts'],
-		exclude: ['tests/browser/**', 'node_modules/**'],
-		environment: 'node',
-		testTimeout: 30_000
+		testTimeout: 30_000,
+		projects: [
+			{
+				extends: true,
+				test: { name: 'unit', environment: 'node', include: ['src/**/*.test.ts', 'fixtures/**/*.test.ts', 'tests/layers/**/*.test.ts'] }
+			},
+			{
+				extends: true,
+				test: {
+					name: 'database',
+					environment: 'node',
+					include: ['tests/database/**/*.test.ts'],
+					globalSetup: 'tests/database/support/server.ts',
+					pool: 'forks',
+					maxWorkers: 2
+				}
+			}
+		]
 	}
 };
 

@@ -2,7 +2,7 @@ import { createReadStream } from 'node:fs';
 import { copyFile, mkdir, open, rename, rm, unlink, writeFile } from 'node:fs/promises';
 import { randomUUID } from 'node:crypto';
 import { dirname, join, resolve, sep } from 'node:path';
-import type { ObjectStore } from './index';
+import type { ObjectStore } from './types';
 
 async function syncToDisk(path: string): Promise<void> {
 	const handle = await open(path, 'r+');

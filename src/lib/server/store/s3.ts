@@ -9,7 +9,7 @@ import {
 import type { Config } from '$lib/server/config';
 import { createReadStream } from 'node:fs';
 import { stat, unlink } from 'node:fs/promises';
-import type { ObjectStore } from './index';
+import type { ObjectStore } from './types';
 
 function clientFor(settings: Config): S3Client {
 	const options: S3ClientConfig = {

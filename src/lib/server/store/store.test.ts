@@ -6,7 +6,7 @@ import { join } from 'node:path';
 import S3rver from 's3rver';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { folderStore } from './folder';
-import type { ObjectStore } from './index';
+import type { ObjectStore } from './types';
 import { s3Store } from './s3';
 
 let folder = '';
