@@ -1,0 +1,172 @@
+import type { ChangeFact, FieldCheckFact } from '$lib/model/checks';
+import type { CircuitInput } from '$lib/model/circuit-input';
+import type { FigureKey, StartRecord } from '$lib/model/start';
+import { limitAt, type LimitKey, type UnitNature } from '$lib/model/unit';
+import { saturationTemperature } from '../refrigerants/saturation';
+import { saturationsOf } from '../series/derived';
+import { median } from '../statistics/median';
+import { medianAbsoluteDeviation } from '../statistics/median-absolute-deviation';
+import { type Words, wordsFor } from '../wording/quantity-words';
+import { isTellingTrip, presentStarts, type SuspectEvidence } from './evidence';
+import { type Readable, traceReader, type TraceReader } from './trace-reader';
+
+/** A value read from several starts. */
+export type Reading = { value: number; starts: StartRecord[]; values: number[] };
+/** A reading of the tripped starts beside the same window of the held ones. */
+export type Beside = Reading & {
+	/** Median of the held starts over the same elapsed window; null without any. */
+	held: number | null;
+	/** How far the median lies from that of the held starts. */
+	shift: number | null;
+	/** Held starts the band comes from, and 3 MAD of them. */
+	heldCount: number;
+	spread: number;
+};
+
+export type Context = {
+	input: CircuitInput;
+	nature: UnitNature;
+	reader: TraceReader;
+	words: Words;
+	/** Eligible starts of the present state. */
+	starts: StartRecord[];
+	/** Those that tripped (start-up trips first choice), or are looked at alone for one start's clues. */
+	bad: StartRecord[];
+	held: StartRecord[];
+	/** Starts that stalled for certain, and those whose limits are not logged. */
+	stalls: StartRecord[];
+	maybeStalls: StartRecord[];
+	checks: readonly FieldCheckFact[];
+	changes: readonly ChangeFact[];
+	limit: (key: LimitKey) => number | null;
+	/** Median of a figure over starts, of those that have it. */
+	figure: (key: FigureKey, of: readonly StartRecord[]) => Reading | null;
+	/** Median of a trace over from…to seconds from the start (never past 0.5 s before the stop). */
+	window: (trace: Readable, from: number, to: number, of: readonly StartRecord[]) => Reading | null;
+	/** The trip minute of the tripped starts beside the same elapsed time of the held ones. */
+	tripMinute: (trace: Readable, earliest?: number) => Beside | null;
+	/** A fixed window of the tripped starts beside the same of the held ones. */
+	beside: (trace: Readable, from: number, to: number) => Beside | null;
+	/** Saturation of the logged pressure minus the logged saturation, over from…to seconds from the start. */
+	pressureGap: (of: readonly StartRecord[], from: number, to: number) => Reading | null;
+};
+
+const runSeconds = (start: StartRecord) =>
+	start.endedAt === null ? Infinity : (start.endedAt - start.startedAt) / 1000;
+
+function gather(starts: readonly StartRecord[], read: (start: StartRecord) => number | null): Reading | null {
+	const found = starts.map((start) => ({ start, value: read(start) }));
+	const kept = found.filter((one): one is { start: StartRecord; value: number } => one.value !== null);
+	const values = kept.map((one) => one.value);
+	const value = median(values);
+	return value === null ? null : { value, values, starts: kept.map((one) => one.start) };
+}
+
+/** The trip minute of a start, seconds from its start: the last quarter of the run, 15 s at least, 60 s at most. */
+function tripWindow(start: StartRecord): { from: number; to: number } {
+	const stop = runSeconds(start);
+	const length = Math.min(60, Math.max(15, 2.2 * start.spacingSeconds, stop / 4));
+	return { from: Math.max(0, stop - length), to: stop - 0.5 };
+}
+
+/** How many held starts are read beside the tripped ones; the nearest in time serve best. */
+const HELD_BESIDE = 40;
+
+function windowOf(reader: TraceReader, trace: Readable, start: StartRecord, from: number, to: number): number | null {
+	const last = Math.min(to, runSeconds(start) - 0.5);
+	if (last < from) return null;
+	return reader.median(trace, start.startedAt + from * 1000, start.startedAt + last * 1000);
+}
+
+/** A saturation that was worked out from the pressure is no second reading beside it. */
+function pressureGap(input: CircuitInput, reader: TraceReader, start: StartRecord, from: number, to: number) {
+	if (!input.series.evapSaturation?.t.length) return null;
+	const pressure = windowOf(reader, 'evapPressure', start, from, to);
+	const logged = windowOf(reader, 'evapSaturation', start, from, to);
+	if (pressure === null || logged === null) return null;
+	const saturation = saturationTemperature(input.refrigerant, pressure);
+	return saturation === null ? null : saturation - logged;
+}
+
+function besideOf(bad: Reading | null, heldValues: number[]): Beside | null {
+	if (!bad) return null;
+	const held = median(heldValues);
+	return {
+		...bad,
+		held,
+		shift: held === null ? null : bad.value - held,
+		heldCount: heldValues.length,
+		spread: 3 * (medianAbsoluteDeviation(heldValues) ?? 0)
+	};
+}
+
+/** The circuit's series with saturations worked out where the log has only pressures. */
+function withSaturations(input: CircuitInput): CircuitInput['series'] {
+	const { evap, cond } = saturationsOf(input.series, input.refrigerant);
+	return {
+		...input.series,
+		...(evap ? { evapSaturation: evap } : {}),
+		...(cond ? { condSaturation: cond } : {})
+	};
+}
+
+/** What the clues are read from, over given tripped and held starts. */
+export function contextOf(
+	evidence: SuspectEvidence,
+	starts: StartRecord[],
+	bad: StartRecord[],
+	held: StartRecord[]
+): Context {
+	const { input } = evidence;
+	const reader = traceReader(withSaturations(input));
+	const lastStart = starts.at(-1)?.startedAt ?? Infinity;
+	const beside = held.slice(-HELD_BESIDE);
+	return {
+		input,
+		nature: input.nature,
+		reader,
+		words: wordsFor(evidence.units ?? 'si'),
+		starts,
+		bad,
+		held,
+		stalls: starts.filter((start) => start.stall?.verdict === 'stall'),
+		maybeStalls: starts.filter((start) => start.stall?.verdict === 'cannot-tell'),
+		checks: evidence.checks ?? [],
+		changes: evidence.changes ?? [],
+		limit: (key) => limitAt(input.limits, key, lastStart)?.value ?? null,
+		figure: (key, of) => gather(of, (start) => start.figures[key]),
+		window: (trace, from, to, of) => gather(of, (start) => windowOf(reader, trace, start, from, to)),
+		tripMinute: (trace, earliest = 10) => {
+			const windows = bad.map((start) => ({ start, ...tripWindow(start) })).filter(({ to }) => to >= earliest);
+			const read = gather(
+				windows.map(({ start }) => start),
+				(start) => {
+					const window = tripWindow(start);
+					return windowOf(reader, trace, start, Math.max(window.from, Math.min(earliest, window.to - 1)), window.to);
+				}
+			);
+			const from = median(windows.map((window) => window.from));
+			const to = median(windows.map((window) => window.to));
+			if (from === null || to === null) return null;
+			const others = gather(beside, (start) => windowOf(reader, trace, start, from, to));
+			return besideOf(read, others?.values ?? []);
+		},
+		pressureGap: (of, from, to) => gather(of, (start) => pressureGap(input, reader, start, from, to)),
+		beside: (trace, from, to) => {
+			const others = gather(beside, (start) => windowOf(reader, trace, start, from, to));
+			return besideOf(
+				gather(bad, (start) => windowOf(reader, trace, start, from, to)),
+				others?.values ?? []
+			);
+		}
+	};
+}
+
+/** The context of a whole period: its tripped starts beside its held ones. */
+export function periodContext(evidence: SuspectEvidence): Context {
+	const starts = presentStarts(evidence);
+	const tripped = starts.filter(isTellingTrip);
+	const startUp = tripped.filter((start) => start.startupTrip);
+	const held = starts.filter((start) => start.outcome === 'held');
+	return contextOf(evidence, starts, startUp.length > 0 ? startUp : tripped, held);
+}

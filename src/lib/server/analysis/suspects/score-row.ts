@@ -1,0 +1,71 @@
+import { SIGNALS } from '$lib/model/signals';
+import type { Clue } from '$lib/model/suspect';
+import { listWords } from '../wording/quantity-words';
+import type { ClueRule, SuspectRow } from './clue-rule';
+import type { Context } from './context';
+
+/** A clue speaks from this strength on: less is noise and would only lengthen the page [ours]. */
+const LEAST_STRENGTH = 0.08;
+
+/** A row of the table judged on the evidence, before suspects are set against each other. */
+export type ScoredRow = {
+	row: SuspectRow;
+	clues: Clue[];
+	/** Sum of weights for, minus sum of weights against. */
+	score: number;
+	/** Greatest weight of a clue that discriminates. */
+	discriminator: number;
+	/** Signals that discriminating clues lack, with the weight they would have had. */
+	missing: Map<string, number>;
+};
+
+function missingClue(rule: ClueRule, weight: number, lacking: readonly string[]): Clue {
+	const names = lacking.map((id) => SIGNALS[id as keyof typeof SIGNALS]?.label ?? id);
+	const sentence =
+		lacking.length > 0
+			? `Cannot be read: the log has no ${listWords(names)}.`
+			: 'Cannot be read around these starts: too few readings, or no such start.';
+	return { key: rule.key, direction: 'missing', weight, sentence, figures: {}, starts: [] };
+}
+
+function readRule(rule: ClueRule, context: Context, applies: number): { clue: Clue | null; lacking: string[] } {
+	const share = applies * (rule.applies?.(context.nature) ?? 1);
+	if (share === 0) return { clue: null, lacking: [] };
+	const lacking = [...new Set(rule.needs.flatMap((trace) => context.reader.lacking(trace)))];
+	if (lacking.length > 0) return { clue: missingClue(rule, rule.weight * share, lacking), lacking };
+	const reading = rule.read(context);
+	if (reading === null) return { clue: missingClue(rule, rule.weight * share, []), lacking: [] };
+	if (!(reading.strength >= LEAST_STRENGTH)) return { clue: null, lacking: [] };
+	const clue: Clue = {
+		key: rule.key,
+		direction: rule.direction,
+		weight: rule.weight * share * reading.strength,
+		sentence: reading.sentence,
+		figures: reading.figures,
+		starts: reading.starts.map((start) => start.startedAt),
+		...(reading.show ? { show: reading.show } : {})
+	};
+	return { clue, lacking: [] };
+}
+
+/**
+ * Reads every clue of one row. A nature that is not known halves a clue; what does not apply is left out.
+ * @returns null when the suspect does not apply to the unit
+ */
+export function scoreRow(row: SuspectRow, context: Context): ScoredRow | null {
+	const applies = row.applies(context.nature);
+	if (applies === 0) return null;
+	const scored: ScoredRow = { row, clues: [], score: 0, discriminator: 0, missing: new Map() };
+	for (const rule of row.clues) {
+		const { clue, lacking } = readRule(rule, context, applies);
+		if (!clue) continue;
+		scored.clues.push(clue);
+		if (clue.direction === 'for') scored.score += clue.weight;
+		if (clue.direction === 'against') scored.score -= clue.weight;
+		if (clue.direction === 'for' && rule.discriminates)
+			scored.discriminator = Math.max(scored.discriminator, clue.weight);
+		if (rule.discriminates)
+			for (const id of lacking) scored.missing.set(id, Math.max(scored.missing.get(id) ?? 0, clue.weight));
+	}
+	return scored;
+}

@@ -1,0 +1,159 @@
+import { cautionsFor } from '../cautions';
+import { besideClue, checkClue, driftClue, figureClue } from '../clue-builders';
+import { always, type ClueRule, SILENT, type SuspectRow } from '../clue-rule';
+import type { Context } from '../context';
+import { restOffset } from '../rest-readings';
+import { ramp } from '../strength';
+import { latestCheck } from './shared';
+
+/** Usual upper end of the settled evaporator approach: 4 °F flooded, 10 °F direct expansion, from memory (sources). */
+function usualHigh(context: Context): number {
+	return context.limit('evapApproachUsualHigh') ?? (context.nature.evaporator === 'dx' ? 5.6 : 2.3);
+}
+
+const approachWide = (weight: number, discriminates: boolean): ClueRule =>
+	figureClue({
+		key: 'evaporator-approach-wide',
+		weight,
+		discriminates,
+		what: 'Settled evaporator approach',
+		quantity: 'temperatureDifference',
+		figure: 'evapApproach',
+		needs: ['evapApproach'],
+		of: (context) => context.starts,
+		strength: (value, context) => ramp(value, usualHigh(context) + 0.9, usualHigh(context) + 3),
+		show: { signals: ['evapWaterOut', 'evapSaturation', 'evapApproach'], from: 0, to: 3600 }
+	});
+const approachOrdinary = (weight: number): ClueRule =>
+	figureClue({
+		key: 'evaporator-approach-ordinary',
+		direction: 'against',
+		weight,
+		what: 'Settled evaporator approach is ordinary:',
+		quantity: 'temperatureDifference',
+		figure: 'evapApproach',
+		needs: ['evapApproach'],
+		of: (context) => context.starts,
+		strength: (value, context) => ramp(value, usualHigh(context) + 0.9, usualHigh(context))
+	});
+/** A starved shell has hot suction and discharge as well; a fouled one does not. */
+const superheatOrdinary = (weight: number): ClueRule =>
+	figureClue({
+		key: 'superheat-not-raised',
+		weight,
+		what: 'Settled superheat stays ordinary:',
+		quantity: 'temperatureDifference',
+		figure: 'superheat',
+		needs: ['superheat'],
+		of: (context) => context.starts,
+		strength: (value, context) => (context.nature.evaporator === 'dx' ? ramp(value, 10, 7) : ramp(value, 7, 4))
+	});
+const starved: ClueRule = besideClue({
+	key: 'superheat-high-instead',
+	direction: 'against',
+	weight: 0.35,
+	what: 'Superheat is high, as in a starved evaporator:',
+	quantity: 'temperatureDifference',
+	trace: 'superheat',
+	window: 'trip minute',
+	size: (context) => (context.nature.evaporator === 'dx' ? [10, 14] : [7, 11]),
+	shift: [3, 6]
+});
+const sensorExplains: ClueRule = {
+	key: 'saturation-off-at-rest-too',
+	direction: 'against',
+	weight: 0.6,
+	needs: ['evapSaturation', 'evapWaterOut'],
+	read: (context) => {
+		const rest = restOffset(context, 'logged');
+		if (!rest) return SILENT;
+		return {
+			strength: ramp(-rest.value, 0.8, 1.7),
+			sentence: `Saturation stands ${context.words.difference(rest.value)} off the water at rest too: the approach may be the sensor's.`,
+			figures: { offset: rest.value },
+			starts: rest.rests.slice(-5)
+		};
+	}
+};
+
+export const fouledEvaporator: SuspectRow = {
+	key: 'fouled-evaporator',
+	family: 'water',
+	applies: always,
+	clues: [
+		approachWide(0.55, true),
+		superheatOrdinary(0.15),
+		driftClue({
+			key: 'evaporator-approach-growing',
+			weight: 0.25,
+			what: 'Settled evaporator approach',
+			quantity: 'temperatureDifference',
+			figure: 'evapApproach',
+			needs: ['evapApproach'],
+			total: [0.5, 1.5]
+		}),
+		approachOrdinary(0.8),
+		starved,
+		sensorExplains
+	],
+	explainedBy: [
+		{ key: 'evap-saturation-sensor', share: 0.4 },
+		{ key: 'low-refrigerant-charge', share: 0.4 },
+		{ key: 'valve-underfeeding', share: 0.3 }
+	],
+	showsWithoutSymptom: true,
+	check: {
+		key: 'evaporator-approach',
+		title: 'Evaporator approach at matched load and flow; oil-logging test; water treatment record.',
+		tools: ['reference thermometer', 'calibrated gauge', 'differential gauge'],
+		cautions: cautionsFor('freeze', 'protections', 'refrigerant'),
+		unitOff: false
+	}
+};
+
+export const oilInEvaporator: SuspectRow = {
+	key: 'oil-in-evaporator',
+	family: 'oil',
+	applies: always,
+	clues: [
+		approachWide(0.2, false),
+		superheatOrdinary(0.05),
+		{
+			key: 'oil-added-and-gone',
+			direction: 'for',
+			weight: 0.5,
+			discriminates: true,
+			needs: [],
+			read: (context) => {
+				const added = context.changes.filter((change) => change.aimedAt.includes('low-oil'));
+				const low = latestCheck(context, (check) => (check.kind === 'oil-level' ? check : null));
+				const later = added.filter((change) => low !== null && low.at > change.at);
+				if (!low || low.lowMm === null || low.heightMm >= low.lowMm || later.length === 0) return SILENT;
+				return {
+					strength: 1,
+					sentence: 'Oil was added before, and the level is under its band again.',
+					figures: { heightMm: low.heightMm },
+					starts: []
+				};
+			}
+		},
+		checkClue('separator-level-low', 'for', (context) => {
+			const check = latestCheck(context, (one) => (one.kind === 'oil-level' ? one : null));
+			const approach = context.figure('evapApproach', context.starts);
+			if (!check || check.lowMm === null || check.heightMm >= check.lowMm || !approach) return null;
+			const wide = ramp(approach.value, usualHigh(context) + 0.5, usualHigh(context) + 2);
+			const sentence = `Separator level low while the evaporator approach is ${context.words.difference(approach.value)}.`;
+			return { at: check.at, half: check.indicative, strength: 0.6 * wide, sentence };
+		}),
+		approachOrdinary(0.6),
+		sensorExplains
+	],
+	explainedBy: [{ key: 'evap-saturation-sensor', share: 0.4 }],
+	check: {
+		key: 'oil-return',
+		title: 'Oil return, eductor and filter; oil sample; where is the oil?',
+		tools: ['sight glass', 'surface thermometer', 'sample bottle'],
+		cautions: cautionsFor('oilReading', 'refrigerant', 'hot'),
+		unitOff: true
+	}
+};

@@ -1,0 +1,376 @@
+import type { StartRecord } from '$lib/model/start';
+import { fisherExact } from '../../statistics/fisher-exact';
+import { median } from '../../statistics/median';
+import { countWords } from '../../wording/quantity-words';
+import { cautionsFor } from '../cautions';
+import { besideClue, driftClue, figureClue, telling } from '../clue-builders';
+import { always, type ClueRule, natureIs, SILENT, type SuspectRow } from '../clue-rule';
+import type { Context } from '../context';
+import { ramp } from '../strength';
+import { kindShare, tripsOfKind } from './shared';
+
+const waterCooled = natureIs('condenser', 'water');
+
+/** What cools the condenser at the start: its water, else outdoor air. */
+export function coolingAtStart(start: StartRecord): number | null {
+	return start.figures.condWaterInAtStart ?? start.figures.outdoorAtStart;
+}
+
+/** Under this the condenser is cold for most machines: 65 °F (18.3 °C) where the unit's own least is not given [practice]. */
+function coldBelow(context: Context): number {
+	return context.limit('condWaterLeast') ?? (context.nature.condenser === 'air' ? 8 : 18.3);
+}
+
+const coolingOf = (starts: readonly StartRecord[]) =>
+	starts.map((start) => coolingAtStart(start)).filter((value) => value !== null);
+
+const tripsWhenCold: ClueRule = {
+	key: 'trips-when-condenser-is-cold',
+	direction: 'for',
+	weight: 0.6,
+	discriminates: true,
+	needs: ['condWaterIn'],
+	read: (context) => {
+		const bad = median(coolingOf(context.bad));
+		const held = median(coolingOf(context.held));
+		if (bad === null) return null;
+		const cold = ramp(bad, coldBelow(context) + 1.5, coldBelow(context) - 1.5);
+		const apart = held === null ? 0.5 : ramp(bad - held, -0.7, -3);
+		return {
+			strength: cold * apart,
+			sentence: `Condenser water entered at ${context.words.temperature(bad)} at the tripped starts${held === null ? '' : ` and at ${context.words.temperature(held)} at the held ones`}.`,
+			figures: { tripped: bad, ...(held === null ? {} : { held }) },
+			starts: context.bad.slice(-5),
+			show: { signals: ['condWaterIn', 'condSaturation', 'lift'], from: -120, to: 300 }
+		};
+	}
+};
+
+/** Cold starts trip and warm ones hold, more than a shuffle would give. */
+const clustersByCold: ClueRule = {
+	key: 'trips-cluster-by-condenser-water',
+	direction: 'for',
+	weight: 0.25,
+	needs: ['condWaterIn'],
+	read: (context) => {
+		const edge = coldBelow(context) + 1;
+		const [a, b] = [coolingOf(context.bad), coolingOf(context.held)];
+		const cold = { bad: a.filter((x) => x < edge).length, held: b.filter((x) => x < edge).length };
+		if (a.length === 0 || b.length === 0) return SILENT;
+		const chance = fisherExact(cold.bad, a.length - cold.bad, cold.held, b.length - cold.held).greater;
+		return {
+			strength: ramp(Math.log10(chance), -1, -2.5),
+			sentence: `Under ${context.words.temperature(edge)} condenser water ${cold.bad} of ${countWords(cold.bad + cold.held, 'start')} tripped, above it ${a.length - cold.bad} of ${a.length + b.length - cold.bad - cold.held}.`,
+			figures: { coldTripped: cold.bad, coldHeld: cold.held, warmTripped: a.length - cold.bad },
+			starts: context.bad.slice(-5)
+		};
+	}
+};
+
+const tripsWhenWarm: ClueRule = {
+	key: 'trips-with-warm-condenser-too',
+	direction: 'against',
+	weight: 0.8,
+	needs: ['condWaterIn'],
+	read: (context) => {
+		const values = coolingOf(context.bad);
+		if (values.length === 0) return null;
+		const warm = values.filter((value) => value > coldBelow(context) + 2).length;
+		return {
+			strength: ramp(warm / values.length, 0.15, 0.5),
+			sentence: `${warm} of ${countWords(values.length, 'trip')} came with condenser water over ${context.words.temperature(coldBelow(context) + 2)}.`,
+			figures: { warm, trips: values.length },
+			starts: context.bad.slice(-5)
+		};
+	}
+};
+
+const liftSmall = (weight: number): ClueRule =>
+	besideClue({
+		key: 'lift-small',
+		weight,
+		discriminates: true,
+		what: 'Lift',
+		quantity: 'temperatureDifference',
+		trace: 'lift',
+		window: [20, 75],
+		size: [16, 10],
+		shift: [-2, -6]
+	});
+const differenceLate = (weight: number, discriminates: boolean): ClueRule =>
+	besideClue({
+		key: 'pressure-difference-late',
+		weight,
+		discriminates,
+		what: 'Pressure difference between condenser and evaporator',
+		quantity: 'pressureDifference',
+		trace: 'systemDelta',
+		window: [20, 75],
+		size: [200, 100],
+		shift: [-40, -120]
+	});
+
+export const coldCondenserWater: SuspectRow = {
+	key: 'cold-condenser-water',
+	family: 'high-side',
+	applies: always,
+	clues: [
+		tripsWhenCold,
+		clustersByCold,
+		liftSmall(0.3),
+		differenceLate(0.15, false),
+		tripsWhenWarm,
+		{
+			key: 'held-as-cold',
+			direction: 'against',
+			weight: 0.4,
+			needs: ['condWaterIn'],
+			read: (context) => {
+				const bad = median(coolingOf(context.bad));
+				const held = coolingOf(context.held);
+				if (bad === null || held.length < 3) return SILENT;
+				const cold = held.filter((value) => value <= bad + 0.5).length;
+				return {
+					strength: ramp(cold / held.length, 0.25, 0.5),
+					sentence: `${cold} of ${countWords(held.length, 'held start')} began with condenser water as cold as the tripped ones.`,
+					figures: { cold, held: held.length },
+					starts: context.held.slice(-5)
+				};
+			}
+		}
+	],
+	check: {
+		key: 'condenser-water-control',
+		title:
+			'Entering condenser water at the start; bypass valve or fan control; one repeat with warm water by a competent person.',
+		tools: ['reference thermometer', 'plant sequence trend'],
+		cautions: cautionsFor('repeat', 'freeze', 'protections'),
+		unitOff: false
+	}
+};
+
+export const lowPressureDifference: SuspectRow = {
+	key: 'low-pressure-difference',
+	family: 'high-side',
+	applies: always,
+	clues: [
+		{
+			key: 'difference-trips-before-it-is-built',
+			direction: 'for',
+			weight: 0.7,
+			discriminates: true,
+			needs: ['systemDelta'],
+			read: (context) => {
+				const share = kindShare(context, 'low-pressure-difference', 'oil-flow');
+				const trips = tripsOfKind(context, 'low-pressure-difference', 'oil-flow');
+				const last = median(
+					trips.map((start) => context.reader.last('systemDelta', (start.endedAt ?? 0) - 500, 90_000) ?? NaN)
+				);
+				if (share === 0) return SILENT;
+				if (last === null) return null;
+				return {
+					strength: ramp(share, 0.2, 0.6) * ramp(last, 220, 120),
+					sentence: `${countWords(trips.length, 'oil or difference trip')} with only ${context.words.pressureDifference(last)} between condenser and evaporator.`,
+					figures: { systemDelta: last, trips: trips.length },
+					starts: trips.slice(-5),
+					show: { signals: ['condPressure', 'evapPressure', 'oilPressure'], from: 0, to: 300 }
+				};
+			}
+		},
+		differenceLate(0.15, false),
+		{
+			key: 'difference-is-no-protection-here',
+			direction: 'against',
+			weight: 0.5,
+			needs: [],
+			read: (context) => {
+				const share = kindShare(context, 'low-pressure-difference', 'oil-flow');
+				if (context.bad.length === 0) return SILENT;
+				return {
+					strength: ramp(share, 0.2, 0),
+					sentence: 'No oil or difference protection stopped it.',
+					figures: { share },
+					starts: []
+				};
+			}
+		}
+	],
+	explainedBy: [{ key: 'starter-or-supply', share: 0.4 }],
+	check: {
+		key: 'difference-regulation',
+		title:
+			'Condenser-water regulating valve, bypass, fans and tower: how fast is the pressure difference built, against the manual?',
+		tools: ['two gauges', 'watch', 'the unit’s manual'],
+		cautions: cautionsFor('oilStop', 'protections', 'repeat'),
+		unitOff: false
+	}
+};
+
+const approachWide = (weight: number): ClueRule =>
+	figureClue({
+		key: 'condenser-approach-wide',
+		weight,
+		discriminates: true,
+		what: 'Settled condenser approach',
+		quantity: 'temperatureDifference',
+		figure: 'condApproach',
+		needs: ['condApproach'],
+		applies: waterCooled,
+		of: (context) => context.starts,
+		// 1–5 °F (0.6–2.8 K) at full load: from memory, see sources; look closer 2 °F above.
+		strength: (value, context) => {
+			const high = context.limit('condApproachUsualHigh') ?? 2.8;
+			return ramp(value, high + 0.6, high + 2.2);
+		},
+		show: { signals: ['condSaturation', 'condWaterOut', 'condApproach'], from: 0, to: 3600 }
+	});
+
+/** Trips on high condensing when the approach could not settle: read in the trip minute. */
+const approachAtTrip: ClueRule = besideClue({
+	key: 'condenser-approach-at-trip',
+	weight: 0.4,
+	discriminates: true,
+	what: 'Condenser approach',
+	quantity: 'temperatureDifference',
+	trace: 'condApproach',
+	window: 'trip minute',
+	earliest: 240,
+	applies: waterCooled,
+	size: [4.5, 8],
+	shift: [1.5, 4]
+});
+
+export const fouledCondenser: SuspectRow = {
+	key: 'fouled-condenser',
+	family: 'high-side',
+	applies: always,
+	clues: [
+		approachWide(0.6),
+		{
+			...approachAtTrip,
+			read: (context) => (kindShare(context, 'high-condensing') > 0.2 ? approachAtTrip.read(context) : SILENT)
+		},
+		{
+			key: 'high-condensing-trips',
+			direction: 'for',
+			weight: 0.3,
+			needs: ['condSaturation'],
+			read: (context) => {
+				const share = kindShare(context, 'high-condensing');
+				const trips = tripsOfKind(context, 'high-condensing');
+				const most = median(trips.map((start) => start.figures.maxCondSaturation ?? NaN));
+				return {
+					strength: ramp(share, 0.2, 0.6),
+					sentence: `${countWords(trips.length, 'trip')} on high condensing, at ${context.words.temperature(most)}.`,
+					figures: { trips: trips.length, ...(most === null ? {} : { condSaturation: most }) },
+					starts: trips.slice(-5),
+					show: { signals: ['condSaturation', 'condWaterIn', 'condWaterOut'], from: 0, to: 1800 }
+				};
+			}
+		},
+		driftClue({
+			key: 'condenser-approach-growing',
+			weight: 0.3,
+			what: 'Settled condenser approach',
+			quantity: 'temperatureDifference',
+			figure: 'condApproach',
+			needs: ['condApproach'],
+			total: [0.6, 1.8]
+		}),
+		figureClue({
+			key: 'condenser-approach-ordinary',
+			direction: 'against',
+			weight: 0.8,
+			what: 'Settled condenser approach is ordinary:',
+			quantity: 'temperatureDifference',
+			figure: 'condApproach',
+			needs: ['condApproach'],
+			of: (context) => context.starts,
+			strength: (value, context) =>
+				ramp(
+					value,
+					(context.limit('condApproachUsualHigh') ?? 2.8) + 0.6,
+					context.limit('condApproachUsualHigh') ?? 2.8
+				)
+		})
+	],
+	explainedBy: [{ key: 'non-condensables', share: 0.6 }],
+	showsWithoutSymptom: true,
+	check: {
+		key: 'condenser-approach',
+		title: 'Condenser approach at matched load and flow; condenser flow; a brush sample of the tubes.',
+		tools: ['reference thermometer', 'gauges', 'differential gauge'],
+		cautions: cautionsFor('remoteStart', 'protections', 'hot'),
+		unitOff: false
+	}
+};
+
+/** Condensing saturation over condenser water at rest, with its pump on. */
+function restGap(context: Context): { value: number; rests: StartRecord[] } | null {
+	const found: { start: StartRecord; value: number }[] = [];
+	for (const start of context.starts) {
+		if ((start.restSeconds ?? 0) < 1800) continue;
+		const [from, to] = [start.startedAt - 180_000, start.startedAt - 1];
+		const pump = context.reader.values('condPumpRun', from, to);
+		if (pump.length === 0 || pump.some((value) => value !== 1)) continue;
+		const saturation = context.reader.median('condSaturation', from, to);
+		const water = context.reader.median('condWaterIn', from, to);
+		if (saturation !== null && water !== null) found.push({ start, value: saturation - water });
+	}
+	const value = median(found.map((one) => one.value));
+	return value === null || found.length < 3 ? null : { value, rests: found.map((one) => one.start) };
+}
+
+const restTest = (direction: 'for' | 'against', weight: number): ClueRule => ({
+	key: direction === 'for' ? 'condenser-rest-test-positive' : 'condenser-rest-test-passed',
+	direction,
+	weight,
+	discriminates: direction === 'for',
+	needs: ['condSaturation', 'condWaterIn', 'condPumpRun'],
+	read: (context) => {
+		const rest = restGap(context);
+		if (!rest) return null;
+		return {
+			strength: direction === 'for' ? ramp(rest.value, 1.3, 2.5) : ramp(rest.value, 1, 0.4),
+			sentence: `At rest with the condenser pump on, condensing saturation stands ${context.words.difference(rest.value)} over the water, over ${countWords(rest.rests.length, 'rest')}.`,
+			figures: { gap: rest.value },
+			starts: rest.rests.slice(-5),
+			show: { signals: ['condSaturation', 'condWaterIn'], from: -1800, to: 0 }
+		};
+	}
+});
+
+export const nonCondensables: SuspectRow = {
+	key: 'non-condensables',
+	family: 'high-side',
+	applies: waterCooled,
+	clues: [
+		restTest('for', 0.8),
+		{ ...approachWide(0.2), discriminates: false },
+		{
+			key: 'discharge-hot-too',
+			direction: 'for',
+			weight: 0.15,
+			needs: ['dischargeSuperheat'],
+			read: (context) => {
+				const reading = context.figure('settledDischargeSuperheat', telling(context));
+				if (!reading) return null;
+				return {
+					strength: ramp(reading.value, 25, 35),
+					sentence: `Settled discharge superheat ${context.words.difference(reading.value)}.`,
+					figures: { value: reading.value },
+					starts: reading.starts
+				};
+			}
+		},
+		restTest('against', 0.8)
+	],
+	showsWithoutSymptom: true,
+	check: {
+		key: 'condenser-rest-test',
+		title: 'Rest test with condenser flow: saturation against the water. Purge by a certified person only.',
+		tools: ['calibrated gauge', 'reference thermometer', 'saturation table'],
+		cautions: cautionsFor('refrigerant', 'remoteStart'),
+		unitOff: true
+	}
+};

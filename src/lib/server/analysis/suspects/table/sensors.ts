@@ -1,0 +1,177 @@
+import type { FieldCheckFact } from '$lib/model/checks';
+import { countWords } from '../../wording/quantity-words';
+import { cautionsFor } from '../cautions';
+import { checkClue } from '../clue-builders';
+import { always, type ClueRule, SILENT, type SuspectRow } from '../clue-rule';
+import type { Context } from '../context';
+import { restOffset } from '../rest-readings';
+import { ramp } from '../strength';
+import { latestCheck } from './shared';
+
+/** From logs alone paired sensors speak only over 3 °F (1.7 K); on a bench 2 °F (1.1 K) is the tolerance (practice). */
+const LOG_TOLERANCE = 1.7;
+
+const pressureGap = (context: Context) =>
+	context.pressureGap(context.starts, 60, 900) ?? context.pressureGap(context.starts, 10, 120);
+
+/** The gap between pressure and saturation is a sensor's only when it is as large at light load as at full. */
+const gapIsSteady = (context: Context) => {
+	const early = context.pressureGap(context.starts, 0, 40);
+	const late = context.pressureGap(context.starts, 60, 900);
+	return !early || !late || Math.abs(early.value - late.value) < 1.2;
+};
+
+const saturationAgainstPressure: ClueRule = {
+	key: 'saturation-off-its-pressure',
+	direction: 'for',
+	weight: 1,
+	discriminates: true,
+	needs: ['evapSaturation', 'evapPressure'],
+	read: (context) => {
+		const gap = pressureGap(context);
+		if (!gap) return null;
+		return {
+			strength: gapIsSteady(context) ? ramp(Math.abs(gap.value), 0.9, 1.9) : 0,
+			sentence: `Logged saturation stands ${context.words.difference(-gap.value)} off that of the logged pressure, median of ${countWords(gap.starts.length, 'start')}.`,
+			figures: { gap: gap.value },
+			starts: gap.starts.slice(-5),
+			show: { signals: ['evapSaturation', 'evapPressure'], from: 0, to: 900 }
+		};
+	}
+};
+
+const saturationAtRest: ClueRule = {
+	key: 'saturation-off-the-water-at-rest',
+	direction: 'for',
+	weight: 0.9,
+	discriminates: true,
+	needs: ['evapSaturation', 'evapWaterOut'],
+	read: (context) => {
+		const rest = restOffset(context, 'logged');
+		if (!rest) return null;
+		const steady = ramp(rest.spread, 1, 0.4);
+		return {
+			strength: ramp(Math.abs(rest.value), LOG_TOLERANCE - 0.5, LOG_TOLERANCE + 0.5) * steady * (rest.proved ? 1 : 0.6),
+			sentence: `At rest the logged saturation stands ${context.words.difference(rest.value)} off the leaving water${rest.proved ? '' : ' (no pump or flow logged)'}, over ${countWords(rest.rests.length, 'rest')}.`,
+			figures: { offset: rest.value, spread: rest.spread, rests: rest.rests.length },
+			starts: rest.rests.slice(-5),
+			show: { signals: ['evapSaturation', 'evapWaterOut', 'evapWaterIn'], from: -1200, to: 0 }
+		};
+	}
+};
+
+const sensorCheck = (signals: readonly string[]) => (check: FieldCheckFact) =>
+	check.kind === 'sensor' && signals.includes(check.signal) ? check : null;
+
+const sensorFound = (signals: readonly string[], direction: 'for' | 'against', label: string): ClueRule =>
+	checkClue(`${label}-sensor-${direction === 'for' ? 'off' : 'good'}`, direction, (context) => {
+		const check = latestCheck(context, sensorCheck(signals));
+		if (!check) return null;
+		const off = Math.abs(check.displayed - check.reference);
+		const tolerance = check.toleranceK ?? context.limit('pairedSensorTolerance') ?? 1.11;
+		const strength =
+			direction === 'for' ? ramp(off, 0.9 * tolerance, 1.2 * tolerance) : ramp(off, tolerance, 0.8 * tolerance);
+		const sentence = `Displayed ${context.words.temperature(check.displayed)} against ${context.words.temperature(check.reference)} on the reference.`;
+		return { at: check.at, half: check.indicative, strength, sentence };
+	});
+
+export const evapSaturationSensor: SuspectRow = {
+	key: 'evap-saturation-sensor',
+	family: 'real',
+	applies: always,
+	clues: [
+		saturationAgainstPressure,
+		saturationAtRest,
+		{
+			...saturationAgainstPressure,
+			key: 'pressure-agrees',
+			direction: 'against',
+			weight: 0.5,
+			discriminates: false,
+			read: (context) => {
+				const gap = pressureGap(context);
+				if (!gap) return null;
+				// Two columns that agree to the hundredth are one reading shown twice: no second witness.
+				if (Math.max(...gap.values.map(Math.abs)) < 0.05) return SILENT;
+				return {
+					strength: ramp(Math.abs(gap.value), 0.8, 0.4),
+					sentence: `Saturation of the logged pressure agrees within ${context.words.difference(Math.abs(gap.value))}.`,
+					figures: { gap: gap.value },
+					starts: gap.starts.slice(-5)
+				};
+			}
+		},
+		{
+			...saturationAtRest,
+			key: 'agrees-at-rest',
+			direction: 'against',
+			weight: 0.5,
+			discriminates: false,
+			read: (context) => {
+				const rest = restOffset(context, 'logged');
+				if (!rest?.proved) return rest ? SILENT : null;
+				return {
+					strength: ramp(Math.abs(rest.value), 1, 0.5),
+					sentence: `At rest the logged saturation agrees with the water within ${context.words.difference(Math.abs(rest.value))}.`,
+					figures: { offset: rest.value },
+					starts: rest.rests.slice(-5)
+				};
+			}
+		},
+		sensorFound(['evapSaturation', 'evapPressure'], 'for', 'saturation'),
+		sensorFound(['evapSaturation', 'evapPressure'], 'against', 'saturation')
+	],
+	showsWithoutSymptom: true,
+	check: {
+		key: 'saturation-sensor',
+		title:
+			'Calibrated gauge and thermometer against the display at the same second; seating; resistance at a known temperature.',
+		tools: ['calibrated gauge', 'reference thermometer', 'saturation table', 'meter'],
+		cautions: cautionsFor('freeze', 'protections', 'refrigerant'),
+		unitOff: false
+	}
+};
+
+export const suctionTemperatureSensor: SuspectRow = {
+	key: 'suction-temperature-sensor',
+	family: 'real',
+	applies: always,
+	clues: [
+		{
+			key: 'superheat-alone-high',
+			direction: 'for',
+			weight: 0.45,
+			discriminates: true,
+			needs: ['superheat', 'dischargeSuperheat', 'evapApproach'],
+			read: (context) => {
+				const superheat = context.figure('superheat', context.held);
+				const discharge = context.figure('settledDischargeSuperheat', context.held);
+				const approach = context.figure('evapApproach', context.held);
+				if (!superheat || !discharge || !approach) return null;
+				const high = (context.limit('superheatUsualHigh') ?? (context.nature.evaporator === 'dx' ? 9 : 6)) + 1;
+				const wide = context.nature.evaporator === 'dx' ? 6 : 3;
+				return {
+					strength: Math.min(
+						ramp(superheat.value, high, high + 3),
+						ramp(discharge.value, 22, 16),
+						ramp(approach.value, wide, wide * 0.8)
+					),
+					sentence: `Settled superheat ${context.words.difference(superheat.value)} with ordinary discharge superheat (${context.words.difference(discharge.value)}) and approach (${context.words.difference(approach.value)}).`,
+					figures: { superheat: superheat.value, dischargeSuperheat: discharge.value, evapApproach: approach.value },
+					starts: superheat.starts.slice(-5),
+					show: { signals: ['superheat', 'dischargeSuperheat', 'evapApproach'], from: 0, to: 3600 }
+				};
+			}
+		},
+		sensorFound(['suctionTemp'], 'for', 'suction'),
+		sensorFound(['suctionTemp'], 'against', 'suction')
+	],
+	check: {
+		key: 'suction-sensor',
+		title:
+			'Strapped reference probe beside the suction sensor; well, paste and seating; resistance at a known temperature.',
+		tools: ['reference thermometer', 'insulation', 'meter'],
+		cautions: cautionsFor('hot', 'remoteStart'),
+		unitOff: false
+	}
+};
