@@ -12,7 +12,7 @@ export async function savePreferences(changed: Partial<PreferenceValues>): Promi
 	const answer = await fetch('/api/me', {
 		method: 'PATCH',
 		headers: { 'content-type': 'application/json' },
-		body: JSON.stringify({ preferences: changed })
+		body: JSON.stringify(changed)
 	});
 	if (!answer.ok) throw new Error(`preferences were not kept: ${answer.status}`);
 }

@@ -35,7 +35,7 @@ export type StrokeShape = {
 export const LEAST_WIDTH = 3;
 const LEAST_TRIP_BODY = 1.4;
 /** Under this a bar vanishes on a screen of one device pixel a CSS pixel. */
-const LEAST_BAR = 1.5;
+const LEAST_BAR = 2;
 const FADE_SLICES = 8;
 const FADE_END = 0.08;
 
