@@ -1,4 +1,4 @@
-import type { TitleCell } from '$lib/components/ui/TitleBlock.svelte';
+import type { TitleCell } from '$lib/components/ui/title-cell';
 import { METHOD_VERSION } from '$lib/model/circuit-input';
 import type { UnitSystem } from '$lib/model/quantities';
 import type { Site, Unit } from '$lib/model/wire/site-unit';
