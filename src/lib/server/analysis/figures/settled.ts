@@ -1,7 +1,6 @@
 import type { Interval } from '$lib/model/series';
 import type { FigureKey } from '$lib/model/start';
 import { median } from '../series/numbers';
-import { firstAtOrAfter, lastAtOrBefore } from '../series/search';
 import { localSpacing } from '../series/spacing';
 import { join2 } from '../series/derived';
 import { hasReadings, readingsWithin } from '../series/window';
@@ -47,13 +46,9 @@ export function settledStretch(context: FigureContext): Interval | Absence {
 	return longest ?? absence('no-settled-stretch', 'Capacity or leaving water never settled for 5 min.');
 }
 
+/** Readings must cover most of the window, or the slope is that of a corner of it. */
 function slowerThan(part: Sliding, rate: number, from: number, to: number): boolean {
-	const { t } = part.readings;
-	const first = firstAtOrAfter(t, from);
-	const end = lastAtOrBefore(t, to) + 1;
-	// Readings must cover most of the window, or the slope is that of a corner of it.
-	if ((t[end - 1] ?? NaN) - (t[first] ?? NaN) < 0.6 * (to - from)) return false;
-	const fit = part.fit(first, end);
+	const fit = part.fitWithin(from, to, 0.6);
 	return fit !== null && Math.abs(fit.slope) < rate;
 }
 

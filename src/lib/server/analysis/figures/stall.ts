@@ -2,11 +2,10 @@ import type { Interval, Series } from '$lib/model/series';
 import type { Stall } from '$lib/model/start';
 import { valueInForce } from '../series/hold';
 import { median, quantile, sampledQuantile } from '../series/numbers';
-import { firstAtOrAfter, lastAtOrBefore } from '../series/search';
-import { readingsWithin } from '../series/window';
+import { hasReadings, readingsWithin } from '../series/window';
 import { limitingOver } from './limiting';
 import type { FigureContext } from './sheet';
-import { goodStretches, sliding } from './sliding';
+import { goodStretches, sliding, type Sliding } from './sliding';
 
 /** Flat for 5 min; 5 points below demand; 2 °F above setpoint and dead band (method.md, stall). */
 const FLAT_MS = 300_000;
@@ -14,9 +13,9 @@ const SHORT_OF_DEMAND = 5;
 const WATER_ABOVE = 2 / 1.8;
 /** A controller's dead band about its setpoint, K; not logged anywhere [ours]. */
 const DEAD_BAND = 0.5;
-/** Flat: under 2 points of drift over 5 min, and nine tenths of the readings within 3 points [ours]. */
+/** Flat: under 2 points of drift over 5 min, readings within a standard deviation of one point of their mean [ours]. */
 const DRIFT = 2;
-const SPREAD = 3;
+const DEVIATION = 1;
 /** Within this many points of its maximum the capacity is full [ours]. */
 const FULL_BY = 3;
 /** A hold in the first minutes that goes on loading by itself is a start-up ramp, not a stall [ours]. */
@@ -33,25 +32,33 @@ export function findStall(context: FigureContext): Stall | null {
 	if (load === null) return null;
 	const from = context.startedAt + 180_000;
 	const to = context.stopped ? context.stop - 30_000 : context.run.lastOn;
-	const readings = readingsWithin(load, from, to);
-	if (readings.t.length < 2) return null;
-	const width = Math.max(FLAT_MS, 2000 * context.spacing);
-	const fits = sliding(readings);
+	const view = viewOf(context, load);
 	const full = (context.circuit.input.nature.maxCapacity ?? 100) - FULL_BY;
 	const held = (a: number, b: number) => {
-		const first = firstAtOrAfter(readings.t, a);
-		const end = lastAtOrBefore(readings.t, b) + 1;
-		if ((readings.t[end - 1] ?? NaN) - (readings.t[first] ?? NaN) < 0.75 * (b - a)) return false;
-		const fit = fits.fit(first, end);
-		if (fit === null || fit.mean >= full || Math.abs(fit.slope) * 300 > DRIFT) return false;
-		const values = readings.v.subarray(first, end);
-		if ((quantile(values, 0.95) ?? NaN) - (quantile(values, 0.05) ?? NaN) > SPREAD) return false;
-		return wanting(context, { from: a, to: b }, fit.mean) !== null;
+		const fit = view.load.fitWithin(a, b, 0.75);
+		if (fit === null || fit.mean >= full || Math.abs(fit.slope) * 300 > DRIFT || fit.deviation > DEVIATION)
+			return false;
+		return moreWanted(view, { from: a, to: b }, fit.mean);
 	};
+	const width = Math.max(FLAT_MS, 2000 * context.spacing);
 	const stretches = goodStretches(from, to, width, 30_000, held).filter((s) => !isRamp(context, load, s));
 	const stalls = stretches.map((stretch) => describe(context, load, stretch));
 	const rank = (stall: Stall) => (stall.verdict === 'stall' ? 1e12 : 0) + (stall.to - stall.from);
 	return stalls.reduce<Stall | null>((a, b) => (a !== null && rank(a) >= rank(b) ? a : b), null);
+}
+
+/** What the windows of a run are judged by. */
+type View = { load: Sliding; demand: Sliding | null; water: Sliding | null; setpoint: Series | undefined };
+
+function viewOf(context: FigureContext, load: Series): View {
+	const { demand, evapWaterOut, waterSetpoint } = context.circuit.map;
+	const ran = (series: Series) => sliding(readingsWithin(series, context.startedAt, context.run.lastOn));
+	return {
+		load: ran(load),
+		demand: hasReadings(demand) ? ran(demand) : null,
+		water: hasReadings(evapWaterOut) ? ran(evapWaterOut) : null,
+		setpoint: waterSetpoint
+	};
 }
 
 /** Capacity, %; where only speed is logged, % of the most speed seen. */
@@ -65,39 +72,27 @@ function loadPercent(context: FigureContext): Series | null {
 }
 
 /**
- * How more is wanted over a stretch at `level` %: by raw demand, or by warm water where no demand is logged or demand
- * came down to the capacity (it follows, so it is not raw). null when no more is wanted, or nothing tells.
+ * Is more wanted over a stretch at `level` %? By raw demand 5 points above it, or by warm water where no demand is
+ * logged or demand came down to the capacity (it had stood 10 points above while capacity never passed this level: it
+ * follows the capacity, so it is not raw).
  */
-function wanting(context: FigureContext, stretch: Interval, level: number): 'demand' | 'water' | null {
-	const demand = demandOver(context, stretch);
+function moreWanted(view: View, stretch: Interval, level: number): boolean {
+	const demand = view.demand?.fitWithin(stretch.from, stretch.to, 0.5) ?? null;
 	if (demand !== null) {
-		if (demand >= level + SHORT_OF_DEMAND) return 'demand';
-		if (!demandFollowed(context, stretch, level)) return null;
+		if (demand.mean >= level + SHORT_OF_DEMAND) return true;
+		const before = view.demand?.mostBefore(stretch.from) ?? -Infinity;
+		if (before < level + 10 || view.load.mostBefore(stretch.from) > level + 4) return false;
 	}
-	const above = waterAbove(context, stretch);
-	return above !== null && above > DEAD_BAND + WATER_ABOVE ? 'water' : null;
+	const water = view.water?.fitWithin(stretch.from, stretch.to, 0.5) ?? null;
+	if (water === null || view.setpoint === undefined) return false;
+	const setpoint = valueInForce('waterSetpoint', view.setpoint, stretch.to, 900);
+	return water.mean - setpoint > DEAD_BAND + WATER_ABOVE;
 }
 
 function demandOver(context: FigureContext, stretch: Interval): number | null {
 	const demand = context.circuit.map.demand;
 	if (demand === undefined) return null;
 	return median(readingsWithin(demand, stretch.from, stretch.to).v);
-}
-
-/** Demand stood well above this level before, while capacity never got there: it came down to the capacity. */
-function demandFollowed(context: FigureContext, stretch: Interval, level: number): boolean {
-	const { demand, capacity } = context.circuit.map;
-	if (demand === undefined || capacity === undefined) return false;
-	const before = (series: Series) => quantile(readingsWithin(series, context.startedAt, stretch.from).v, 0.98);
-	return (before(demand) ?? 0) >= level + 10 && (before(capacity) ?? Infinity) <= level + 3;
-}
-
-function waterAbove(context: FigureContext, stretch: Interval): number | null {
-	const { evapWaterOut, waterSetpoint } = context.circuit.map;
-	if (evapWaterOut === undefined || waterSetpoint === undefined) return null;
-	const water = median(readingsWithin(evapWaterOut, stretch.from, stretch.to).v);
-	const setpoint = valueInForce('waterSetpoint', waterSetpoint, stretch.to, 900);
-	return water === null || Number.isNaN(setpoint) ? null : water - setpoint;
 }
 
 /** An early hold after which the capacity rose by 5 points or more within 10 min: a timed loading ramp. */

@@ -22,10 +22,16 @@ export type StopEvidence = {
 
 /**
  * Reads the minutes before a stop at `stop` (ms, first off sample). `commandTells` says that the start command drops on
- * normal stops and not because the compressor stopped (see command.ts).
+ * normal stops and not because the compressor stopped (see command.ts). `spacing` in s.
  */
-export function readStop(circuit: Circuit, run: Run, stop: number, commandTells: boolean): StopEvidence {
-	const unloading = readUnloading(circuit, run, stop);
+export function readStop(
+	circuit: Circuit,
+	run: Run,
+	stop: number,
+	spacing: number,
+	commandTells: boolean
+): StopEvidence {
+	const unloading = readUnloading(circuit, run, stop, spacing);
 	const water = readWater(circuit, stop);
 	return {
 		commandFellAt: commandTells ? commandFall(circuit.input.series.startCommand, run, stop) : null,
@@ -58,11 +64,18 @@ export function commandFall(command: Series | undefined, run: Run, stop: number)
 /** Falls of this many points or more toward the minimum are an unloading [ours]. */
 const UNLOADING = 8;
 
-function readUnloading(circuit: Circuit, run: Run, stop: number): { unloaded: boolean | null; loaded: boolean | null } {
+function readUnloading(
+	circuit: Circuit,
+	run: Run,
+	stop: number,
+	spacing: number
+): { unloaded: boolean | null; loaded: boolean | null } {
 	const capacity = circuit.trace('capacity') ?? circuit.trace('speed');
 	if (capacity === undefined) return { unloaded: null, loaded: loadedByCurrent(circuit, run) };
 	const end = Math.min(run.lastOn, stop);
-	const readings = readingsWithin(capacity, Math.max(run.startedAt, end - 300_000), end);
+	// An unloading before a stop is brisk; what modulates over minutes follows the load.
+	const reach = Math.max(120_000, 2.5 * spacing * 1000);
+	const readings = readingsWithin(capacity, Math.max(run.startedAt, end - reach), end);
 	const last = readings.v.at(-1);
 	if (last === undefined) return { unloaded: null, loaded: loadedByCurrent(circuit, run) };
 	let most = last;

@@ -6,7 +6,7 @@ import type { Run } from '../starts/runs';
 import { freezePoint } from '../water/properties';
 import type { StopEvidence } from './evidence';
 
-type Hint = { kind: TripKind; sureness: number; reason: string };
+type Hint = { kind: TripKind; sureness: number; reason: string; past: boolean };
 
 /** Limits learned from the unit's own trips, by protection; null = none learned. */
 export type LearnedLimits = Partial<Record<Watch['protection'], number>>;
@@ -34,6 +34,18 @@ export function inferTrip(
 	return { at: stop, kind: hint.kind, basis: 'inferred', text: null, sureness, reason: hint.reason };
 }
 
+/**
+ * Was a protective quantity past its configured limit in the last 30 s (a spacing and a half where coarser) before a
+ * stop? Then a stop that looks normal may still be a trip, and cannot be called either.
+ */
+export function wasPastLimit(circuit: Circuit, run: Run, stop: number, spacing: number): boolean {
+	return WATCHES.some((watch) => {
+		const set = watch.limits.some((key) => circuit.limit(key, run.startedAt) !== null);
+		const hint = set ? hintOf(circuit, run, stop, spacing, watch, {}) : null;
+		return hint !== null && hint.past;
+	});
+}
+
 /** The flow proof was gone while it still ran. */
 function flowHint(circuit: Circuit, run: Run): Hint | null {
 	for (const [proof, name] of [
@@ -45,7 +57,12 @@ function flowHint(circuit: Circuit, run: Run): Hint | null {
 		const readings = readingsWithin(series, run.startedAt, run.lastOn);
 		const last = readings.v.at(-1);
 		if (last === 0 && readings.v.some((v) => v === 1) && run.lastOn - (readings.t.at(-1) ?? 0) <= 60_000) {
-			return { kind: 'loss-of-water-flow', sureness: 0.85, reason: `${name} flow proof was lost before the stop.` };
+			return {
+				kind: 'loss-of-water-flow',
+				sureness: 0.85,
+				reason: `${name} flow proof was lost before the stop.`,
+				past: true
+			};
 		}
 	}
 	return null;
@@ -91,11 +108,11 @@ function hintOf(
 	const distance = Array.from(readings.v, (v) => watch.side * (v - limit.value));
 	const least = distance.reduce((a, b) => Math.min(a, b), Infinity);
 	const say = (how: string) => `${capital(watch.words)} ${how} ${limit.words} at the stop.`;
-	if (least <= 0) return { kind: watch.kind, sureness: limit.sureness, reason: say('was past') };
+	if (least <= 0) return { kind: watch.kind, sureness: limit.sureness, reason: say('was past'), past: true };
 	if (run.lastOn < from) return null;
 	const ahead = runningTo(series, run, spacing, (v) => watch.side * (v - limit.value));
 	if (ahead === null || ahead > 0) return null;
-	return { kind: watch.kind, sureness: limit.sureness - 0.2, reason: say('was running to') };
+	return { kind: watch.kind, sureness: limit.sureness - 0.2, reason: say('was running to'), past: false };
 }
 
 /** Distance to the limit one spacing after the last running reading, at the slope of the last 30 s or two readings. */

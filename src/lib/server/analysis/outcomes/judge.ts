@@ -14,6 +14,8 @@ export type Case = {
 	evidence: StopEvidence | null;
 	inferred: Trip | null;
 	onSchedule: boolean;
+	/** A protective quantity was past its configured limit at the stop. */
+	pastLimit: boolean;
 };
 
 export type Verdict = { outcome: Outcome; trip: Trip | null; reason: string };
@@ -52,6 +54,9 @@ export function judge(one: Case): Verdict {
 	const normal = normalStop(one);
 	if (lasted >= one.window) {
 		return told('held', normal ?? 'It outlived the start-up window and nothing shows a trip.');
+	}
+	if (normal !== null && one.pastLimit && evidence?.commandFellAt === null) {
+		return told('unclear', 'It stopped as if normally, but a protective quantity was past its limit.');
 	}
 	if (normal !== null) return told('called-off', normal);
 	return told('unclear', 'It stopped inside the start-up window and the log cannot say why.');

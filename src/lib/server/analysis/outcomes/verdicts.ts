@@ -6,7 +6,7 @@ import { correctedVerdict } from '../starts/corrections';
 import { latchedAt, type Activation } from './activations';
 import { commandTells } from './command';
 import { readStop } from './evidence';
-import { inferTrip, type LearnedLimits } from './inferred';
+import { inferTrip, wasPastLimit, type LearnedLimits } from './inferred';
 import { judge, type Verdict } from './judge';
 import { matchAlarms } from './match';
 import { onSchedule, siteClock } from './schedule';
@@ -28,7 +28,9 @@ export function judgeStarts(
 		circuit.runs.map((run) => alarms.get(run.startedAt) !== undefined)
 	);
 	const alarmFor = (context: FigureContext) => alarms.get(context.observedAt) ?? null;
-	const evidence = contexts.map((c) => (c.run.end === 'off' ? readStop(circuit, c.run, c.stop, tells) : null));
+	const evidence = contexts.map((c) =>
+		c.run.end === 'off' ? readStop(circuit, c.run, c.stop, c.spacing, tells) : null
+	);
 	const scheduled = scheduleMarks(circuit, contexts);
 	const verdict = (i: number, learned: LearnedLimits | null): Verdict => {
 		const context = contexts[i];
@@ -43,7 +45,12 @@ export function judgeStarts(
 			mayLackRecord(circuit, context.stop, activations);
 		const inferred = mayInfer ? inferTrip(circuit, context.run, context.stop, seen, context.spacing, learned) : null;
 		const one = { run: context.run, window: context.window, logTo: circuit.logTo, alarm, evidence: seen, inferred };
-		return correctedVerdict(judge({ ...one, onSchedule: scheduled[i] === true }), context.correction, context.stop);
+		const pastLimit = seen !== null && wasPastLimit(circuit, context.run, context.stop, context.spacing);
+		return correctedVerdict(
+			judge({ ...one, onSchedule: scheduled[i] === true, pastLimit }),
+			context.correction,
+			context.stop
+		);
 	};
 	const first = contexts.map((_, i) => verdict(i, null));
 	const brackets = learnBrackets(contexts, first);
