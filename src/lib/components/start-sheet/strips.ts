@@ -1,0 +1,228 @@
+import type { Quantity } from '$lib/model/quantities';
+import type { TraceKey } from '$lib/model/signals';
+import type { LimitKey, UnitNature } from '$lib/model/unit';
+
+/** A limit line of a strip. `edge` marks the side that is out of bounds; `trip` limits are inked as such. */
+export type StripLimit = {
+	key: LimitKey;
+	name: string;
+	kind: 'trip' | 'usual';
+	edge: 'below' | 'above';
+	always?: boolean;
+};
+
+export type StripTrace = {
+	key: TraceKey;
+	/** As on the label, in few words. */
+	label: string;
+	/** Drawn thin, as a companion of the strip's own traces. */
+	faint?: boolean;
+};
+
+/** One strip of the start sheet. */
+export type StripSpec = {
+	key: string;
+	name: string;
+	quantity: Quantity;
+	/** px at a wide sheet and on a phone */
+	height: number;
+	phoneHeight: number;
+	traces: StripTrace[];
+	/** Read out at the cursor without a line of their own. */
+	readOnly: StripTrace[];
+	limits: StripLimit[];
+	/** A usual range, drawn as a wash between two limits. */
+	band?: { low: LimitKey; high: LimitKey; name: string };
+	/** An axis that does not follow the readings, in stored units. */
+	fixed?: { low: number; high: number };
+	/** The least span worth drawing, stored units. */
+	least: number;
+	/** Kept without any of its signals, saying what it would show; the others leave when they have nothing. */
+	wouldShow: string | null;
+};
+
+const trace = (key: TraceKey, label: string, faint = false): StripTrace =>
+	faint ? { key, label, faint } : { key, label };
+const lower = (key: LimitKey, name: string, kind: StripLimit['kind'] = 'trip', always = false): StripLimit => ({
+	key,
+	name,
+	kind,
+	edge: 'below',
+	always
+});
+const upper = (key: LimitKey, name: string, kind: StripLimit['kind'] = 'trip'): StripLimit => ({
+	key,
+	name,
+	kind,
+	edge: 'above'
+});
+
+/** What the achieved loading is called on this machine. */
+function capacityLabel(nature: UnitNature): string {
+	if (nature.capacityControl === 'slide') return 'slide';
+	if (nature.capacityControl === 'vanes') return 'vanes';
+	return nature.capacityControl === 'steps' ? 'steps' : 'capacity';
+}
+
+/** The strips of a start sheet, top to bottom. The strip that tells most of a start gets the height. */
+export function stripsFor(nature: UnitNature): StripSpec[] {
+	const air = nature.condenser === 'air' || nature.condenser === 'evaporative';
+	return [
+		{
+			key: 'loading',
+			name: 'Loading',
+			quantity: 'percent',
+			height: 70,
+			phoneHeight: 62,
+			traces: [trace('demand', 'demand'), trace('capacity', capacityLabel(nature))],
+			readOnly: [trace('speed', 'speed')],
+			limits: [],
+			band: { low: 'startCapacityUsualLow', high: 'startCapacityUsualHigh', name: 'usual at start' },
+			fixed: { low: 0, high: 108 },
+			least: 100,
+			wouldShow: 'how far the compressor was loaded in the first seconds, and whether it stalled'
+		},
+		{
+			key: 'low-side',
+			name: 'Low side',
+			quantity: 'temperature',
+			height: 118,
+			phoneHeight: 128,
+			traces: [
+				trace('evapWaterIn', 'entering water', true),
+				trace('evapWaterOut', 'leaving water'),
+				trace('evapSaturation', 'evap. saturation')
+			],
+			readOnly: [trace('evapApproach', 'approach'), trace('evapDelta', 'water difference')],
+			limits: [
+				lower('evapSaturationCutout', 'cut-out', 'trip', true),
+				lower('leavingWaterCutout', 'leaving-water cut-out'),
+				lower('freezeLimit', 'freeze limit')
+			],
+			least: 8,
+			wouldShow: 'how far the evaporator fell, against the water that leaves it'
+		},
+		{
+			key: 'condenser',
+			name: 'Condenser',
+			quantity: 'temperature',
+			height: 130,
+			phoneHeight: 128,
+			traces: [
+				trace('evapSaturation', 'evap. saturation', true),
+				air ? trace('condAirIn', 'air entering') : trace('condWaterIn', 'entering'),
+				...(air ? [] : [trace('condWaterOut', 'leaving')]),
+				trace('condSaturation', 'condensing')
+			],
+			readOnly: [trace('condApproach', 'approach')],
+			limits: [upper('condSaturationCutout', 'condensing cut-out'), lower('condWaterLeast', 'least entering', 'usual')],
+			least: 8,
+			wouldShow: 'whether condensing rose with the load, and how cold the condenser was'
+		},
+		{
+			key: 'lift',
+			name: 'Lift',
+			quantity: 'temperatureDifference',
+			height: 62,
+			phoneHeight: 72,
+			traces: [trace('lift', 'lift')],
+			readOnly: [],
+			limits: [],
+			least: 10,
+			wouldShow: 'how soon the compressor built lift'
+		},
+		{
+			key: 'oil',
+			name: 'Oil',
+			quantity: 'temperature',
+			height: 46,
+			phoneHeight: 62,
+			traces: [trace('oilTemp', 'oil')],
+			readOnly: [],
+			limits: [upper('oilTempCutout', 'oil cut-out'), upper('oilTempUsualHigh', 'usual upper end', 'usual')],
+			least: 10,
+			wouldShow: 'how warm the oil was'
+		},
+		{
+			key: 'margin',
+			name: 'Margin',
+			quantity: 'temperatureDifference',
+			height: 44,
+			phoneHeight: 62,
+			traces: [trace('margin', 'margin')],
+			readOnly: [],
+			limits: [
+				lower('marginCutout', 'oil margin cut-out'),
+				lower('lineRestrictionMargin', 'line restriction below', 'usual')
+			],
+			least: 10,
+			wouldShow: 'how far the oil stood above condensing'
+		},
+		{
+			key: 'valve',
+			name: 'Valve',
+			quantity: 'percent',
+			height: 42,
+			phoneHeight: 62,
+			traces: [trace('valvePosition', 'valve')],
+			readOnly: [],
+			limits: [],
+			fixed: { low: 0, high: 105 },
+			least: 100,
+			wouldShow: 'whether the valve opened to the dive, lagged, or stood at its limit'
+		},
+		{
+			key: 'superheat',
+			name: 'Superheat',
+			quantity: 'temperatureDifference',
+			height: 58,
+			phoneHeight: 72,
+			traces: [trace('dischargeSuperheat', 'discharge superheat'), trace('superheat', 'superheat')],
+			readOnly: [trace('subcooling', 'subcooling')],
+			limits: [],
+			least: 6,
+			wouldShow: 'whether the evaporator was starved or flooded'
+		},
+		{
+			key: 'pressures',
+			name: 'Pressures',
+			quantity: 'pressureDifference',
+			height: 54,
+			phoneHeight: 62,
+			traces: [trace('systemDelta', 'system difference'), trace('oilNet', 'net oil pressure')],
+			readOnly: [],
+			limits: [lower('oilNetCutout', 'oil pressure cut-out'), lower('systemDeltaCutout', 'least difference')],
+			least: 50,
+			wouldShow: null
+		},
+		{
+			key: 'flow',
+			name: 'Flow',
+			quantity: 'flow',
+			height: 46,
+			phoneHeight: 62,
+			traces: [trace('condFlow', 'condenser flow'), trace('evapFlow', 'evaporator flow')],
+			readOnly: [],
+			limits: [],
+			least: 5,
+			wouldShow: null
+		},
+		{
+			key: 'current',
+			name: 'Current',
+			quantity: 'current',
+			height: 48,
+			phoneHeight: 62,
+			traces: [trace('motorCurrent', 'motor current')],
+			readOnly: [trace('power', 'power')],
+			limits: [],
+			least: 20,
+			wouldShow: 'the load as the motor felt it'
+		}
+	];
+}
+
+/** Every signal and derived quantity that the strips ask for, once each. */
+export function tracesOf(strips: readonly StripSpec[]): TraceKey[] {
+	return [...new Set(strips.flatMap((strip) => [...strip.traces, ...strip.readOnly].map(({ key }) => key)))];
+}
