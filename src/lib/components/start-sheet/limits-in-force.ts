@@ -1,0 +1,18 @@
+import { LIMIT_KEYS } from '$lib/model/unit';
+import type { Unit } from '$lib/model/wire/site-unit';
+import type { LimitsInForce } from './strip-domain';
+
+/** The unit's limits as they stood at an instant (ms UTC): of each, the value with the latest `validFrom` not after it. */
+export function limitsInForce(limits: Unit['limits'], at: number): LimitsInForce {
+	const inForce: LimitsInForce = {};
+	for (const key of LIMIT_KEYS) {
+		let latest = -Infinity;
+		for (const { value, provenance, validFrom, note } of limits[key] ?? []) {
+			const from = validFrom === null ? -Infinity : Date.parse(validFrom);
+			if (from > at || from < latest) continue;
+			latest = from;
+			inForce[key] = { value, provenance, validFrom: from, ...(note === undefined ? {} : { note }) };
+		}
+	}
+	return inForce;
+}
