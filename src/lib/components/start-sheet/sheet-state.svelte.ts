@@ -16,6 +16,10 @@ export class SheetState implements SheetFacts {
 	main = $state.raw<StartTraces | null>(null);
 	/** The held start underneath. */
 	ghost = $state.raw<StartTraces | null>(null);
+	/** What the server says of the held start. */
+	ghostData = $state.raw<StartSheet | null>(null);
+	/** Label widths are true from here on. */
+	fontsReady = $state(false);
 	/** Further starts on the same axis. */
 	further = $state.raw<StartTraces[]>([]);
 	/** What went wrong on the way, in the server's words. */

@@ -22,6 +22,8 @@ export type SheetFacts = {
 	units: UnitSystem;
 	air: number;
 	firstMover: FirstMover | null;
+	/** Changes once, when the fonts have come and widths must be measured again. */
+	fontsReady: boolean;
 	stall: { from: number; to: number; levelPct: number; demandPct: number | null } | null;
 	tripSeconds: number | null;
 	tripLabel: string;
@@ -135,6 +137,7 @@ export function layOutStrip(
 	height: number,
 	first: boolean
 ): StripLayout | null {
+	void facts.fontsReady;
 	const { main, others, limits, units, air } = facts;
 	if (!main) return null;
 	const shown = spec.traces.map(({ key }) => main.traces.get(key)).find((trace) => trace !== undefined);
