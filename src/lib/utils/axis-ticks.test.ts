@@ -32,7 +32,7 @@ describe('timeTicks', () => {
 describe('valueTicks', () => {
 	it('takes round steps, four ticks at most', () => {
 		const { ticks } = valueTicks([22.8, 66.1]);
-		expect(ticks).toEqual([40, 60]);
+		expect(ticks).toEqual([30, 40, 50, 60]);
 		expect(valueTicks([0, 104]).ticks).toEqual([0, 50, 100]);
 		expect(valueTicks([-23, 26]).ticks.length).toBeLessThanOrEqual(4);
 	});

@@ -57,12 +57,15 @@ export function valueTicks(values: Iterable<number>, most = 4, least = 1): Value
 	if (low > high) [low, high] = [0, 1];
 	const lack = least - (high - low);
 	if (lack > 0) [low, high] = [low - lack / 2, high + lack / 2];
-	const raw = (high - low) / Math.max(1, most - 1);
-	const power = 10 ** Math.floor(Math.log10(raw));
-	const step = ([1, 2, 5, 10].find((n) => n * power >= raw - 1e-12) ?? 10) * power;
 	const pad = (high - low) * 0.06;
+	const [bottom, top] = [low - pad, high + pad];
+	const count = (step: number) => Math.floor(top / step + 1e-9) - Math.ceil(bottom / step - 1e-9) + 1;
+	let power = 10 ** Math.floor(Math.log10((top - bottom) / most));
+	let step = 0;
+	// The finest round step that keeps within the ticks allowed.
+	for (; step === 0; power *= 10) step = [1, 2, 5].map((n) => n * power).find((n) => count(n) <= most) ?? 0;
 	const ticks: number[] = [];
-	for (let k = Math.ceil((low - pad) / step - 1e-9); k * step <= high + pad + 1e-9 && ticks.length < most; k++)
+	for (let k = Math.ceil(bottom / step - 1e-9); k * step <= top + 1e-9 && ticks.length < most; k++)
 		ticks.push(Number((k * step).toPrecision(12)));
-	return { low: low - pad, high: high + pad, ticks, step };
+	return { low: bottom, high: top, ticks, step };
 }

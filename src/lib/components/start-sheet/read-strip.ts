@@ -18,6 +18,9 @@ export type Reading = {
 export type ReadLine = {
 	key: TraceKey;
 	label: string;
+	short: string;
+	/** A companion of the strip's own traces. */
+	faint: boolean;
 	/** Has a line of its own on the strip. */
 	drawn: boolean;
 	reading: Reading | null;
@@ -62,7 +65,7 @@ export function readStrip(
 ): ReadLine[] {
 	const lines: ReadLine[] = [];
 	const drawnKeys = new Set(spec.traces.map(({ key }) => key));
-	for (const { key, label, faint } of [...spec.traces, ...spec.readOnly]) {
+	for (const { key, label, short, faint } of [...spec.traces, ...spec.readOnly]) {
 		// A companion line from another strip is read out there.
 		if (faint && spec.key === 'condenser') continue;
 		if (!main.traces.has(key) && !held?.traces.has(key)) continue;
@@ -70,6 +73,8 @@ export function readStrip(
 		lines.push({
 			key,
 			label,
+			short: short ?? label,
+			faint: faint ?? false,
 			drawn: drawnKeys.has(key),
 			reading,
 			held: held ? readTrace(held, key, seconds, system, air) : null,

@@ -126,7 +126,9 @@ export function labelStrip(input: LabelInput): StripLabel[] {
 		height: input.height,
 		traces: [...input.drawing.traces.map(({ extents }) => extents), ...standing(input)],
 		uprights: input.uprights,
-		levels: input.drawing.limits.map(({ y }) => y)
+		levels: input.drawing.limits.map(({ y }) => y),
+		// Words on a hatch are hard to read, and say nothing of what is not there.
+		taken: input.drawing.gaps.map(({ x, width }) => ({ x, y: 0, width, height: input.height }))
 	};
 	const placed = placeLabels(wishes, ground);
 	return wishes.flatMap(({ key, text, ink, weight, provenance }) => {

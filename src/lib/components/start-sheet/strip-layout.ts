@@ -177,7 +177,7 @@ export function layOutStrip(
 		dimensions: dimensions.filter(({ key }) => words.has(key)),
 		heldBands: heldBands(spec, facts, scale, domain),
 		stall: stallHatch(spec, facts, scale, domain),
-		ring,
+		ring: words.has('ring') ? ring : null,
 		limitFrom: Math.max(0, startX),
 		tick: (value) => formatNumber(value, Number.isInteger(value) ? 0 : 1),
 		gapWords: (minutes) => formatDuration(minutes * 60),

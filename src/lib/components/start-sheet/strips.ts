@@ -15,6 +15,8 @@ export type StripTrace = {
 	key: TraceKey;
 	/** As on the label, in few words. */
 	label: string;
+	/** For the read-out of a phone, where the label is too long. */
+	short?: string;
 	/** Drawn thin, as a companion of the strip's own traces. */
 	faint?: boolean;
 };
@@ -90,8 +92,8 @@ export function stripsFor(nature: UnitNature): StripSpec[] {
 			phoneHeight: 128,
 			traces: [
 				trace('evapWaterIn', 'entering water', true),
-				trace('evapWaterOut', 'leaving water'),
-				trace('evapSaturation', 'evap. saturation')
+				{ ...trace('evapWaterOut', 'leaving water'), short: 'water out' },
+				{ ...trace('evapSaturation', 'evap. saturation'), short: 'evap. sat.' }
 			],
 			readOnly: [trace('evapApproach', 'approach'), trace('evapDelta', 'water difference')],
 			limits: [
@@ -177,7 +179,7 @@ export function stripsFor(nature: UnitNature): StripSpec[] {
 			quantity: 'temperatureDifference',
 			height: 58,
 			phoneHeight: 72,
-			traces: [trace('dischargeSuperheat', 'discharge superheat'), trace('superheat', 'superheat')],
+			traces: [trace('dischargeSuperheat', 'discharge'), trace('superheat', 'superheat')],
 			readOnly: [trace('subcooling', 'subcooling')],
 			limits: [],
 			least: 6,
