@@ -32,6 +32,8 @@ export class SheetView {
 	narrow = $state(false);
 	/** null: home. */
 	window = $state.raw<TimeWindow | null>(null);
+	/** The stretch being dragged with the mouse, px. */
+	stretch = $state.raw<{ x: number; width: number } | null>(null);
 	/** Seconds from the start. */
 	cursor = $state(0);
 	ghost = $state<string | null>(null);

@@ -7,8 +7,6 @@ const TWITCH = 6;
 
 /** What hands do on the paper: pointers, wheel and pinch, turned into cursor and zoom. */
 export class PaperHand {
-	/** The stretch being dragged with the mouse, px. */
-	stretch = $state.raw<{ x: number; width: number } | null>(null);
 	readonly #pointers = new Map<number, number>();
 	#dragFrom: number | null = null;
 	#panning = false;
@@ -65,7 +63,7 @@ export class PaperHand {
 			return;
 		}
 		const width = Math.abs(x - this.#dragFrom);
-		this.stretch = width < TWITCH ? null : { x: Math.min(x, this.#dragFrom), width };
+		view.stretch = width < TWITCH ? null : { x: Math.min(x, this.#dragFrom), width };
 	}
 
 	#pinchMove(): void {
@@ -78,14 +76,14 @@ export class PaperHand {
 
 	up(event: PointerEvent): void {
 		const x = this.#x(event);
-		if (this.stretch && this.#dragFrom !== null) this.sheet.view.zoomBetween(this.#dragFrom, x);
+		if (this.sheet.view.stretch && this.#dragFrom !== null) this.sheet.view.zoomBetween(this.#dragFrom, x);
 		this.cancel(event);
 	}
 
 	cancel(event: PointerEvent): void {
 		this.#pointers.delete(event.pointerId);
 		this.#dragFrom = null;
-		this.stretch = null;
+		this.sheet.view.stretch = null;
 	}
 
 	/** Wheel: zoom about the pointer; sideways or with shift: move the paper. At home, scrolling down moves the page. */
