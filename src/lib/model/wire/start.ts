@@ -80,6 +80,7 @@ export const clueSchema = z.object({
 export const suspectSchema = z
 	.object({
 		key: z.string(),
+		name: z.string(),
 		rank: z.number().int(),
 		standing: z.enum(['points-to', 'fits', 'speaks-against', 'cannot-tell']),
 		clues: z.array(clueSchema),

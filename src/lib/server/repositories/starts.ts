@@ -60,15 +60,18 @@ export async function replaceStarts(
 	tx: Tx,
 	organisationId: string,
 	unitId: string,
-	records: readonly StartRecord[]
+	made: readonly { record: StartRecord; extras: StartRow['extras'] }[]
 ): Promise<void> {
 	const before = await tx
 		.select({ id: starts.id, circuit: starts.circuit, startedAt: starts.startedAt })
 		.from(starts)
 		.where(eq(starts.unitId, unitId));
-	const ids = keepIds(before, records);
+	const ids = keepIds(
+		before,
+		made.map(({ record }) => record)
+	);
 	await tx.delete(starts).where(eq(starts.unitId, unitId));
-	const rows = records.map((record, i) => ({
+	const rows = made.map(({ record, extras }, i) => ({
 		organisationId,
 		...(ids[i] ? { id: ids[i] } : {}),
 		unitId,
@@ -76,7 +79,8 @@ export async function replaceStarts(
 		startedAt: record.startedAt,
 		endedAt: record.endedAt,
 		outcome: record.outcome,
-		record
+		record,
+		extras
 	}));
 	for (let i = 0; i < rows.length; i += 200) await tx.insert(starts).values(rows.slice(i, i + 200));
 }

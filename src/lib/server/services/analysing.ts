@@ -1,14 +1,15 @@
 import { METHOD_VERSION, type CircuitAnalysis, type CircuitInput, type TripWord } from '$lib/model/circuit-input';
 import type { UnitSystem } from '$lib/model/quantities';
 import type { Series } from '$lib/model/series';
+import type { StartRecord } from '$lib/model/start';
 import type { SuspectsResult } from '$lib/model/suspect';
 import { analyseCircuit } from '$lib/server/analysis/analyse-circuit';
-import { evaluateSuspects } from '$lib/server/analysis/suspects';
+import { cluesOfStart, evaluateSuspects, type SuspectEvidence } from '$lib/server/analysis/suspects';
 import { factsOf } from './facts';
 import { listTripWords, listVisitSpans } from '$lib/server/repositories/circle';
 import { listLogs, updateLog, withLock } from '$lib/server/repositories/logs';
 import { findSite, findUnit, listLimits, listUnits, type SiteRow, type UnitRow } from '$lib/server/repositories/plant';
-import { listCorrections, replaceStarts, saveCircuitResult } from '$lib/server/repositories/starts';
+import { listCorrections, replaceStarts, saveCircuitResult, type StartRow } from '$lib/server/repositories/starts';
 import { withOrganisation, type Tx } from '$lib/server/repositories/transaction';
 import { limitsOf } from './plant-shapes';
 import { loadEvents, loadSeries, loadTexts } from './series';
@@ -63,7 +64,19 @@ export async function circuitInputs(tx: Tx, unit: UnitRow, site: SiteRow): Promi
 	return inputs;
 }
 
-type Computed = { analysis: CircuitAnalysis; suspects: Record<UnitSystem, SuspectsResult> };
+type Made = { record: StartRecord; extras: StartRow['extras'] };
+type Computed = {
+	made: Made[];
+	analysis: CircuitAnalysis;
+	suspects: Record<UnitSystem, SuspectsResult>;
+};
+
+/** Clues are read for the starts that went wrong; a sound start's sheet needs none. */
+function extrasOf(evidence: SuspectEvidence, record: StartRecord): StartRow['extras'] {
+	const telling = record.outcome === 'tripped' || record.stall?.verdict === 'stall';
+	const clues = (units: UnitSystem) => (telling ? cluesOfStart({ ...evidence, units }, record.startedAt) : []);
+	return { clues: { si: clues('si'), ip: clues('ip') }, firstMover: null };
+}
 
 async function compute(job: Job): Promise<{ computed: Computed[]; revision: number } | null> {
 	return withOrganisation(job.organisationId, async (tx) => {
@@ -80,7 +93,11 @@ async function compute(job: Job): Promise<{ computed: Computed[]; revision: numb
 				si: evaluateSuspects({ ...evidence, units: 'si' }),
 				ip: evaluateSuspects({ ...evidence, units: 'ip' })
 			};
-			computed.push({ analysis, suspects });
+			computed.push({
+				analysis,
+				suspects,
+				made: analysis.starts.map((record) => ({ record, extras: extrasOf(evidence, record) }))
+			});
 		}
 		return { computed, revision: unit.revision };
 	});
@@ -92,8 +109,12 @@ async function store(
 	logIds: readonly string[]
 ): Promise<void> {
 	await withOrganisation(job.organisationId, async (tx) => {
-		const starts = computed.flatMap(({ analysis }) => analysis.starts);
-		await replaceStarts(tx, job.organisationId, job.unitId, starts);
+		await replaceStarts(
+			tx,
+			job.organisationId,
+			job.unitId,
+			computed.flatMap(({ made }) => made)
+		);
 		for (const { analysis, suspects } of computed) {
 			await saveCircuitResult(tx, {
 				organisationId: job.organisationId,

@@ -1,7 +1,8 @@
 import type { UnitSystem } from '$lib/model/quantities';
 import type { SeriesId } from '$lib/model/signals';
 import type { StartRecord } from '$lib/model/start';
-import type { SuspectsResult } from '$lib/model/suspect';
+import type { Clue, SuspectKey, SuspectsResult } from '$lib/model/suspect';
+import type { FirstMover } from '$lib/model/wire/start-sheet';
 import type { Log } from '$lib/model/wire/log';
 import {
 	bigint,
@@ -24,6 +25,11 @@ import { units } from './plant';
 import { organisationId, ownRows } from './tenant';
 
 /** Uploaded logs, their samples as blocks, and what was computed from them. */
+
+export type StartExtras = {
+	clues: Record<UnitSystem, (Clue & { suspect: SuspectKey })[]>;
+	firstMover: Record<UnitSystem, FirstMover> | null;
+};
 
 const bytes = customType<{ data: Uint8Array; driverData: Uint8Array }>({ dataType: () => 'bytea' });
 const epochMs = () => bigint({ mode: 'number' });
@@ -191,7 +197,9 @@ export const starts = pgTable(
 		startedAt: epochMs().notNull(),
 		endedAt: epochMs(),
 		outcome: text().$type<StartRecord['outcome']>().notNull(),
-		record: jsonb().$type<StartRecord>().notNull()
+		record: jsonb().$type<StartRecord>().notNull(),
+		/** what the analysis says about this start beside its figures, in both systems of units */
+		extras: jsonb().$type<StartExtras>().notNull()
 	},
 	(t) => [
 		primaryKey({ columns: [t.organisationId, t.id] }),

@@ -1,10 +1,11 @@
 import type { Operation } from '../operation';
+import * as inference from './inference';
 import * as logs from './logs';
 import * as people from './people';
 import * as plant from './plant';
 import * as starts from './starts';
 
 /** Every call of the public API, for the OpenAPI document. */
-export const OPERATIONS: readonly Operation[] = [plant, logs, starts, people].flatMap(
+export const OPERATIONS: readonly Operation[] = [plant, logs, starts, inference, people].flatMap(
 	(group) => Object.values(group) as Operation[]
 );

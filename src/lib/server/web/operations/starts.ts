@@ -1,6 +1,7 @@
 import { OUTCOMES } from '$lib/model/start';
 import { instantSchema, pageQuerySchema } from '$lib/model/wire/common';
-import { startCorrectionSchema, startSchema } from '$lib/model/wire/start';
+import { startCorrectionSchema, startSchema, suspectsSchema } from '$lib/model/wire/start';
+import { firstMoverSchema, startSheetSchema } from '$lib/model/wire/start-sheet';
 import { tracesSchema } from '$lib/model/wire/views';
 import { TRACES_BINARY } from '$lib/utils/traces-binary';
 import { z } from 'zod';
@@ -26,6 +27,35 @@ export const listStarts = operation({
 		units
 	}),
 	response: z.object({ starts: z.array(startSchema), nextCursor: z.string().nullable() })
+});
+export const getStart = operation({
+	method: 'get',
+	path: '/api/starts/{start}',
+	summary: 'One start with its clues, neighbours, held starts, headroom and advice',
+	right: 'read',
+	query: z.object({ units }),
+	response: startSheetSchema
+});
+export const getFirstMover = operation({
+	method: 'get',
+	path: '/api/starts/{start}/first-mover',
+	summary: 'Which signal left the held starts’ band first, with the errors of the order',
+	right: 'read',
+	query: z.object({ units }),
+	response: firstMoverSchema
+});
+export const getSuspects = operation({
+	method: 'get',
+	path: '/api/units/{unit}/suspects',
+	summary: 'Ranked suspects with clues for, against and missing; without a circuit the top is that of the worst',
+	right: 'read',
+	query: z.object({
+		from: instantSchema.optional(),
+		to: instantSchema.optional(),
+		circuit: z.string().optional(),
+		units
+	}),
+	response: suspectsSchema
 });
 export const correctStart = operation({
 	method: 'patch',
