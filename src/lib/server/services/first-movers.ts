@@ -11,5 +11,13 @@ export async function firstMoverOfStart(actor: Actor, startId: string, system: U
 	const found = row.extras.firstMover?.[system];
 	if (found) return { ...found, units: unitsObject(system) };
 	const why = 'The order is read for starts that went wrong, beside five matched held starts at least.';
-	return { sentence: why, cannotTell: why, heldStarts: 0, fromSeconds: 0, tripAtSeconds: null, departures: [], units: unitsObject(system) };
+	return {
+		sentence: why,
+		cannotTell: why,
+		heldStarts: 0,
+		fromSeconds: 0,
+		tripAtSeconds: null,
+		departures: [],
+		units: unitsObject(system)
+	};
 }

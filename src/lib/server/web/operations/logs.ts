@@ -1,4 +1,4 @@
-import { pageQuerySchema } from '$lib/model/wire/common';
+import { instantSchema, pageQuerySchema } from '$lib/model/wire/common';
 import { logPreviewSchema, logSchema, mappingInputSchema } from '$lib/model/wire/log';
 import { z } from 'zod';
 import { operation } from '../operation';
@@ -64,4 +64,19 @@ export const originalLog = operation({
 	right: 'read',
 	query: z.object({ file: z.coerce.number().int().min(0).default(0) }),
 	responseTypes: ['application/octet-stream']
+});
+export const exportUnit = operation({
+	method: 'get',
+	path: '/api/units/{unit}/export',
+	summary: 'Any window of a circuit’s samples as CSV, a spreadsheet or a Haystack Zinc grid',
+	right: 'read',
+	query: z.object({
+		from: instantSchema,
+		to: instantSchema,
+		circuit: z.string().default('1'),
+		signals: z.string().max(2000).optional(),
+		format: z.enum(['csv', 'xlsx', 'zinc']).default('csv'),
+		units: z.enum(['si', 'ip']).optional()
+	}),
+	responseTypes: ['text/csv', 'application/vnd.openxmlformats-officedocument.spreadsheetml.sheet', 'text/zinc']
 });
