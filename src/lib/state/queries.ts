@@ -67,7 +67,7 @@ export function daysQuery(fetcher: typeof fetch, unit: string, window: Window, s
 	});
 }
 
-export type StartsPage = { starts: Start[]; nextCursor: string | null };
+export type StartsPage = { starts: Start[]; nextCursor: string | null; units?: Record<string, string> };
 
 export function startsQuery(fetcher: typeof fetch, unit: string, window: Window, system: UnitSystem) {
 	return queryOptions({
