@@ -1,14 +1,18 @@
-/**
- * One cell of a CSV file (RFC 4180): quoted where it must be. A text that a spreadsheet would take for a formula is
- * defused with an apostrophe (OWASP, "CSV Injection"); numbers are written as they are.
- */
-export function csvCell(value: string | number | null | undefined): string {
-	if (value === null || value === undefined) return '';
-	if (typeof value === 'number') return Number.isFinite(value) ? String(value) : '';
-	const safe = /^[=+\-@\t\r]/.test(value) ? `'${value}` : value;
+/** A cell of a table that goes to a file; null is an empty cell. */
+export type Cell = string | number | null;
+
+/** Quotes where RFC 4180 wants them; text that a spreadsheet would run as a formula gets an apostrophe before it. */
+function cellText(cell: Cell): string {
+	if (cell === null) return '';
+	if (typeof cell === 'number') return Number.isFinite(cell) ? String(cell) : '';
+	const safe = /^[=+@\t\r-]/.test(cell) ? `'${cell}` : cell;
 	return /[",\r\n]/.test(safe) ? `"${safe.replaceAll('"', '""')}"` : safe;
 }
 
-/** One record, ended with CRLF. */
-export const csvRow = (cells: readonly (string | number | null | undefined)[]): string =>
-	`${cells.map(csvCell).join(',')}\r\n`;
+/** One record (RFC 4180), ended with CR LF. */
+export const csvRow = (cells: readonly Cell[]): string => cells.map(cellText).join(',') + '\r\n';
+
+/** Rows as CSV (RFC 4180): comma, CR LF, a header line. */
+export function toCsv(header: readonly string[], rows: readonly (readonly Cell[])[]): string {
+	return [header, ...rows].map(csvRow).join('');
+}
