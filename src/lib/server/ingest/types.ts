@@ -130,7 +130,7 @@ export type FilePlan = {
 	lines: number;
 };
 
-export type DateOrder = 'ymd' | 'dmy' | 'mdy' | 'md' | 'dm' | 'epoch-s' | 'epoch-ms' | 'serial' | 'mixed';
+export type DateOrder = 'ymd' | 'dmy' | 'mdy' | 'md' | 'dm' | 'epoch-s' | 'epoch-ms' | 'serial';
 
 /** How stamps are written and in which zone they are. */
 export type TimePlan = {
@@ -144,6 +144,8 @@ export type TimePlan = {
 	zone: string;
 	/** Stamps carry an offset or abbreviation of their own. */
 	carriesZone: boolean;
+	/** Newest row first. */
+	descending: boolean;
 	/** In words, for the page: `month/day/year, 12 hours`. */
 	form: string;
 };

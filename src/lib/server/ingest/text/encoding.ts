@@ -1,0 +1,57 @@
+import { utf16Kind } from '../container/sniff';
+
+/** How a text's bytes are to be understood. */
+export type TextForm = { encoding: string; mark: number; crOnly: boolean };
+
+/** Is this UTF-8? A character cut off at the end does not count against it. */
+function isUtf8(bytes: Uint8Array): boolean {
+	try {
+		new TextDecoder('utf-8', { fatal: true }).decode(bytes, { stream: true });
+		return true;
+	} catch {
+		return false;
+	}
+}
+
+/**
+ * Encoding, length of the byte-order mark and line ends of a text from its first bytes. What is neither UTF-16 nor
+ * UTF-8 is read as Windows-1252: of the single-byte encodings it is the one in which every byte of a trend export's
+ * degree and cube signs comes out right.
+ */
+export function textForm(bytes: Uint8Array): TextForm {
+	const wide = utf16Kind(bytes);
+	if (wide) {
+		const mark = (bytes[0] ?? 0) >= 0xfe ? 2 : 0;
+		const unit = wide === 'utf-16le' ? 0 : 1;
+		const plain = bytes.filter((_, i) => i % 2 === unit);
+		return { encoding: wide, mark, crOnly: !plain.includes(10) && plain.includes(13) };
+	}
+	const crOnly = !bytes.includes(10) && bytes.includes(13);
+	if (bytes[0] === 0xef && bytes[1] === 0xbb && bytes[2] === 0xbf) return { encoding: 'utf-8', mark: 3, crOnly };
+	return { encoding: isUtf8(bytes) ? 'utf-8' : 'windows-1252', mark: 0, crOnly };
+}
+
+/** The text as UTF-8 bytes with line feeds, mark gone. Plain UTF-8 passes through without a copy. */
+export async function* toUtf8(source: AsyncIterable<Uint8Array>, form: TextForm): AsyncIterable<Buffer> {
+	let mark = form.mark;
+	const decoder = form.encoding === 'utf-8' ? null : new TextDecoder(form.encoding, { ignoreBOM: true });
+	for await (const raw of source) {
+		let chunk: Buffer = Buffer.from(raw.buffer, raw.byteOffset, raw.byteLength);
+		if (mark > 0) {
+			const cut = Math.min(mark, chunk.length);
+			mark -= cut;
+			chunk = chunk.subarray(cut);
+		}
+		if (decoder) chunk = Buffer.from(decoder.decode(chunk, { stream: true }), 'utf8');
+		if (chunk.length === 0) continue;
+		yield form.crOnly ? withLineFeeds(chunk) : chunk;
+	}
+	const rest = decoder?.decode();
+	if (rest) yield Buffer.from(rest, 'utf8');
+}
+
+function withLineFeeds(chunk: Buffer): Buffer {
+	const out = Buffer.from(chunk);
+	for (let i = out.indexOf(13); i >= 0; i = out.indexOf(13, i + 1)) out[i] = 10;
+	return out;
+}
