@@ -1,2 +1,5 @@
 export type * from './types';
 export { LogRefusal } from './types';
+export { sniff, MOST_BYTES, type Container, type Sniffed } from './container/sniff';
+export { inspectLog } from './inspect/inspect-log';
+export { readLog } from './read/read-log';

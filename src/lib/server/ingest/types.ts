@@ -110,7 +110,7 @@ export type FilePlan = {
 	/** Index into the upload's files, and the entry inside that file's archive (nested: two names), or sheet. */
 	source: number;
 	entry: string[];
-	container: 'text' | 'sheet' | 'zinc' | 'haystack-json';
+	container: 'text' | 'sheet' | 'haystack-json';
 	/** `events`: an alarm or event history; `empty`: nothing to read in it, and that is no fault. */
 	kind: 'wide' | 'long' | 'per-signal' | 'events' | 'empty';
 	delimiter: string;
@@ -119,15 +119,31 @@ export type FilePlan = {
 	/** Line of the last header row (0: no header); data begin after `dataLine - 1`. */
 	headerLine: number;
 	dataLine: number;
+	/** Cells of a row. */
+	width: number;
+	/** The header's row without blanks and quotes, so that its repetition in mid-file is known. */
+	headerText: string;
 	time: TimePlan;
 	columns: ColumnPlan[];
-	/** Long and event layouts: positions of the cells; −1 = not there. */
-	roles: { name: number; value: number; status: number; unit: number; text: number; code: number; severity: number };
-	/** Which decides where a text row's cells begin and end: quotes mean the slower, exact reader. */
-	quoted: boolean;
+	/** Long and event layouts: where their cells stand. */
+	roles: RowRoles;
 	intervalSeconds: number | null;
 	/** Most lines the look passed over, for progress. */
 	lines: number;
+};
+
+/** Positions of the cells of long and event rows; −1 = not there. A point's name may be spread over several cells. */
+export type RowRoles = {
+	names: number[];
+	value: number;
+	status: number;
+	unit: number;
+	text: number;
+	code: number;
+	severity: number;
+	/** Raised, cleared or acknowledged; or the time of clearing. */
+	state: number;
+	clearedAt: number;
 };
 
 export type DateOrder = 'ymd' | 'dmy' | 'mdy' | 'md' | 'dm' | 'epoch-s' | 'epoch-ms' | 'serial';
@@ -155,13 +171,13 @@ export type ColumnPlan = {
 	/** Position in the row; −1 for a point of a long layout, found by name. */
 	index: number;
 	column: string;
-	/** Pressure unit of measure and such come from the mapping; what the column itself shows is here. */
 	logging: 'interval' | 'change';
 	/** Smallest step seen, file's own figures, or null. */
 	increment: number | null;
-	/** Words that mean on and off, when the column is written in words. */
+	/** Usual time between its readings, or null. */
+	spacingSeconds: number | null;
+	/** Mostly words, not numbers. */
 	words: boolean;
-	/** Signature part of this column: name as compared with remembered ones. */
 	role: ColumnRole;
 };
 
@@ -202,7 +218,12 @@ export type RawBlock = {
 	increment: number | null;
 	/** Set when the stored unit is not the quantity's usual one (`pctRated`). */
 	measure: string | null;
+	/** Stored = figure in the file × factor + offset: lets the codec store the file's own few digits. */
+	scale: Scale;
 };
+
+/** A figure becomes `factor · figure + offset`. */
+export type Scale = { factor: number; offset: number };
 
 /** Words of a mode, limit or alarm column: rows where the text changed, and the first of each chunk. */
 export type TextBlock = {

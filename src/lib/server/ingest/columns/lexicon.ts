@@ -94,7 +94,11 @@ say('lchwt|lchw|elwt|chwlt|chwot|lcht', 'evap', 'water', 'leaving', 'temperature
 say('echwt|echw|eewt|chwet|chwit|echt', 'evap', 'water', 'entering', 'temperature');
 say('lwt|lwtemp|owt', 'water', 'leaving', 'temperature');
 say('ewt|ewtemp|iwt', 'water', 'entering', 'temperature');
-say('condenser water|cond water|cond wtr|cdw|cw|cnw|cndw|cws water|tower water|cond fluid|kuhlwasser', 'cond', 'water');
+say(
+	'condenser water|cond water|cond wtr|cdw|cw|cnw|cndw|cws water|tower water|cond fluid|kuhlwasser|cooling water|cooling wtr|heat rejection water',
+	'cond',
+	'water'
+);
 say('cws|cdws|cnws', 'cond', 'water', 'supply');
 say('cwst|cdwst|cnwst', 'cond', 'water', 'supply', 'temperature');
 say('cwr|cdwr|cnwr', 'cond', 'water', 'return');

@@ -1,4 +1,14 @@
-import { HGrid, HNum, HDateTime, HBool, HStr, ZincReader, valueIsKind, Kind, type HVal } from 'haystack-core';
+import {
+	HGrid,
+	type HNum,
+	type HDateTime,
+	type HBool,
+	type HStr,
+	ZincReader,
+	valueIsKind,
+	Kind,
+	type HVal
+} from 'haystack-core';
 import { LogRefusal } from '../types';
 
 /** A JSON file is held in memory while it is read. */

@@ -37,6 +37,8 @@ function cellText(cell: Cell): string {
 			.replace('T', ' ')
 			.replace('Z', '')
 			.replace(/\.000$/, '');
+		// Midnight is printed as a date alone, so that a column of days beside one of clocks is seen as such.
+		if (text.endsWith(' 00:00:00')) return text.slice(0, 10);
 		// A clock alone is a serial below one: the day is the format's zero, not the log's.
 		return ms < Date.UTC(1901, 0, 1) ? text.slice(11) : text;
 	}

@@ -1,0 +1,137 @@
+import type { Leaf } from '../container/unpack';
+import type { Look } from '../text/look';
+import { papaRows, type TextRow } from '../text/papa';
+import { decideTime } from '../time/time-plan';
+import type { Choice, FilePlan, Problem, ReadContext } from '../types';
+import { guessDecimal } from './decimal';
+import { findHeader, type Header } from './header';
+import { columnKinds, eventRoles, longRoles, noRoles, type ColumnKind } from './kind';
+import { findTable } from './table';
+
+/** A file as looked at: its plan so far, its header, and rows from its whole length. */
+export type Draft = {
+	leaf: Leaf;
+	look: Look;
+	plan: FilePlan;
+	header: Header;
+	/** Data rows: the head's, then runs spread over the rest, in the file's order. */
+	rows: TextRow[];
+	/** How many of `rows` are from the head, and so follow each other without a break. */
+	headRows: number;
+	kinds: ColumnKind[];
+	choices: Choice[];
+};
+
+const MOST_HEAD_ROWS = 240;
+
+function sampleRows(
+	look: Look,
+	delimiter: string,
+	head: TextRow[],
+	dataLine: number
+): { rows: TextRow[]; headRows: number } {
+	const data = head.filter((row) => row.line >= dataLine).slice(0, MOST_HEAD_ROWS);
+	const rows = [...data];
+	for (const run of look.runs) {
+		// A run may begin inside a quoted cell: rows of another width are not believed.
+		for (const row of papaRows(run.lines.join('\n'), delimiter, run.line)) rows.push(row);
+	}
+	return { rows, headRows: data.length };
+}
+
+function stampText(row: TextRow, column: number, clockColumn: number): string {
+	const date = row.cells[column] ?? '';
+	return clockColumn < 0 ? date : `${date} ${row.cells[clockColumn] ?? ''}`;
+}
+
+function median(values: readonly number[]): number | null {
+	const sorted = [...values].sort((a, b) => a - b);
+	return sorted[Math.floor(sorted.length / 2)] ?? null;
+}
+
+/** Seconds between neighbouring rows of the head: the median of those that are no repeats. */
+export function usualStep(times: readonly number[]): number | null {
+	const steps: number[] = [];
+	for (let i = 1; i < times.length; i++) {
+		const step = Math.abs((times[i] ?? NaN) - (times[i - 1] ?? NaN)) / 1000;
+		if (step > 0) steps.push(step);
+	}
+	return median(steps);
+}
+
+/**
+ * Looks at a text as a table: delimiter, header, decimal sign, time and kind of layout. A problem when it is none.
+ */
+export function draftFile(leaf: Leaf, look: Look, ctx: ReadContext): Draft | Problem {
+	const table = findTable(look, ctx.now);
+	if (!table) return noTable(leaf, look);
+	const header = findHeader(look.head, table);
+	const width = Math.max(table.width, header.names.length);
+	const { rows, headRows } = sampleRows(look, table.delimiter, table.rows, header.dataLine);
+	const { column, clockColumn, time } = table.place;
+	const skip = [column, clockColumn];
+	const cells = rows.slice(0, 400).flatMap((row) => row.cells.filter((_, i) => !skip.includes(i)));
+	const decimal = guessDecimal(cells, table.delimiter);
+	const answered = ctx.answers?.decimal;
+	const sign = answered === '.' || answered === ',' ? answered : decimal.decimal;
+	const grid = rows.map((row) => row.cells);
+	const kinds = columnKinds(header.names, grid.slice(0, 600), sign);
+	const timing = decideTime(
+		{
+			column,
+			clockColumn,
+			time,
+			cells: rows.map((row) => stampText(row, column, clockColumn)),
+			header: header.names[column] ?? '',
+			titles: header.titles.map((cells) => cells.join(' '))
+		},
+		ctx
+	);
+	const long = longRoles(kinds, grid, skip);
+	const events = long ? null : eventRoles(kinds, grid, skip);
+	const choices = timing.choices;
+	if (!decimal.sure) {
+		choices.push({
+			key: 'decimal',
+			question: 'Is the comma a decimal sign or does it group thousands?',
+			chosen: sign,
+			options: [
+				{ value: ',', label: 'decimal sign', sample: `${decimal.sample} is ${decimal.sample.replace(',', '.')}` },
+				{ value: '.', label: 'groups thousands', sample: `${decimal.sample} is ${decimal.sample.replace(',', '')}` }
+			],
+			sure: answered !== undefined
+		});
+	}
+	const plan: FilePlan = {
+		file: leaf.file,
+		source: leaf.source,
+		entry: leaf.entry,
+		container: leaf.container,
+		kind: long ? 'long' : events ? 'events' : 'wide',
+		delimiter: table.delimiter,
+		decimal: sign,
+		encoding: look.form.encoding,
+		headerLine: header.headerLine,
+		dataLine: header.dataLine,
+		width,
+		headerText: (look.head.split('\n')[header.headerLine - 1] ?? '').replace(/["\s]/g, ''),
+		time: timing.plan,
+		columns: [],
+		roles: long ?? events ?? noRoles(),
+		intervalSeconds: null,
+		lines: look.lines
+	};
+	return { leaf, look, plan, header, rows, headRows, kinds, choices };
+}
+
+function noTable(leaf: Leaf, look: Look): Problem {
+	const first = look.head.split('\n').findIndex((line) => line.trim() !== '');
+	const base = { file: leaf.file, column: null };
+	if (first < 0) return { ...base, line: null, kind: 'empty', message: `${leaf.file} holds no rows.` };
+	return {
+		...base,
+		line: first + 1,
+		kind: 'no-time',
+		message: `${leaf.file} has no column of times that can be read in its rows, so nothing in it can be placed in time.`
+	};
+}

@@ -1,0 +1,243 @@
+import { unpack, type Leaf } from '../container/unpack';
+import { textForm, toUtf8, type TextForm } from '../text/encoding';
+import { readRows, type ReaderChoice } from '../text/row-reader';
+import type { Dictionary, OddRow, RowPlan, RowView } from '../text/row-plan';
+import {
+	LogRefusal,
+	type ColumnMapping,
+	type FilePlan,
+	type Inspection,
+	type Progress,
+	type ReadContext,
+	type ReadResult,
+	type ReadSink,
+	type SourceFile
+} from '../types';
+import { EventRows } from './events';
+import { LongRows } from './long';
+import { ProblemList, RowClock, tallyProblems, TargetTally, totalQuality } from './quality';
+import { RowTime } from './row-time';
+import { targetsOf } from './targets';
+import { WideRows } from './wide';
+
+/** What the readers of the several layouts have in common. */
+type Rows = { plan: RowPlan; dictionaries: Dictionary[] };
+
+/** Shortest time between two reports of progress, ms. */
+const REPORT_EVERY = 150;
+
+class LogReader {
+	readonly problems = new ProblemList();
+	readonly clocks: RowClock[] = [];
+	readonly tallies: TargetTally[] = [];
+	readonly taken = new Map<string, string[]>();
+	rows = 0;
+	events = 0;
+	badTimes = 0;
+	first = Infinity;
+	last = -Infinity;
+	bytes = 0;
+	readonly totalBytes: number;
+	#reported = 0;
+
+	constructor(
+		readonly ctx: ReadContext,
+		readonly mapping: readonly ColumnMapping[],
+		readonly sink: ReadSink,
+		readonly onProgress: (p: Progress) => void,
+		readonly reader: ReaderChoice,
+		files: readonly SourceFile[]
+	) {
+		this.totalBytes = files.reduce((sum, f) => sum + f.size, 0);
+	}
+
+	report(force = false): void {
+		const now = Date.now();
+		if (!force && now - this.#reported < REPORT_EVERY) return;
+		this.#reported = now;
+		this.onProgress({ bytes: Math.min(this.bytes, this.totalBytes), totalBytes: this.totalBytes, rows: this.rows });
+	}
+
+	/** Reads one file by its plan. */
+	async file(leaf: Leaf, plan: FilePlan, index: number, header: string): Promise<void> {
+		const time = new RowTime(plan, this.ctx.now, this.problems);
+		if (plan.kind === 'events') await this.#events(leaf, plan, time, header);
+		else if (plan.kind === 'long') await this.#long(leaf, plan, index, time, header);
+		else await this.#wide(leaf, plan, index, time, header);
+		time.finish();
+		this.badTimes += time.impossible + time.missing;
+	}
+
+	async #wide(leaf: Leaf, plan: FilePlan, index: number, time: RowTime, header: string): Promise<void> {
+		const targets = targetsOf(plan, this.mapping, this.ctx.airPressure, this.taken);
+		const tallies = targets.map((target) => new TargetTally(target, index, plan.intervalSeconds));
+		const changes = targets.length > 0 && targets.every((target) => target.plan.logging === 'change');
+		const clock = new RowClock(changes, plan.time.descending);
+		const rows = new WideRows(plan, index, targets, tallies, clock);
+		const take = (view: RowView) => {
+			const t = time.at(view.wall, view.offset, view.line);
+			if (Number.isNaN(t)) return;
+			this.rows++;
+			rows.take(t, view);
+		};
+		for await (const _ of this.#pieces(leaf, plan, rows, take, header)) await rows.drain(this.sink);
+		rows.flush();
+		await rows.drain(this.sink);
+		this.clocks.push(clock);
+		this.tallies.push(...tallies);
+	}
+
+	async #long(leaf: Leaf, plan: FilePlan, index: number, time: RowTime, header: string): Promise<void> {
+		const targets = targetsOf(plan, this.mapping, this.ctx.airPressure, this.taken);
+		const tallies = targets.map((target) => new TargetTally(target, index, plan.intervalSeconds));
+		const rows = new LongRows(plan, index, targets, tallies, time);
+		for await (const _ of this.#pieces(leaf, plan, rows, (view) => rows.take(view), header))
+			await rows.drain(this.sink);
+		rows.flush();
+		await rows.drain(this.sink);
+		this.rows += rows.rows;
+		for (const [name, n] of [...rows.unknown].slice(0, 20)) {
+			this.problems.add({
+				file: plan.file,
+				line: null,
+				column: name,
+				kind: 'point-unmapped',
+				message: `${n} rows of the point "${name}" were not read: it is not mapped.`
+			});
+		}
+		this.clocks.push(...rows.clocks);
+		this.tallies.push(...tallies);
+	}
+
+	async #events(leaf: Leaf, plan: FilePlan, time: RowTime, header: string): Promise<void> {
+		const rows = new EventRows(plan, this.ctx, time);
+		for await (const _ of this.#pieces(leaf, plan, rows, (view) => rows.take(view), header)) {
+			for (const event of rows.drain()) await this.sink.event(event);
+		}
+		for (const event of rows.drain()) await this.sink.event(event);
+		this.events += rows.events;
+		this.rows += rows.events;
+		this.first = Math.min(this.first, rows.first);
+		this.last = Math.max(this.last, rows.last);
+	}
+
+	async *#pieces(
+		leaf: Leaf,
+		plan: FilePlan,
+		rows: Rows,
+		take: (view: RowView) => void,
+		header: string
+	): AsyncIterable<void> {
+		const odd = (line: number, text: string, why: OddRow) => this.#odd(plan, line, text, why, header);
+		const text = toUtf8(leaf.open(), await formOf(leaf, plan));
+		for await (const _ of readRows(
+			text,
+			rows.plan,
+			plan.dataLine,
+			{ row: take, odd },
+			rows.dictionaries,
+			this.reader
+		)) {
+			this.report();
+			yield;
+		}
+	}
+
+	#odd(plan: FilePlan, line: number, text: string, why: OddRow, header: string): void {
+		const bare = text.replace(/["\s]/g, '');
+		if (bare.split(plan.delimiter).every((cell) => cell === '')) return;
+		if (header !== '' && bare === header) return;
+		const shown = text.length > 60 ? `${text.slice(0, 60)}…` : text;
+		if (why === 'long') {
+			const message = `The row has more cells than the header: "${shown}". It was left out.`;
+			this.problems.add({ file: plan.file, line, column: null, kind: 'row-too-long', message });
+		} else {
+			const message = `The row has no time that can be read: "${shown}". It was left out.`;
+			this.problems.add({ file: plan.file, line, column: null, kind: 'row-no-time', message });
+		}
+	}
+
+	result(fileOf: (i: number) => string): ReadResult {
+		for (const problem of tallyProblems(this.tallies, fileOf)) this.problems.add(problem);
+		const quality = totalQuality(this.clocks, this.tallies, this.badTimes);
+		const first = Math.min(this.first, ...this.clocks.map((c) => c.first));
+		const last = Math.max(this.last, ...this.clocks.map((c) => c.last));
+		return {
+			rows: this.rows,
+			samples: this.tallies.reduce((sum, tally) => sum + tally.samples, 0),
+			events: this.events,
+			firstAt: Number.isFinite(first) ? first : null,
+			lastAt: Number.isFinite(last) ? last : null,
+			quality,
+			signals: this.tallies.map((tally) => tally.quality(tally.target.plan.spacingSeconds)),
+			problems: this.problems.all(),
+			refused: false
+		};
+	}
+}
+
+async function formOf(leaf: Leaf, plan: FilePlan): Promise<TextForm> {
+	const parts: Uint8Array[] = [];
+	let size = 0;
+	for await (const chunk of leaf.open()) {
+		parts.push(chunk);
+		size += chunk.length;
+		if (size >= 65_536) break;
+	}
+	return { ...textForm(Buffer.concat(parts)), encoding: plan.encoding };
+}
+
+/** Files that count what was read from them, for progress. */
+function counted(files: readonly SourceFile[], reader: () => LogReader | null): SourceFile[] {
+	const most = files.map(() => 0);
+	return files.map((file, i) => ({
+		name: file.name,
+		size: file.size,
+		async *open() {
+			let at = 0;
+			for await (const chunk of file.open()) {
+				at += chunk.length;
+				if (at > (most[i] ?? 0)) {
+					most[i] = at;
+					const r = reader();
+					if (r) r.bytes = most.reduce((a, b) => a + b, 0);
+				}
+				yield chunk;
+			}
+		}
+	}));
+}
+
+/**
+ * Converts a log by its inspection and mapping and hands its readings to the sink, piece by piece. Columns without a
+ * signal are passed over.
+ * @param reader `exact` reads every file with PapaParse: for tests of the two readers' agreement
+ * @throws LogRefusal when a file turns out unreadable; what the sink got of it must then be dropped
+ */
+export async function readLog(
+	files: readonly SourceFile[],
+	ctx: ReadContext,
+	inspection: Inspection,
+	mapping: readonly ColumnMapping[],
+	sink: ReadSink,
+	onProgress: (progress: Progress) => void = () => undefined,
+	reader: ReaderChoice = 'auto'
+): Promise<ReadResult> {
+	let log: LogReader | null = null;
+	const sources = counted(files, () => log);
+	const { leaves, close } = await unpack(sources);
+	try {
+		log = new LogReader(ctx, mapping, sink, onProgress, reader, files);
+		log.bytes = 0;
+		for (const [index, plan] of inspection.files.entries()) {
+			if (plan.kind === 'empty') continue;
+			const leaf = leaves.find((l) => l.source === plan.source && l.entry.join('/') === plan.entry.join('/'));
+			if (!leaf) throw new LogRefusal('file-missing', `${plan.file} is no longer in the upload.`, plan.file);
+			await log.file(leaf, plan, index, plan.headerText);
+		}
+		log.report(true);
+		return log.result((i) => inspection.files[i]?.file ?? '');
+	} finally {
+		await close();
+	}
+}
