@@ -3,3 +3,5 @@ export { LogRefusal } from './types';
 export { sniff, MOST_BYTES, type Container, type Sniffed } from './container/sniff';
 export { inspectLog } from './inspect/inspect-log';
 export { readLog } from './read/read-log';
+export { decodeTimes, decodeValues, encodeTimes, encodeValues } from './block-codec';
+export { mergeBlocks, type MergeBlock, type Merged } from './merge-blocks';

@@ -1,7 +1,7 @@
 import { StampReader } from '../time/stamp';
 import { LogRefusal } from '../types';
 import { MOST_LINE } from './look';
-import { BLANK, Dictionary, SlowCells, type RowHandler, type RowPlan, type RowView } from './row-plan';
+import { BLANK, type Dictionary, SlowCells, type RowHandler, type RowPlan, type RowView } from './row-plan';
 
 const POW10 = Array.from({ length: 17 }, (_, i) => 10 ** i);
 const SKIP = 0;

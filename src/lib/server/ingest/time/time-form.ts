@@ -66,7 +66,7 @@ function mostlyMonotonic(cells: readonly string[]): boolean {
 		if (step > 0) up++;
 		else if (step < 0) down++;
 	}
-	return up + down > 0 && (Math.min(up, down) <= 0.1 * (up + down) || cells.length < 3);
+	return cells.length < 3 || (up + down > 0 && Math.min(up, down) <= 0.1 * (up + down));
 }
 
 /**
