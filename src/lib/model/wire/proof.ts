@@ -12,7 +12,14 @@ export const proofSchema = z
 		circuit: z.string(),
 		state: z.enum(['changed', 'not-yet', 'too-little-before', 'no-exposed-start', 'no-change']),
 		/** k′ and m′ after the opening trip is taken out and both are divided by d; plain counts beside them */
-		before: z.object({ k: z.number(), m: z.number(), d: z.number(), countedK: z.number(), countedM: z.number(), openingTrip: instantSchema.nullable() }),
+		before: z.object({
+			k: z.number(),
+			m: z.number(),
+			d: z.number(),
+			countedK: z.number(),
+			countedM: z.number(),
+			openingTrip: instantSchema.nullable()
+		}),
 		after: z.object({ t: z.number().int(), c: z.number().int(), days: z.number() }),
 		e: z.number().nullable(),
 		threshold: z.number(),

@@ -4,9 +4,12 @@ import type { Series } from '$lib/model/series';
 import type { StartRecord } from '$lib/model/start';
 import type { SuspectsResult } from '$lib/model/suspect';
 import { analyseCircuit } from '$lib/server/analysis/analyse-circuit';
+import { firstMoverOf, matchedHeld } from '$lib/server/analysis/first-mover/first-mover';
 import { cluesOfStart, evaluateSuspects, type SuspectEvidence } from '$lib/server/analysis/suspects';
 import { factsOf } from './facts';
+import { keepFirstMover } from './first-movers';
 import { listTripWords, listVisitSpans } from '$lib/server/repositories/circle';
+import type { Window } from '$lib/server/repositories/blocks';
 import { listLogs, updateLog, withLock } from '$lib/server/repositories/logs';
 import { findSite, findUnit, listLimits, listUnits, type SiteRow, type UnitRow } from '$lib/server/repositories/plant';
 import { listCorrections, replaceStarts, saveCircuitResult, type StartRow } from '$lib/server/repositories/starts';
@@ -34,11 +37,11 @@ async function runningOfOthers(tx: Tx, site: SiteRow, unit: UnitRow): Promise<Ci
 	return others;
 }
 
-/** Everything the analysis of one unit's circuits needs, from the store. */
-export async function circuitInputs(tx: Tx, unit: UnitRow, site: SiteRow): Promise<CircuitInput[]> {
+/** Everything the analysis of one unit's circuits needs, from the store: of all its logs, or of a window. */
+export async function circuitInputs(tx: Tx, unit: UnitRow, site: SiteRow, window?: Window): Promise<CircuitInput[]> {
 	const circuits = circuitsOf(unit);
-	const maps = await loadSeries(tx, unit.id, circuits);
-	const texts = await loadTexts(tx, unit.id, circuits);
+	const maps = await loadSeries(tx, unit.id, circuits, window ? { window } : {});
+	const texts = await loadTexts(tx, unit.id, circuits, window);
 	const limits = limitsOf(await listLimits(tx, [unit.id]));
 	const corrections = (await listCorrections(tx, unit.id)).map((row) => row.correction);
 	const visits = await listVisitSpans(tx, unit.id);
@@ -50,7 +53,7 @@ export async function circuitInputs(tx: Tx, unit: UnitRow, site: SiteRow): Promi
 			circuit,
 			series: maps.get(circuit) ?? {},
 			texts: texts.get(circuit) ?? {},
-			events: await loadEvents(tx, unit.id, circuit),
+			events: await loadEvents(tx, unit.id, circuit, window),
 			nature: unit.nature,
 			refrigerant: unit.refrigerant,
 			timeZone: site.timeZone,
@@ -75,7 +78,11 @@ type Computed = {
 function extrasOf(evidence: SuspectEvidence, record: StartRecord): StartRow['extras'] {
 	const telling = record.outcome === 'tripped' || record.stall?.verdict === 'stall';
 	const clues = (units: UnitSystem) => (telling ? cluesOfStart({ ...evidence, units }, record.startedAt) : []);
-	return { clues: { si: clues('si'), ip: clues('ip') }, firstMover: null };
+	const firstMover =
+		record.outcome === 'tripped'
+			? keepFirstMover(firstMoverOf(evidence.input, record, matchedHeld(record, evidence.starts)))
+			: null;
+	return { clues: { si: clues('si'), ip: clues('ip') }, firstMover };
 }
 
 async function compute(job: Job): Promise<{ computed: Computed[]; revision: number } | null> {

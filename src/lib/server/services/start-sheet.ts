@@ -10,6 +10,7 @@ import { listLimits } from '$lib/server/repositories/plant';
 import { listCircuitResults, listCorrections, listStarts, type StartRow } from '$lib/server/repositories/starts';
 import { withOrganisation } from '$lib/server/repositories/transaction';
 import { coverageOf } from './day-strips';
+import { firstMoverShape } from './first-movers';
 import { limitsOf, siteShape, unitShape } from './plant-shapes';
 import { siteClock, siteDate, shortDate } from './site-clock';
 import { figureInUnits, inUnits, iso, startShape, unitsObject } from './start-shapes';
@@ -179,7 +180,7 @@ export async function startSheet(actor: Actor, startId: string, system: UnitSyst
 			sameDay: rows.filter((other) => siteDate(other.startedAt, zone) === day).map(link),
 			title: titleOf(row, zone),
 			tripLine: tripLineOf(row, rows, zone),
-			firstMover: row.extras.firstMover?.[system] ?? null,
+			firstMover: row.extras.firstMover && firstMoverShape(row.extras.firstMover, system),
 			headroom: headroomOf(record, limitsOf(limitRows), system),
 			stateSinceLastRow: stateSince(row, span?.to ?? null, rows.slice(at + 1)),
 			beforeYouReset: record.trip ? beforeReset(record.trip.kind, lastHour, unit.nature.startsPerHour ?? null) : null,

@@ -2,7 +2,7 @@ import type { UnitSystem } from '$lib/model/quantities';
 import type { SeriesId } from '$lib/model/signals';
 import type { StartRecord } from '$lib/model/start';
 import type { Clue, SuspectKey, SuspectsResult } from '$lib/model/suspect';
-import type { FirstMover } from '$lib/model/wire/start-sheet';
+import type { KeptFirstMover } from '$lib/model/first-mover';
 import type { Log } from '$lib/model/wire/log';
 import {
 	bigint,
@@ -28,7 +28,8 @@ import { organisationId, ownRows } from './tenant';
 
 export type StartExtras = {
 	clues: Record<UnitSystem, (Clue & { suspect: SuspectKey })[]>;
-	firstMover: Record<UnitSystem, FirstMover> | null;
+	/** in stored units */
+	firstMover: KeptFirstMover | null;
 };
 
 const bytes = customType<{ data: Uint8Array; driverData: Uint8Array }>({ dataType: () => 'bytea' });
@@ -198,7 +199,7 @@ export const starts = pgTable(
 		endedAt: epochMs(),
 		outcome: text().$type<StartRecord['outcome']>().notNull(),
 		record: jsonb().$type<StartRecord>().notNull(),
-		/** what the analysis says about this start beside its figures, in both systems of units */
+		/** what the analysis says about this start beside its figures */
 		extras: jsonb().$type<StartExtras>().notNull()
 	},
 	(t) => [

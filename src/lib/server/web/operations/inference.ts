@@ -1,4 +1,6 @@
 import { instantSchema } from '$lib/model/wire/common';
+import { comparisonSchema } from '$lib/model/wire/comparison';
+import { nightsSchema } from '$lib/model/wire/nights';
 import { proofSchema, repeatersSchema } from '$lib/model/wire/proof';
 import { z } from 'zod';
 import { operation } from '../operation';
@@ -20,4 +22,27 @@ export const listRepeaters = operation({
 	right: 'readSuspects',
 	query: z.object({ site: z.uuid().optional(), from: instantSchema.optional(), to: instantSchema.optional() }),
 	response: repeatersSchema
+});
+export const getComparison = operation({
+	method: 'get',
+	path: '/api/units/{unit}/comparison',
+	summary: 'Two groups of starts side by side: groups, tests, envelopes and sentences',
+	right: 'readSuspects',
+	query: z.object({
+		a: z.string().max(4000).optional().meta({ description: 'a group expression such as first&clock<11:00, or ids:…' }),
+		b: z.string().max(4000).optional(),
+		circuit: z.string().optional(),
+		from: instantSchema.optional(),
+		to: instantSchema.optional(),
+		units
+	}),
+	response: comparisonSchema
+});
+export const getNights = operation({
+	method: 'get',
+	path: '/api/units/{unit}/nights',
+	summary: 'What the rests say about heater, valves, sensors and non-condensables, and tonight’s log',
+	right: 'readSuspects',
+	query: z.object({ circuit: z.string().default('1'), units }),
+	response: nightsSchema
 });
