@@ -1,7 +1,7 @@
 import type { Series } from '$lib/model/series';
 import type { Circuit } from '../circuit';
 import { valueInForce } from '../series/hold';
-import { lastReading, readingsWithin } from '../series/window';
+import { extreme, lastReading, readingsWithin } from '../series/window';
 import type { Run } from '../starts/runs';
 
 /** What the log shows of a stop, besides alarms. `null` = the log cannot say. */
@@ -78,13 +78,22 @@ function readUnloading(
 	const readings = readingsWithin(capacity, Math.max(run.startedAt, end - reach), end);
 	const last = readings.v.at(-1);
 	if (last === undefined) return { unloaded: null, loaded: loadedByCurrent(circuit, run) };
-	let most = last;
-	for (const v of readings.v) most = Math.max(most, v);
-	const least = circuit.trace('capacity') === undefined ? 0.35 * most : (circuit.leastCapacity ?? 0);
-	const fell = most - last;
-	const nearLeast = last <= Math.max(least + 10, 0.4 * most);
-	const unloaded = fell >= UNLOADING && (nearLeast || fell >= 0.4 * most);
+	const most = extreme(readings, -1) ?? { value: last, at: end };
+	// A slide that starts high and comes down from its first seconds is on its way to the start position.
+	const settling = most.at <= run.startedAt + 30_000;
+	const least = circuit.trace('capacity') === undefined ? 0.35 * most.value : (circuit.leastCapacity ?? 0);
+	const fell = most.value - last;
+	const nearLeast = last <= Math.max(least + 10, 0.4 * most.value);
+	const stopping = fell >= UNLOADING && (nearLeast || fell >= 0.4 * most.value);
+	const unloaded = stopping && !settling && !stillDemanded(circuit, end, spacing, last);
 	return { unloaded, loaded: !unloaded && last > 5 };
+}
+
+/** Is well more demanded than `capacity` % at an instant: then what comes down is not unloading for a stop. */
+function stillDemanded(circuit: Circuit, at: number, spacing: number, capacity: number): boolean {
+	const demand =
+		circuit.map.demand === undefined ? null : lastReading(circuit.map.demand, at, Math.max(30, 2 * spacing));
+	return demand !== null && demand.value >= capacity + 10;
 }
 
 function loadedByCurrent(circuit: Circuit, run: Run): boolean | null {
