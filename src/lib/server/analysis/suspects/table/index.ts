@@ -1,14 +1,10 @@
 import type { SuspectRow } from '../clue-rule';
 import { fouledEvaporator, oilInEvaporator } from './evaporator';
-import {
-	economiserOrInjection,
-	liquidLineRestriction,
-	lowRefrigerantCharge,
-	suctionRestriction,
-	valveOverfeeding,
-	valveUnderfeeding
-} from './feed';
-import { coldCondenserWater, fouledCondenser, lowPressureDifference, nonCondensables } from './high-side';
+import { lowRefrigerantCharge, liquidLineRestriction } from './liquid';
+import { valveOverfeeding, valveUnderfeeding } from './valve';
+import { economiserOrInjection, suctionRestriction } from './vapour';
+import { fouledCondenser, nonCondensables } from './condenser';
+import { coldCondenserWater, lowPressureDifference } from './head';
 import { slideNotLoading, slideNotUnloading } from './load';
 import { lowOil, oilRestriction } from './oil';
 import { limitsOrSetup, plantStaging, starterOrSupply } from './plant';
