@@ -15,6 +15,7 @@ type Common = {
 	weight: number;
 	discriminates?: boolean;
 	applies?: (nature: UnitNature) => 0 | 0.5 | 1;
+	readAt?: ClueRule['readAt'];
 	/** What is read, as the sentence calls it: "superheat". */
 	what: string;
 	quantity: Quantity;
@@ -101,6 +102,7 @@ export function figureClue(
 		discriminates: spec.discriminates ?? false,
 		needs: spec.needs,
 		...(spec.applies ? { applies: spec.applies } : {}),
+		readAt: spec.readAt ?? 'run',
 		read: (context) => {
 			const reading = context.figure(spec.figure, spec.of(context));
 			if (!reading) return null;
@@ -126,6 +128,7 @@ export function driftClue(spec: Common & { figure: FigureKey; needs: readonly Re
 		weight: spec.weight,
 		discriminates: spec.discriminates ?? false,
 		needs: spec.needs,
+		readAt: 'run',
 		read: (context) => {
 			const starts = context.starts.filter((start) => start.figures[spec.figure] !== null);
 			const days = starts.map((start) => start.startedAt / DAY);

@@ -22,6 +22,8 @@ export type ClueRule = {
 	weight: number;
 	/** A positive discriminator: at least one of these must speak before a suspect can stand first. */
 	discriminates?: boolean;
+	/** When the reading is taken: decides how finely and how long it must be logged. Default: around the start. */
+	readAt?: 'start' | 'run' | 'rest';
 	/** Every one of these is needed; what the log lacks is named. */
 	needs: readonly Readable[];
 	/** 1 applies, 0.5 nature unknown, 0 does not apply. */

@@ -1,6 +1,6 @@
 import type { CircuitInput } from '$lib/model/circuit-input';
 import type { Series } from '$lib/model/series';
-import type { DerivedKey, SeriesId, SignalKey, TraceKey } from '$lib/model/signals';
+import { type DerivedKey, type SeriesId, type SignalKey, signalOf } from '$lib/model/signals';
 import { median } from '../statistics/median';
 
 /** A change-of-value reading of a measured quantity holds this long (method.md, "From log to time base"). */
@@ -22,6 +22,12 @@ const PARTS: Readonly<Record<Exclude<DerivedKey, 'duty'>, Readonly<Record<Side, 
 
 /** A trace that can be read over windows: a signal, or a difference of two. */
 export type Readable = SeriesId | Exclude<DerivedKey, 'duty'>;
+
+/** The signals a trace is made of: itself, or the two it is the difference of. */
+export function signalsOf(trace: Readable): SignalKey[] {
+	const parts = trace in PARTS ? PARTS[trace as keyof typeof PARTS] : null;
+	return parts ? [parts.a, parts.b] : [signalOf(trace as SeriesId)];
+}
 
 export type TraceReader = {
 	has: (trace: Readable) => boolean;
@@ -89,7 +95,7 @@ export function traceReader(series: CircuitInput['series']): TraceReader {
 	const lacking = (trace: Readable) =>
 		signals(trace)
 			.filter((id) => (series[id]?.t.length ?? 0) === 0)
-			.map((id) => id.replace(/\.[234]$/, '') as SignalKey);
+			.map(signalOf);
 	const both = (trace: Readable, read: (id: SeriesId) => number | null): number | null => {
 		const [a, b] = signals(trace).map(read);
 		if (a === undefined || a === null) return null;
@@ -104,9 +110,4 @@ export function traceReader(series: CircuitInput['series']): TraceReader {
 		median: (trace, from, to) => both(trace, (id) => median(windowValues(series[id], from, to))),
 		last: (trace, at, withinMs) => both(trace, (id) => lastValue(series[id], at, withinMs))
 	};
-}
-
-/** Is a trace key one this reader can give? */
-export function isReadable(key: TraceKey): key is Exclude<TraceKey, 'duty'> {
-	return key !== 'duty';
 }

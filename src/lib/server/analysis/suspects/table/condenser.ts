@@ -127,6 +127,7 @@ function restGap(context: Context): { value: number; rests: StartRecord[] } | nu
 
 const restTest = (direction: 'for' | 'against', weight: number): ClueRule => ({
 	key: direction === 'for' ? 'condenser-rest-test-positive' : 'condenser-rest-test-passed',
+	readAt: 'rest',
 	direction,
 	weight,
 	discriminates: direction === 'for',

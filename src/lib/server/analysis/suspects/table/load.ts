@@ -55,6 +55,7 @@ export const slideNotUnloading: SuspectRow = {
 	clues: [
 		figureClue({
 			key: 'loaded-from-first-seconds',
+			readAt: 'start',
 			weight: 0.7,
 			discriminates: true,
 			what: 'Capacity from the first seconds',
@@ -108,6 +109,7 @@ export const slideNotUnloading: SuspectRow = {
 		},
 		figureClue({
 			key: 'starts-unloaded',
+			readAt: 'start',
 			direction: 'against',
 			weight: 0.8,
 			what: 'Capacity at start is low:',

@@ -38,6 +38,7 @@ export const lowOil: SuspectRow = {
 	clues: [
 		figureClue({
 			key: 'over-staged-start',
+			readAt: 'start',
 			weight: 0.5,
 			discriminates: true,
 			applies: oilMoved,
@@ -93,6 +94,7 @@ export const lowOil: SuspectRow = {
 		}),
 		figureClue({
 			key: 'start-not-over-staged',
+			readAt: 'start',
 			direction: 'against',
 			weight: 0.35,
 			applies: oilMoved,
@@ -105,6 +107,7 @@ export const lowOil: SuspectRow = {
 		}),
 		figureClue({
 			key: 'start-fully-loaded',
+			readAt: 'start',
 			direction: 'against',
 			weight: 0.45,
 			applies: oilMoved,

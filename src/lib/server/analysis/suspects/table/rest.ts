@@ -9,6 +9,7 @@ import { ramp } from '../strength';
 
 const oilLiftSmall: ClueRule = figureClue({
 	key: 'oil-lift-small',
+	readAt: 'start',
 	weight: 0.4,
 	discriminates: true,
 	what: 'Oil stood over evaporator saturation at the start by',
@@ -117,6 +118,7 @@ export const oilHeater: SuspectRow = {
 	clues: [
 		{
 			key: 'oil-decays-to-ambient',
+			readAt: 'rest',
 			direction: 'for',
 			weight: 0.55,
 			discriminates: true,
@@ -135,6 +137,7 @@ export const oilHeater: SuspectRow = {
 		},
 		{
 			key: 'oil-plateau',
+			readAt: 'rest',
 			direction: 'against',
 			weight: 0.7,
 			needs: ['oilTemp'],
@@ -188,6 +191,7 @@ export const valveLeakingBack: SuspectRow = {
 	clues: [
 		{
 			key: 'equalises-faster-than-before',
+			readAt: 'rest',
 			direction: 'for',
 			weight: 0.6,
 			discriminates: true,

@@ -42,6 +42,7 @@ const saturationAgainstPressure: ClueRule = {
 
 const saturationAtRest: ClueRule = {
 	key: 'saturation-off-the-water-at-rest',
+	readAt: 'rest',
 	direction: 'for',
 	weight: 0.9,
 	discriminates: true,

@@ -1,0 +1,1 @@
+export { tonightsLog, type AdviceInput, type LogPoint, type TonightsLog } from './tonights-log';

@@ -1,0 +1,1 @@
+export { rollingSeason, type OffsetReading, type SeasonTrace } from './rolling-season';
