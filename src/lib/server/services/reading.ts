@@ -125,7 +125,7 @@ class StoringSink implements ReadSink {
 			change: raw.logging === 'change',
 			increment: raw.increment,
 			measure: raw.measure,
-			values: encodeValues(raw.v)
+			values: encodeValues(raw.v, raw.scale)
 		});
 		if (this.#blocks.length >= BLOCKS_PER_INSERT) await this.flush();
 	}

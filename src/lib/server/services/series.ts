@@ -1,6 +1,6 @@
 import type { EventRecord, Series, SeriesMap, TextSeries } from '$lib/model/series';
 import { SIGNALS, signalOf, type SeriesId } from '$lib/model/signals';
-import { decodeTimes, decodeValues, mergeBlocks, type DecodedBlock } from '$lib/server/ingest';
+import { decodeTimes, decodeValues, mergeBlocks, type MergeBlock } from '$lib/server/ingest';
 import {
 	findBlocks,
 	findEvents,
@@ -51,7 +51,7 @@ class SeriesBuilder {
 	build(blocks: readonly FoundBlock[]): Series {
 		const sorted = inSequence(blocks);
 		const decoded = (sorted ?? blocks).map((block) => this.#decode(block));
-		if (!sorted) return mergeBlocks(decoded).series;
+		if (!sorted) return mergeBlocks(decoded)?.series ?? { t: new Float64Array(0), v: new Float64Array(0), logging: 'interval' };
 		const key = sorted.map((block) => partKey(block.logId, block.part)).join(' ');
 		const t = this.#joined.get(key) ?? joined(decoded.map((block) => block.t));
 		this.#joined.set(key, t);
@@ -66,11 +66,12 @@ class SeriesBuilder {
 		};
 	}
 
-	#decode(block: FoundBlock): DecodedBlock {
+	#decode(block: FoundBlock): MergeBlock {
 		const t = this.#times.get(partKey(block.logId, block.part));
 		if (!t) throw new Error(`block ${block.logId} ${block.part} has lost its instants`);
 		return {
-			ordinal: block.ordinal,
+			rank: block.ordinal,
+			order: block.part,
 			t,
 			v: decodeValues(block.values),
 			logging: block.change ? 'change' : 'interval',
