@@ -3,7 +3,7 @@ import type { Quantity } from '$lib/model/quantities';
 import { FIGURE_WORDS, OUTCOME_WORDS, TRIP_KIND_WORDS } from '$lib/model/words';
 import type { Start } from '$lib/model/wire/start';
 import { formatDuration } from '$lib/utils/clock';
-import { toCsv, type Cell } from '$lib/utils/csv';
+import { csvRow } from '$lib/utils/csv';
 import { formatNumber } from '$lib/utils/format';
 
 /** The figures shown before a person asks for all of them: what tells a tripped start from a held one at a glance. */
@@ -120,7 +120,7 @@ export function startsCsv(starts: readonly Start[], units: Readonly<Record<strin
 		header.push(unit ? `${FIGURE_WORDS[key]}, ${unit}` : FIGURE_WORDS[key]);
 	}
 	const yes = (value: boolean) => (value ? 'yes' : 'no');
-	const rows = starts.map((start): Cell[] => [
+	const rows = starts.map((start) => [
 		start.startedAt,
 		start.endedAt,
 		start.circuit,
@@ -136,5 +136,5 @@ export function startsCsv(starts: readonly Start[], units: Readonly<Record<strin
 		start.spacingSeconds,
 		...FIGURE_KEYS.map((key) => start.figures[key] ?? null)
 	]);
-	return toCsv(header, rows);
+	return [header, ...rows].map(csvRow).join('');
 }

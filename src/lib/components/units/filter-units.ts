@@ -1,5 +1,5 @@
 import type { UnitSummary } from '$lib/model/wire/views';
-import { toCsv } from '$lib/utils/csv';
+import { csvRow } from '$lib/utils/csv';
 
 export const UNIT_SORTS = {
 	worst: 'Worst repeater first',
@@ -57,23 +57,21 @@ export function rowInARow(row: UnitSummary): { text: string; trip: boolean } {
 export function unitsCsv(rows: readonly UnitSummary[]): string {
 	const header =
 		'unit,site,starts,start-up trips,first tries,of them tripped,share low,share high,tripped in a row,leading suspect,standing,log coverage,open case,next visit';
-	return toCsv(
-		header.split(','),
-		rows.map((row) => [
-			row.unit.tag,
-			row.site.name,
-			row.starts,
-			row.startupTrips,
-			row.firstTries.m,
-			row.firstTries.k,
-			row.firstTries.low,
-			row.firstTries.high,
-			row.trippedInARow,
-			row.withheld ? null : (row.leading?.name ?? null),
-			row.withheld ? null : (row.leading?.standing ?? null),
-			row.coverage,
-			row.openCase?.number ?? null,
-			row.nextVisit?.date ?? null
-		])
-	);
+	const cells = rows.map((row) => [
+		row.unit.tag,
+		row.site.name,
+		row.starts,
+		row.startupTrips,
+		row.firstTries.m,
+		row.firstTries.k,
+		row.firstTries.low,
+		row.firstTries.high,
+		row.trippedInARow,
+		row.withheld ? null : (row.leading?.name ?? null),
+		row.withheld ? null : (row.leading?.standing ?? null),
+		row.coverage,
+		row.openCase?.number ?? null,
+		row.nextVisit?.date ?? null
+	]);
+	return [header.split(','), ...cells].map(csvRow).join('');
 }
