@@ -17,6 +17,10 @@ export type Refrigerant = z.infer<typeof refrigerantSchema>;
 
 const percentField = z.number().min(0).max(150).nullable();
 
+const flowCurveSchema = z.array(z.object({ drop: z.number().positive(), flow: z.number().positive() })).max(8);
+/** Points of a shell's curve: pressure drop kPa, flow L/s. */
+export type FlowCurve = z.infer<typeof flowCurveSchema>;
+
 /** What kind of machine a unit is: decides which figures, clues and defaults apply. Everything may be unknown (null). */
 export const natureSchema = z
 	.object({
@@ -40,6 +44,9 @@ export const natureSchema = z
 		/** L/s */
 		designEvapFlow: z.number().positive().nullable(),
 		designCondFlow: z.number().positive().nullable(),
+		/** pressure drop over the shell (kPa) against flow (L/s), from the maker's sheet */
+		evapFlowCurve: flowCurveSchema.nullable(),
+		condFlowCurve: flowCurveSchema.nullable(),
 		/** K */
 		designEvapDelta: z.number().positive().nullable(),
 		designCondDelta: z.number().positive().nullable(),
@@ -112,3 +119,30 @@ export const DEFAULT_LIMITS: LimitHistory = {
 	startUpWindow: [{ value: 1200, provenance: 'ours', validFrom: -Infinity }],
 	firstStartRest: [{ value: 21600, provenance: 'ours', validFrom: -Infinity }]
 };
+
+const plateText = z.string().trim().max(120);
+/** What stands on the unit's plate and in its papers, in the office's words. */
+export const namePlateSchema = z
+	.object({
+		serial: plateText,
+		year: z.number().int().min(1900).max(2200).nullable(),
+		place: plateText,
+		/** kg */
+		charge: z.number().positive().nullable(),
+		oilGrade: plateText,
+		/** L */
+		oilCharge: z.number().positive().nullable()
+	})
+	.partial();
+export type NamePlate = z.infer<typeof namePlateSchema>;
+
+/** A person at a site who is no member: who to ask for, who gets the report. */
+export const contactSchema = z.object({
+	name: z.string().trim().min(1).max(120),
+	job: z.string().trim().max(120).default(''),
+	phone: z.string().trim().max(60).default(''),
+	email: z.union([z.email(), z.literal('')]).default(''),
+	/** gets the report of a visit */
+	report: z.boolean().default(false)
+});
+export type Contact = z.infer<typeof contactSchema>;

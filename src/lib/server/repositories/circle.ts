@@ -1,6 +1,6 @@
 import type { Interval } from '$lib/model/series';
 import type { Tx } from '$lib/server/db/client';
-import { cases, changes, checks, tripWords, visits } from '$lib/server/db/schema/circle';
+import { cases, changes, checks, tripWords, visits, type TimelineEntry } from '$lib/server/db/schema/circle';
 import { and, asc, desc, eq, inArray, isNotNull, sql } from 'drizzle-orm';
 
 /** Cases, visits, checks and changes of the transaction's organisation. */
@@ -35,6 +35,11 @@ export function listChecks(tx: Tx, unitId: string): Promise<CheckRow[]> {
 
 export async function findCheck(tx: Tx, id: string): Promise<CheckRow | null> {
 	const [row] = await tx.select().from(checks).where(eq(checks.id, id));
+	return row ?? null;
+}
+
+export async function findCheckByClientKey(tx: Tx, clientKey: string): Promise<CheckRow | null> {
+	const [row] = await tx.select().from(checks).where(eq(checks.clientKey, clientKey));
 	return row ?? null;
 }
 
@@ -84,6 +89,11 @@ export async function insertChange(
 	return { row: first, repeated: true };
 }
 
+export async function findChange(tx: Tx, id: string): Promise<ChangeRow | null> {
+	const [row] = await tx.select().from(changes).where(eq(changes.id, id));
+	return row ?? null;
+}
+
 export async function findCase(tx: Tx, id: string): Promise<CaseRow | null> {
 	const [row] = await tx.select().from(cases).where(eq(cases.id, id));
 	return row ?? null;
@@ -114,6 +124,15 @@ export async function updateCase(tx: Tx, id: string, change: Partial<typeof case
 	await tx.update(cases).set(change).where(eq(cases.id, id));
 }
 
+/** Adds lines to a case's timeline. */
+export async function appendTimeline(tx: Tx, id: string, entries: readonly TimelineEntry[]): Promise<void> {
+	if (entries.length === 0) return;
+	await tx
+		.update(cases)
+		.set({ timeline: sql`${cases.timeline} || ${JSON.stringify(entries)}::jsonb` })
+		.where(eq(cases.id, id));
+}
+
 export async function findVisit(tx: Tx, id: string): Promise<VisitRow | null> {
 	const [row] = await tx.select().from(visits).where(eq(visits.id, id));
 	return row ?? null;
@@ -137,4 +156,8 @@ export async function insertVisit(tx: Tx, row: typeof visits.$inferInsert): Prom
 
 export async function updateVisit(tx: Tx, id: string, change: Partial<typeof visits.$inferInsert>): Promise<void> {
 	await tx.update(visits).set(change).where(eq(visits.id, id));
+}
+
+export async function deleteVisit(tx: Tx, id: string): Promise<void> {
+	await tx.delete(visits).where(eq(visits.id, id));
 }

@@ -4,6 +4,9 @@ import type { Tx } from '$lib/server/repositories/transaction';
 
 /** Field checks and changes of a unit as the analysis knows them. */
 
+/** A flow that the unit's curve does not give is no flow for the analysis. */
+const says = (row: CheckRow): boolean => row.kind !== 'water-flow' || typeof row.readings['flow'] === 'number';
+
 function checkFact(row: CheckRow): FieldCheckFact {
 	const readings = row.readings as Record<string, never>;
 	// The readings were validated against the form of their kind when they were taken in (model/wire/field.ts).
@@ -34,7 +37,7 @@ export async function factsOf(
 	const concerns = (row: { circuit: string | null }, circuit: string): boolean =>
 		row.circuit === null || row.circuit === circuit;
 	return (circuit) => ({
-		checks: checks.filter((row) => concerns(row, circuit)).map(checkFact),
+		checks: checks.filter((row) => concerns(row, circuit) && says(row)).map(checkFact),
 		changes: changes.filter((row) => concerns(row, circuit)).map(changeFact)
 	});
 }

@@ -28,6 +28,16 @@ const onUnit = <T extends { organisationId: unknown; unitId: unknown }>(t: T) =>
 
 export type TimelineEntry = { at: string; by: string | null; kind: string; text: string; link?: string };
 
+export type VisitReport = {
+	wrong: string;
+	found: string;
+	done: string;
+	approvedAt: string | null;
+	approvedBy: string | null;
+	sentAt: string | null;
+	sentTo: string[];
+};
+
 export const cases = pgTable(
 	'cases',
 	{
@@ -52,6 +62,10 @@ export const cases = pgTable(
 		openedFrom: text().notNull().default('call'),
 		startIds: jsonb().$type<string[]>().notNull().default([]),
 		logIds: jsonb().$type<string[]>().notNull().default([]),
+		/** addresses of side-by-side sheets */
+		comparisons: jsonb().$type<string[]>().notNull().default([]),
+		/** a matching start-up trip later than this reopens the case */
+		watchFrom: instant(),
 		timeline: jsonb().$type<TimelineEntry[]>().notNull().default([]),
 		openedAt: instant().notNull().defaultNow(),
 		openedBy: uuid(),
@@ -82,6 +96,9 @@ export const visits = pgTable(
 		purpose: text(),
 		accessNotes: text(),
 		result: text(),
+		/** the client's report, as a person wrote and approved it */
+		report: jsonb().$type<VisitReport>(),
+		briefSentAt: instant(),
 		createdBy: uuid(),
 		createdAt: instant().notNull().defaultNow()
 	},
@@ -195,6 +212,9 @@ export const mails = pgTable(
 		organisationId: organisationId(),
 		id: uuid().notNull().defaultRandom(),
 		kind: text().notNull(),
+		/** a message with the same key is queued once */
+		dedupeKey: text(),
+		personId: uuid(),
 		to: text().notNull(),
 		subject: text().notNull(),
 		text: text().notNull(),
@@ -204,9 +224,15 @@ export const mails = pgTable(
 		tries: integer().notNull().default(0),
 		error: text(),
 		createdAt: instant().notNull().defaultNow(),
+		triedAt: instant(),
 		sentAt: instant()
 	},
-	(t) => [primaryKey({ columns: [t.organisationId, t.id] }), index().on(t.organisationId, t.createdAt), ownRows()]
+	(t) => [
+		primaryKey({ columns: [t.organisationId, t.id] }),
+		uniqueIndex().on(t.organisationId, t.dedupeKey),
+		index().on(t.organisationId, t.createdAt),
+		ownRows()
+	]
 );
 
 /** Who did what, before and after; append only. */

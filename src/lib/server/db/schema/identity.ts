@@ -36,6 +36,8 @@ export const people = pgTable('people', {
 	totpConfirmed: boolean().notNull().default(false),
 	/** last time step used, so that a code works once */
 	totpLastStep: bigint({ mode: 'number' }),
+	/** issuer and subject at the identity provider that this person signed in through */
+	oidcSubject: text().unique(),
 	recoveryHashes: jsonb().$type<string[]>().notNull().default([]),
 	preferences: jsonb().$type<Preferences>().notNull().default({ units: 'ip', paper: 'system' }),
 	/** what mail a person wants: kind → wanted */

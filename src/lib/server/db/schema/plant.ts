@@ -1,4 +1,4 @@
-import type { LimitKey, Provenance, Refrigerant, UnitNature } from '$lib/model/unit';
+import type { Contact, LimitKey, NamePlate, Provenance, Refrigerant, UnitNature } from '$lib/model/unit';
 import {
 	doublePrecision,
 	foreignKey,
@@ -26,6 +26,11 @@ export const sites = pgTable(
 		address: text(),
 		/** m above sea level */
 		altitude: doublePrecision(),
+		contacts: jsonb().$type<Contact[]>().notNull().default([]),
+		/** how to get in, keys, who to ask for */
+		accessNotes: text(),
+		/** who is told at once of a start-up trip that repeats */
+		onCallId: uuid(),
 		createdAt: instant().notNull().defaultNow()
 	},
 	(t) => [primaryKey({ columns: [t.organisationId, t.id] }), uniqueIndex().on(t.organisationId, t.name), ownRows()]
@@ -41,6 +46,11 @@ export const units = pgTable(
 		refrigerant: text().$type<Refrigerant>().notNull(),
 		circuits: integer().notNull(),
 		nature: jsonb().$type<UnitNature>().notNull().default({}),
+		namePlate: jsonb().$type<NamePlate>().notNull().default({}),
+		/** a log is expected at least this often, h */
+		deliveryHours: doublePrecision(),
+		/** the last time a late log was mailed about */
+		lateToldAt: instant(),
 		/** raised with each change of nature, limits or logs: results older than it are stale */
 		revision: integer().notNull().default(0),
 		createdAt: instant().notNull().defaultNow()
