@@ -1,4 +1,5 @@
 import type { Operation } from '../operation';
+import * as circle from './circle';
 import * as inference from './inference';
 import * as logs from './logs';
 import * as people from './people';
@@ -6,6 +7,6 @@ import * as plant from './plant';
 import * as starts from './starts';
 
 /** Every call of the public API, for the OpenAPI document. */
-export const OPERATIONS: readonly Operation[] = [plant, logs, starts, inference, people].flatMap(
+export const OPERATIONS: readonly Operation[] = [plant, logs, starts, inference, circle, people].flatMap(
 	(group) => Object.values(group) as Operation[]
 );
