@@ -6,6 +6,7 @@ ALTER TABLE "mails" ADD COLUMN "tried_at" timestamp (3) with time zone;--> state
 ALTER TABLE "visits" ADD COLUMN "report" jsonb;--> statement-breakpoint
 ALTER TABLE "visits" ADD COLUMN "brief_sent_at" timestamp (3) with time zone;--> statement-breakpoint
 ALTER TABLE "people" ADD COLUMN "oidc_subject" text;--> statement-breakpoint
+ALTER TABLE "starts" ADD COLUMN "extras" jsonb NOT NULL;--> statement-breakpoint
 ALTER TABLE "sites" ADD COLUMN "contacts" jsonb DEFAULT '[]'::jsonb NOT NULL;--> statement-breakpoint
 ALTER TABLE "sites" ADD COLUMN "access_notes" text;--> statement-breakpoint
 ALTER TABLE "sites" ADD COLUMN "on_call_id" uuid;--> statement-breakpoint

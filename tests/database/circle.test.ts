@@ -30,7 +30,7 @@ async function keepStarts(records: StartRecord[]): Promise<void> {
 			tx,
 			office.organisationId,
 			office.unitId,
-			records.map((record) => ({ record, extras: null }))
+			records.map((record) => ({ record, extras: { clues: { si: [], ip: [] }, firstMover: null } }))
 		)
 	);
 }
