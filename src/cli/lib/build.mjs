@@ -2,7 +2,7 @@ import { createHash } from 'node:crypto';
 import { existsSync, readFileSync, readdirSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { root } from './paths.mjs';
-import { run, say } from './run.mjs';
+import { capture, say } from './run.mjs';
 
 const stamp = join(root, 'build', '.sources');
 const SOURCES = [
@@ -44,13 +44,18 @@ function sourcesHash() {
 	return hash.digest('hex');
 }
 
+/** Runs a build step; what it prints is shown only when it fails, because bundlers warn of what is not ours. */
+async function quietly(args) {
+	const { code, output } = await capture('npx', args, { cwd: root, env: { ...process.env, NODE_ENV: 'production' } });
+	if (code !== 0) throw new Error(`npx ${args.join(' ')} failed:\n${output}`);
+}
+
 /** Builds the web and worker programs unless the build on disk is made from these very sources. */
 export async function buildWhenStale() {
 	const now = sourcesHash();
 	if (existsSync(stamp) && readFileSync(stamp, 'utf8') === now) return;
 	say('Building …');
-	const quiet = { cwd: root, stdio: ['ignore', 'ignore', 'inherit'] };
-	await run('npx', ['vite', 'build', '--logLevel', 'error'], quiet);
-	await run('npx', ['vite', 'build', '--mode', 'worker', '--logLevel', 'error'], quiet);
+	await quietly(['vite', 'build', '--logLevel', 'error']);
+	await quietly(['vite', 'build', '--mode', 'worker', '--logLevel', 'error']);
 	writeFileSync(stamp, now);
 }
