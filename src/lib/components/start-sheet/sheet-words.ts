@@ -26,11 +26,12 @@ export function findingOf(start: Start): string {
 	}
 }
 
-/** The sheet's heading: when, and the finding. */
-export function headingOf(start: Start, site: Site, finding?: string): string {
+/** The sheet's heading: the server's, which says when too, or when and what became of it. */
+export function headingOf(start: Start, site: Site, title?: string): string {
+	if (title) return title;
 	const zone = site.timeZone;
 	const when = `${formatDate(start.startedAt, zone, { year: true })} ${formatClock(start.startedAt, zone, { seconds: true })}`;
-	return `${when}: ${finding ?? findingOf(start)}`;
+	return `${when}: ${findingOf(start)}`;
 }
 
 /** The trip line, when the server gave none: "Tripped 06:14:09, 124 s in: …, recorded, sampled every 5 s." */

@@ -10,6 +10,7 @@ const suspect = (
 	directions: ('for' | 'against' | 'missing')[] = []
 ): Suspect => ({
 	key,
+	name: key,
 	rank: 1,
 	standing,
 	clues: directions.map((direction, k) => ({
