@@ -12,14 +12,23 @@ async function work(task: Task): Promise<void> {
 	for (const unitId of (await runReading(task.data)) ?? []) await runAnalysis({ organisationId, unitId });
 }
 
+/** A failed query's message holds all its values: the reason stands in its cause, and the rest is cut. */
+function shortly(error: unknown): string {
+	if (!(error instanceof Error)) return String(error);
+	const reason = error.cause instanceof Error ? `${error.cause.message}; ` : '';
+	const where = error.stack?.split('\n').find((line) => line.includes(' at ')) ?? '';
+	return `${reason}${error.message.slice(0, 300)}${where}`;
+}
+
 const port = parentPort;
 if (!port) throw new Error('read-thread runs as a thread of the worker');
 port.on('message', (task: Task) => {
 	work(task).then(
 		() => port.postMessage({ error: null }),
 		(error: unknown) => {
-			console.error(task.kind, error);
-			port.postMessage({ error: error instanceof Error ? error.message : String(error) });
+			const message = shortly(error);
+			console.error(task.kind, message);
+			port.postMessage({ error: message });
 		}
 	);
 });
