@@ -22,7 +22,9 @@ async function open(): Promise<PgBoss> {
 	});
 	boss.on('error', (error) => console.error('queue', error.message));
 	await boss.start();
-	for (const name of Object.values(JOBS)) await boss.createQueue(name);
+	await boss.createQueue(JOBS.readLog);
+	// Only this policy makes a singleton key hold without a time slot: one waiting recomputation a unit, however many logs.
+	await boss.createQueue(JOBS.analyseUnit, { name: JOBS.analyseUnit, policy: 'short' });
 	return boss;
 }
 
