@@ -49,6 +49,14 @@ export function sitesQuery(fetcher: typeof fetch) {
 	});
 }
 
+/** The units of one site. */
+export function unitsQuery(fetcher: typeof fetch, site: string) {
+	return queryOptions({
+		queryKey: ['units', 'of', site],
+		queryFn: () => getJson<{ units: Unit[] }>(fetcher, pathWith('/api/units', { site, limit: '500' }))
+	});
+}
+
 export function unitQuery(fetcher: typeof fetch, unit: string) {
 	return queryOptions({ queryKey: ['units', unit], queryFn: () => getJson<Unit>(fetcher, `/api/units/${unit}`) });
 }
@@ -88,9 +96,19 @@ export function logQuery(fetcher: typeof fetch, log: string) {
 	return queryOptions({ queryKey: ['logs', log], queryFn: () => getJson<Log>(fetcher, `/api/logs/${log}`) });
 }
 
+/** What the reader noted of each signal, for the quality report. */
+export type SignalNotes = {
+	column: string;
+	signal: string;
+	spacingSeconds: number | null;
+	logging: string;
+	bad: number;
+	notes: string[];
+};
+
 export function previewQuery(fetcher: typeof fetch, log: string) {
 	return queryOptions({
 		queryKey: ['logs', log, 'preview'],
-		queryFn: () => getJson<LogPreview>(fetcher, `/api/logs/${log}/preview`)
+		queryFn: () => getJson<LogPreview & { signals?: SignalNotes[] }>(fetcher, `/api/logs/${log}/preview`)
 	});
 }
