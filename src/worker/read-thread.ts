@@ -1,15 +1,21 @@
 /** A thread of the worker: reads logs and analyses units, with its own connections. */
 import { JOBS, type AnalyseUnitJob, type ReadLogJob } from '$lib/server/jobs/queue';
+import { afterAnalysis } from '$lib/server/services/after-analysis';
 import { runAnalysis } from '$lib/server/services/analysing';
 import { runReading } from '$lib/server/services/reading';
 import { parentPort } from 'node:worker_threads';
 
 type Task = { kind: typeof JOBS.readLog; data: ReadLogJob } | { kind: typeof JOBS.analyseUnit; data: AnalyseUnitJob };
 
+async function analyse(job: AnalyseUnitJob): Promise<void> {
+	await runAnalysis(job);
+	await afterAnalysis(job);
+}
+
 async function work(task: Task): Promise<void> {
-	if (task.kind === JOBS.analyseUnit) return runAnalysis(task.data);
+	if (task.kind === JOBS.analyseUnit) return analyse(task.data);
 	const { organisationId } = task.data;
-	for (const unitId of (await runReading(task.data)) ?? []) await runAnalysis({ organisationId, unitId });
+	for (const unitId of (await runReading(task.data)) ?? []) await analyse({ organisationId, unitId });
 }
 
 /** A failed query's message holds all its values: the reason stands in its cause, and the rest is cut. */

@@ -6,7 +6,6 @@ import type { SuspectsResult } from '$lib/model/suspect';
 import { analyseCircuit } from '$lib/server/analysis/analyse-circuit';
 import { firstMoverOf, matchedHeld } from '$lib/server/analysis/first-mover/first-mover';
 import { cluesOfStart, evaluateSuspects, type SuspectEvidence } from '$lib/server/analysis/suspects';
-import { afterAnalysis } from './after-analysis';
 import { factsOf } from './facts';
 import { keepFirstMover } from './first-movers';
 import { listTripWords, listVisitSpans } from '$lib/server/repositories/circle';
@@ -150,5 +149,4 @@ export async function runAnalysis(job: Job): Promise<void> {
 		const result = await compute(job);
 		if (result) await store(job, result, waiting);
 	});
-	await afterAnalysis(job);
 }
