@@ -19,6 +19,11 @@ it('reads every kind of term', () => {
 	]);
 });
 
+it('takes start ids on their own', () => {
+	const [a, b] = ['0d1e2f30-4151-4617-8a9b-acbdcedf0011', '0d1e2f30-4151-4617-8a9b-acbdcedf0022'];
+	expect(parseGroup(`${a},${b}`).terms).toEqual([{ not: false, kind: 'ids', ids: [a, b] }]);
+});
+
 it('reads figures by short or full name, in °C or °F (by hand: 54 °F is 12.2 °C)', () => {
 	expect(parseGroup('condWaterIn<54F').terms[0]).toMatchObject({ figure: 'condWaterInAtStart', compare: '<' });
 	expect(parseGroup('condWaterIn<54F').terms[0]).toHaveProperty('value', expect.closeTo(12.222, 3));

@@ -14,7 +14,7 @@ import { type FigureKey, FIGURES, type Outcome, OUTCOMES, TRIP_KINDS, type TripK
  *              | "kind:"    trip kind { "," trip kind }
  *              | "before:"  change id | "after:" change id
  *              | "from:" date | "to:" date                 from:2025-06-01     (the site's days, both ends in)
- *              | "ids:"     start id { "," start id }
+ *              | [ "ids:" ] start id { "," start id }
  *   compare    = "<" | "<=" | "=" | ">=" | ">"
  *
  * Figures are named by their key of the model, in stored units (°C, K, kPa, %, s); condWaterIn, waterOut, oilTemp,
@@ -56,6 +56,9 @@ const SHORT_FIGURES: Readonly<Record<string, FigureKey>> = {
 	lift: 'liftAtStart'
 };
 const LENGTHS: Readonly<Record<string, number>> = { s: 1, m: 60, h: 3600, d: 86_400 };
+
+/** Start ids on their own, as an address that lays picked starts side by side has them. */
+const BARE_IDS = /^[0-9a-f]{8}(-[0-9a-f]{4}){3}-[0-9a-f]{12}(,[0-9a-f]{8}(-[0-9a-f]{4}){3}-[0-9a-f]{12})*$/i;
 
 const isFigure = (key: string): key is FigureKey => Object.hasOwn(FIGURES, key);
 
@@ -117,6 +120,7 @@ function termOf(text: string): Term {
 	if (body === '') throw new GroupExpressionError(text, 'a term is empty');
 	const word = WORDS.find((one) => one === body);
 	if (word) return { not, kind: word };
+	if (BARE_IDS.test(body)) return { not, kind: 'ids', ids: body.split(',') };
 	const list = /^([a-z]+):(.*)$/i.exec(body);
 	const comparison = /^([A-Za-z][\w.]*)(<=|>=|<|>|=)(.+)$/.exec(body);
 	if (comparison) {
