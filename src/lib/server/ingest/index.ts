@@ -4,4 +4,4 @@ export { sniff, MOST_BYTES, type Container, type Sniffed } from './container/sni
 export { inspectLog } from './inspect/inspect-log';
 export { readLog } from './read/read-log';
 export { decodeTimes, decodeValues, encodeTimes, encodeValues } from './block-codec';
-export { mergeBlocks, type MergeBlock, type Merged } from './merge-blocks';
+export { mergeBlocks, type DecodedBlock, type Merged } from './merge-blocks';

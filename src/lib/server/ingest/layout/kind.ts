@@ -26,7 +26,9 @@ const MESSAGE = /message|alarm|event|description|text|fault|diagnos|condition|de
 const SEVERITY = /sever|priority|class|level|category|^type$/i;
 const STATE = /state|status|transition|action|^event$|ack|from|to/i;
 const CODE = /code|number|^no\.?$|^id$/i;
-const CLEARED = /clear|reset|end|return|normal|off/i;
+const CLEARED = /clear|reset|end|return|normal|off|gone/i;
+/** A cell that begins with a date: the second time column of an event list. */
+const DATED = /^\s*\d{1,4}[-/.]\d{1,2}[-/.]\d{1,4}\b.*\d:\d/;
 /** Words of alarm lists, of the trade: common practice, no source. */
 const ALARM_TEXT =
 	/alarm|trip|fault|fail|low |high |cut-?out|lock-?out|shut-?down|warning|loss of|limit|protection|error|overload|emergency|reset|clear|ackn/i;
@@ -99,9 +101,7 @@ export function longRoles(
 	const unit = wordy.find(
 		(k) => UNITS.test(k.name) || rows.slice(0, 60).every((row) => isUnitCell(row[k.index] ?? ''))
 	);
-	const status = others.find(
-		(k) => k !== value && k !== unit && STATUS.test(k.name) && knownShare(rows, k.index) < 0.3
-	);
+	const status = others.find((k) => k !== value && k !== unit && STATUS.test(k.name) && k.distinct <= 15);
 	const candidates = wordy.filter((k) => k !== unit && k !== status && k.filled >= 0.9 * rows.length);
 	const names = candidates.filter((k) => NAME.test(k.name) || knownShare(rows, k.index) >= 0.5);
 	if (names.length === 0 && candidates.length === 1 && candidates[0] && named.length > 0) names.push(candidates[0]);
@@ -124,10 +124,12 @@ export function eventRoles(
 	rows: readonly (readonly string[])[],
 	skip: readonly number[]
 ): RowRoles | null {
-	const others = kinds.filter((k) => !skip.includes(k.index) && k.filled > 0);
+	const dated = (k: ColumnKind) => rows.filter((row) => DATED.test(row[k.index] ?? '')).length >= 0.6 * k.filled;
+	const all = kinds.filter((k) => !skip.includes(k.index) && k.filled > 0);
+	const others = all.filter((k) => !dated(k));
 	const measured = others.filter((k) => k.numbers >= 0.5 * k.filled && !CODE.test(k.name) && !SEVERITY.test(k.name));
 	if (others.length === 0 || others.length > 12 || measured.length > 1) return null;
-	const texts = others.filter((k) => isWordy(k) && !/time|date|stamp/i.test(k.name));
+	const texts = others.filter(isWordy);
 	const alarmShare = (k: ColumnKind) =>
 		rows.filter((row) => ALARM_TEXT.test(row[k.index] ?? '')).length / Math.max(1, k.filled);
 	const scored = texts
@@ -148,8 +150,6 @@ export function eventRoles(
 		code: code?.index ?? -1,
 		severity: severity?.index ?? -1,
 		state: state?.index ?? -1,
-		clearedAt:
-			kinds.find((k) => !skip.includes(k.index) && CLEARED.test(k.name) && /time|date|at\b|stamp/i.test(k.name))
-				?.index ?? -1
+		clearedAt: all.find((k) => dated(k) && CLEARED.test(k.name))?.index ?? -1
 	};
 }

@@ -20,6 +20,9 @@ import { RowTime } from './row-time';
 import { targetsOf } from './targets';
 import { WideRows } from './wide';
 
+/** Told of progress now and then, and waited for. */
+type OnProgress = (progress: Progress) => void | Promise<void>;
+
 /** What the readers of the several layouts have in common. */
 type Rows = { plan: RowPlan; dictionaries: Dictionary[] };
 
@@ -44,18 +47,22 @@ class LogReader {
 		readonly ctx: ReadContext,
 		readonly mapping: readonly ColumnMapping[],
 		readonly sink: ReadSink,
-		readonly onProgress: (p: Progress) => void,
+		readonly onProgress: OnProgress,
 		readonly reader: ReaderChoice,
 		files: readonly SourceFile[]
 	) {
 		this.totalBytes = files.reduce((sum, f) => sum + f.size, 0);
 	}
 
-	report(force = false): void {
+	async report(force = false): Promise<void> {
 		const now = Date.now();
 		if (!force && now - this.#reported < REPORT_EVERY) return;
 		this.#reported = now;
-		this.onProgress({ bytes: Math.min(this.bytes, this.totalBytes), totalBytes: this.totalBytes, rows: this.rows });
+		await this.onProgress({
+			bytes: Math.min(this.bytes, this.totalBytes),
+			totalBytes: this.totalBytes,
+			rows: this.rows
+		});
 	}
 
 	/** Reads one file by its plan. */
@@ -138,7 +145,7 @@ class LogReader {
 			rows.dictionaries,
 			this.reader
 		)) {
-			this.report();
+			await this.report();
 			yield;
 		}
 	}
@@ -220,7 +227,7 @@ export async function readLog(
 	inspection: Inspection,
 	mapping: readonly ColumnMapping[],
 	sink: ReadSink,
-	onProgress: (progress: Progress) => void = () => undefined,
+	onProgress: OnProgress = () => undefined,
 	reader: ReaderChoice = 'auto'
 ): Promise<ReadResult> {
 	let log: LogReader | null = null;
@@ -235,7 +242,7 @@ export async function readLog(
 			if (!leaf) throw new LogRefusal('file-missing', `${plan.file} is no longer in the upload.`, plan.file);
 			await log.file(leaf, plan, index, plan.headerText);
 		}
-		log.report(true);
+		await log.report(true);
 		return log.result((i) => inspection.files[i]?.file ?? '');
 	} finally {
 		await close();

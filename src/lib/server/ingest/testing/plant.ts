@@ -122,18 +122,24 @@ export const SI_FIELDS: Field[] = [
 	['Fault', (r) => r.alarm]
 ];
 
+const formats = new Map<string, Intl.DateTimeFormat>();
+
 /** Wall clock of an instant in a zone, as parts. */
 export function wallParts(t: number, zone: string): Record<string, string> {
-	const format = new Intl.DateTimeFormat('en-GB', {
-		timeZone: zone,
-		hourCycle: 'h23',
-		year: 'numeric',
-		month: '2-digit',
-		day: '2-digit',
-		hour: '2-digit',
-		minute: '2-digit',
-		second: '2-digit'
-	});
+	let format = formats.get(zone);
+	if (!format) {
+		format = new Intl.DateTimeFormat('en-GB', {
+			timeZone: zone,
+			hourCycle: 'h23',
+			year: 'numeric',
+			month: '2-digit',
+			day: '2-digit',
+			hour: '2-digit',
+			minute: '2-digit',
+			second: '2-digit'
+		});
+		formats.set(zone, format);
+	}
 	return Object.fromEntries(format.formatToParts(t).map((p) => [p.type, p.value]));
 }
 

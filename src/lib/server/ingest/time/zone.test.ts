@@ -40,10 +40,12 @@ describe('ZoneClock', () => {
 	it('goes there and back for every quarter of an hour of a year', () => {
 		for (const zone of ['America/New_York', 'Europe/Berlin', 'Australia/Lord_Howe', 'Asia/Kathmandu']) {
 			const clock = new ZoneClock(zone);
+			const lost: number[] = [];
 			for (let utc = Date.UTC(2024, 0, 1); utc < Date.UTC(2025, 0, 1); utc += 900_000) {
 				const r = clock.instants(utc + clock.offsetAt(utc));
-				expect(r.first === utc || r.second === utc).toBe(true);
+				if (r.first !== utc && r.second !== utc) lost.push(utc);
 			}
+			expect(lost).toEqual([]);
 		}
 	});
 });
