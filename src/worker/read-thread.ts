@@ -1,9 +1,11 @@
 /** A thread of the worker: reads logs and analyses units, with its own connections. */
-import { JOBS, type AnalyseUnitJob, type ReadLogJob } from '$lib/server/jobs/queue';
+import { enqueueAnalysis, JOBS, type AnalyseUnitJob, type ReadLogJob } from '$lib/server/jobs/queue';
 import { afterAnalysis } from '$lib/server/services/after-analysis';
-import { runAnalysis } from '$lib/server/services/analysing';
+import { moreLogsComing, runAnalysis } from '$lib/server/services/analysing';
 import { runReading } from '$lib/server/services/reading';
 import { parentPort } from 'node:worker_threads';
+
+const SOON_SECONDS = 4;
 
 type Task = { kind: typeof JOBS.readLog; data: ReadLogJob } | { kind: typeof JOBS.analyseUnit; data: AnalyseUnitJob };
 

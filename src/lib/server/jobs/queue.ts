@@ -42,8 +42,8 @@ export async function enqueueReading(job: ReadLogJob): Promise<void> {
 }
 
 /** Recomputes a unit; asked for twice before it runs, it runs once. */
-export async function enqueueAnalysis(job: AnalyseUnitJob): Promise<void> {
-	await (await queue()).send(JOBS.analyseUnit, job, { ...RETRY, singletonKey: job.unitId });
+export async function enqueueAnalysis(job: AnalyseUnitJob, afterSeconds = 0): Promise<void> {
+	await (await queue()).send(JOBS.analyseUnit, job, { ...RETRY, singletonKey: job.unitId, startAfter: afterSeconds });
 }
 
 /** Lets go of the queue. */

@@ -10,9 +10,9 @@ import { factsOf } from './facts';
 import { keepFirstMover } from './first-movers';
 import { listTripWords, listVisitSpans } from '$lib/server/repositories/circle';
 import type { Window } from '$lib/server/repositories/blocks';
-import { listLogs, updateLog, withLock } from '$lib/server/repositories/logs';
+import { listLogs, listLogStates, updateLog, withLock } from '$lib/server/repositories/logs';
 import { findSite, findUnit, listLimits, listUnits, type SiteRow, type UnitRow } from '$lib/server/repositories/plant';
-import { listCorrections, replaceStarts, saveCircuitResult, type StartRow } from '$lib/server/repositories/starts';
+import { listCircuitResults, listCorrections, replaceStarts, saveCircuitResult, type StartRow } from '$lib/server/repositories/starts';
 import { withOrganisation, type Tx } from '$lib/server/repositories/transaction';
 import { limitsOf } from './plant-shapes';
 import { loadEvents, loadSeries, loadTexts } from './series';
@@ -148,5 +148,14 @@ export async function runAnalysis(job: Job): Promise<void> {
 		);
 		const result = await compute(job);
 		if (result) await store(job, result, waiting);
+	});
+}
+
+/** Are other logs of the unit received or being read, after a first analysis has shown something? */
+export async function moreLogsComing(organisationId: string, unitId: string): Promise<boolean> {
+	return withOrganisation(organisationId, async (tx) => {
+		const states = (await listLogStates(tx, [unitId])).map((log) => log.state);
+		const shown = (await listCircuitResults(tx, [unitId])).length > 0;
+		return shown && states.some((state) => state === 'received' || state === 'reading');
 	});
 }
