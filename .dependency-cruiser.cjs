@@ -12,16 +12,35 @@ const BASE = ['^src/lib/model/', '^src/lib/utils/'];
 module.exports = {
 	forbidden: [
 		{ name: 'no-cycles', severity: 'error', from: {}, to: { circular: true } },
-		{ name: 'not-to-unresolvable', severity: 'error', from: { path: '^src/' }, to: { couldNotResolve: true, pathNot: '^(\\$app|\\$env|\\$types|\\./\\$types|virtual:)' } },
+		{
+			name: 'not-to-unresolvable',
+			severity: 'error',
+			from: { path: '^src/' },
+			to: { couldNotResolve: true, pathNot: '^(\\$app|\\$env|\\$types|\\./\\$types|virtual:)' }
+		},
 		layer('model imports nothing of ours', '^src/lib/model/', ['^src/lib/model/']),
 		layer('utils import the model only', '^src/lib/utils/', BASE),
 		layer('state imports model and utils', '^src/lib/state/', [...BASE, '^src/lib/state/']),
-		layer('components import lower tiers', '^src/lib/components/', [...BASE, '^src/lib/state/', '^src/lib/components/', '^src/app\\.css']),
+		layer('components import lower tiers', '^src/lib/components/', [
+			...BASE,
+			'^src/lib/state/',
+			'^src/lib/components/',
+			'^src/app\\.css'
+		]),
 		layer('analysis is pure', `${SERVER}analysis/`, [...BASE, `${SERVER}analysis/`]),
 		layer('ingest is pure', `${SERVER}ingest/`, [...BASE, `${SERVER}ingest/`]),
 		layer('db imports the model', `${SERVER}db/`, [...BASE, `${SERVER}db/`, `${SERVER}config`]),
-		layer('repositories import db and the model', `${SERVER}repositories/`, [...BASE, `${SERVER}repositories/`, `${SERVER}db/`]),
-		layer('auth imports repositories and the model', `${SERVER}auth/`, [...BASE, `${SERVER}auth/`, `${SERVER}repositories/`, `${SERVER}config`]),
+		layer('repositories import db and the model', `${SERVER}repositories/`, [
+			...BASE,
+			`${SERVER}repositories/`,
+			`${SERVER}db/`
+		]),
+		layer('auth imports repositories and the model', `${SERVER}auth/`, [
+			...BASE,
+			`${SERVER}auth/`,
+			`${SERVER}repositories/`,
+			`${SERVER}config`
+		]),
 		layer('services stay above the store', `${SERVER}services/`, [
 			...BASE,
 			`${SERVER}(services|repositories|analysis|ingest|auth|mail|store)/`,
@@ -55,6 +74,10 @@ module.exports = {
 		tsConfig: { fileName: 'tests/layers/tsconfig.json' },
 		extraExtensionsToScan: ['.svelte'],
 		exclude: { path: '(^build|^\\.svelte-kit)' },
-		enhancedResolveOptions: { exportsFields: ['exports'], conditionNames: ['svelte', 'import', 'types', 'node', 'default'], extensions: ['.ts', '.js', '.mjs', '.svelte', '.json'] }
+		enhancedResolveOptions: {
+			exportsFields: ['exports'],
+			conditionNames: ['svelte', 'import', 'types', 'node', 'default'],
+			extensions: ['.ts', '.js', '.mjs', '.svelte', '.json']
+		}
 	}
 };

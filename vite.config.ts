@@ -6,8 +6,11 @@ import { readFileSync } from 'node:fs';
 import { defineConfig, type ViteUserConfig } from 'vitest/config';
 
 const dependencies = Object.keys(
-	(JSON.parse(readFileSync(new URL('./package.json', import.meta.url), 'utf8')) as { dependencies: Record<string, string> })
-		.dependencies
+	(
+		JSON.parse(readFileSync(new URL('./package.json', import.meta.url), 'utf8')) as {
+			dependencies: Record<string, string>;
+		}
+	).dependencies
 );
 const lib = fileURLToPath(new URL('./src/lib', import.meta.url));
 
@@ -41,7 +44,11 @@ const web: ViteUserConfig = {
 		projects: [
 			{
 				extends: true,
-				test: { name: 'unit', environment: 'node', include: ['src/**/*.test.ts', 'fixtures/**/*.test.ts', 'tests/layers/**/*.test.ts'] }
+				test: {
+					name: 'unit',
+					environment: 'node',
+					include: ['src/**/*.test.ts', 'fixtures/**/*.test.ts', 'tests/layers/**/*.test.ts']
+				}
 			},
 			{
 				extends: true,

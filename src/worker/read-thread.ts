@@ -17,7 +17,11 @@ async function analyse(job: AnalyseUnitJob): Promise<void> {
 async function work(task: Task): Promise<void> {
 	if (task.kind === JOBS.analyseUnit) return analyse(task.data);
 	const { organisationId } = task.data;
-	for (const unitId of (await runReading(task.data)) ?? []) await analyse({ organisationId, unitId });
+	for (const unitId of (await runReading(task.data)) ?? []) {
+		// While more logs of the unit are on their way, one analysis soon serves them all.
+		if (await moreLogsComing(organisationId, unitId)) await enqueueAnalysis({ organisationId, unitId }, SOON_SECONDS);
+		else await analyse({ organisationId, unitId });
+	}
 }
 
 /** A failed query's message holds all its values: the reason stands in its cause, and the rest is cut. */

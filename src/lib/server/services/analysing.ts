@@ -7,12 +7,18 @@ import { analyseCircuit } from '$lib/server/analysis/analyse-circuit';
 import { firstMoverOf, matchedHeld } from '$lib/server/analysis/first-mover/first-mover';
 import { cluesOfStart, evaluateSuspects, type SuspectEvidence } from '$lib/server/analysis/suspects';
 import { factsOf } from './facts';
-import { keepFirstMover } from './first-movers';
+import { keepFirstMover } from './first-mover-shapes';
 import { listTripWords, listVisitSpans } from '$lib/server/repositories/circle';
 import type { Window } from '$lib/server/repositories/blocks';
 import { listLogs, listLogStates, updateLog, withLock } from '$lib/server/repositories/logs';
 import { findSite, findUnit, listLimits, listUnits, type SiteRow, type UnitRow } from '$lib/server/repositories/plant';
-import { listCircuitResults, listCorrections, replaceStarts, saveCircuitResult, type StartRow } from '$lib/server/repositories/starts';
+import {
+	listCircuitResults,
+	listCorrections,
+	replaceStarts,
+	saveCircuitResult,
+	type StartRow
+} from '$lib/server/repositories/starts';
 import { withOrganisation, type Tx } from '$lib/server/repositories/transaction';
 import { limitsOf } from './plant-shapes';
 import { loadEvents, loadSeries, loadTexts } from './series';

@@ -1,12 +1,14 @@
+import type { CircuitInput } from '$lib/model/circuit-input';
 import type { Actor } from '$lib/model/people';
 import type { Quantity, UnitSystem } from '$lib/model/quantities';
+import { signalOf, type SeriesId, type SignalKey } from '$lib/model/signals';
 import type { Nights } from '$lib/model/wire/nights';
 import { nightsOf as readNights } from '$lib/server/analysis/nights/nights';
 import type { NightsResult } from '$lib/server/analysis/nights/types';
+import { tonightsLog } from '$lib/server/analysis/logging-advice';
 import { listCircuitResults, listStarts, type StartRow } from '$lib/server/repositories/starts';
 import { withOrganisation } from '$lib/server/repositories/transaction';
 import { circuitInputs } from './analysing';
-import { tonightsLog } from './tonight';
 import { inUnits, iso, unitsObject } from './start-shapes';
 import { visibleUnit } from './units';
 
@@ -42,6 +44,9 @@ function nightsShape(
 	};
 }
 
+const loggedSignals = (input: CircuitInput): Set<SignalKey> =>
+	new Set((Object.keys(input.series) as SeriesId[]).map(signalOf));
+
 /** What a circuit's rests say, and what to log until tomorrow. */
 export async function nightsOf(actor: Actor, unitId: string, circuit: string, system: UnitSystem): Promise<Nights> {
 	return withOrganisation(actor.organisationId, async (tx) => {
@@ -54,7 +59,10 @@ export async function nightsOf(actor: Actor, unitId: string, circuit: string, sy
 			(await listCircuitResults(tx, [unitId])).find((row) => row.circuit === circuit)?.suspects[system] ?? null;
 		return {
 			...nightsShape(result, rows, system),
-			tonight: tonightsLog(input ?? null, records, suspects),
+			tonight:
+				input && suspects
+					? tonightsLog({ suspects, nature: unit.nature, starts: records, logged: loggedSignals(input) })
+					: null,
 			units: unitsObject(system)
 		};
 	});

@@ -51,7 +51,8 @@ class SeriesBuilder {
 	build(blocks: readonly FoundBlock[]): Series {
 		const sorted = inSequence(blocks);
 		const decoded = (sorted ?? blocks).map((block) => this.#decode(block));
-		if (!sorted) return mergeBlocks(decoded)?.series ?? { t: new Float64Array(0), v: new Float64Array(0), logging: 'interval' };
+		if (!sorted)
+			return mergeBlocks(decoded)?.series ?? { t: new Float64Array(0), v: new Float64Array(0), logging: 'interval' };
 		const key = sorted.map((block) => partKey(block.logId, block.part)).join(' ');
 		const t = this.#joined.get(key) ?? joined(decoded.map((block) => block.t));
 		this.#joined.set(key, t);

@@ -10,7 +10,7 @@ import { listLimits } from '$lib/server/repositories/plant';
 import { listCircuitResults, listCorrections, listStarts, type StartRow } from '$lib/server/repositories/starts';
 import { withOrganisation } from '$lib/server/repositories/transaction';
 import { coverageOf } from './day-strips';
-import { firstMoverShape } from './first-movers';
+import { firstMoverShape } from './first-mover-shapes';
 import { limitsOf, siteShape, unitShape } from './plant-shapes';
 import { siteClock, siteDate, shortDate } from './site-clock';
 import { figureInUnits, inUnits, iso, startShape, unitsObject } from './start-shapes';

@@ -2,6 +2,7 @@ import { instantSchema } from '$lib/model/wire/common';
 import { comparisonSchema } from '$lib/model/wire/comparison';
 import { nightsSchema } from '$lib/model/wire/nights';
 import { proofSchema, repeatersSchema } from '$lib/model/wire/proof';
+import { seasonSchema } from '$lib/model/wire/season';
 import { z } from 'zod';
 import { operation } from '../operation';
 
@@ -45,4 +46,12 @@ export const getNights = operation({
 	right: 'readSuspects',
 	query: z.object({ circuit: z.string().default('1'), units }),
 	response: nightsSchema
+});
+export const getSeason = operation({
+	method: 'get',
+	path: '/api/units/{unit}/season',
+	summary: 'Weekly medians at like load with the weeks in which a new level began',
+	right: 'readSuspects',
+	query: z.object({ circuit: z.string().default('1'), units }),
+	response: seasonSchema
 });
