@@ -1,6 +1,6 @@
 import type { EventRecord, Series, SeriesMap, TextSeries } from '$lib/model/series';
 import { SIGNALS, signalOf, type SeriesId } from '$lib/model/signals';
-import { decodeTimes, decodeValues, mergeBlocks, type MergeBlock } from '$lib/server/ingest';
+import { decodeTimes, decodeValues, mergeBlocks, type DecodedBlock } from '$lib/server/ingest';
 import {
 	findBlocks,
 	findEvents,
@@ -67,7 +67,7 @@ class SeriesBuilder {
 		};
 	}
 
-	#decode(block: FoundBlock): MergeBlock {
+	#decode(block: FoundBlock): DecodedBlock {
 		const t = this.#times.get(partKey(block.logId, block.part));
 		if (!t) throw new Error(`block ${block.logId} ${block.part} has lost its instants`);
 		return {
