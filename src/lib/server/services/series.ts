@@ -51,8 +51,7 @@ class SeriesBuilder {
 	build(blocks: readonly FoundBlock[]): Series {
 		const sorted = inSequence(blocks);
 		const decoded = (sorted ?? blocks).map((block) => this.#decode(block));
-		if (!sorted)
-			return mergeBlocks(decoded)?.series ?? { t: new Float64Array(0), v: new Float64Array(0), logging: 'interval' };
+		if (!sorted) return mergeBlocks(decoded).series;
 		const key = sorted.map((block) => partKey(block.logId, block.part)).join(' ');
 		const t = this.#joined.get(key) ?? joined(decoded.map((block) => block.t));
 		this.#joined.set(key, t);
@@ -71,8 +70,7 @@ class SeriesBuilder {
 		const t = this.#times.get(partKey(block.logId, block.part));
 		if (!t) throw new Error(`block ${block.logId} ${block.part} has lost its instants`);
 		return {
-			rank: block.ordinal,
-			order: block.part,
+			ordinal: block.ordinal,
 			t,
 			v: decodeValues(block.values),
 			logging: block.change ? 'change' : 'interval',

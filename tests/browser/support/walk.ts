@@ -1,0 +1,71 @@
+import AxeBuilder from '@axe-core/playwright';
+import { expect, type Browser, type BrowserContext, type Page } from '@playwright/test';
+import { FIXED_NOW, origin, PASSWORD } from './product';
+
+export type Paper = 'day' | 'night';
+export type Person = 'owner' | 'manager' | 'engineer' | 'technician' | 'client';
+export const WIDTHS = { desk: { width: 1440, height: 1000 }, phone: { width: 360, height: 740 } } as const;
+
+/** A signed-in context whose pages fail the test on a console error, with the clock where the product's own stands. */
+export async function signedIn(
+	browser: Browser,
+	person: Person,
+	size: keyof typeof WIDTHS = 'desk',
+	paper: Paper = 'day'
+): Promise<{ context: BrowserContext; page: Page; errors: string[] }> {
+	const context = await browser.newContext({
+		viewport: WIDTHS[size],
+		colorScheme: paper === 'night' ? 'dark' : 'light',
+		hasTouch: size === 'phone',
+		reducedMotion: 'reduce'
+	});
+	const page = await context.newPage();
+	const errors: string[] = [];
+	page.on('console', (message) => {
+		if (message.type() === 'error') errors.push(message.text());
+	});
+	page.on('pageerror', (error) => errors.push(error.message));
+	await page.clock.setFixedTime(new Date(FIXED_NOW));
+	await page.goto(`${origin()}/sign-in`);
+	await page.getByLabel(/mail/i).fill(`${person}@firstpull.test`);
+	await page.getByLabel(/password/i).fill(PASSWORD);
+	await page.getByRole('button', { name: /sign in/i }).click();
+	await page.waitForURL((url) => url.pathname === '/');
+	return { context, page, errors };
+}
+
+/** axe finds nothing wrong with the page, and it is no wider than the window. */
+export async function expectSound(page: Page, name: string): Promise<void> {
+	const { violations } = await new AxeBuilder({ page }).analyze();
+	expect(
+		violations.map((violation) => `${violation.id}: ${violation.nodes[0]?.target.join(' ')}`),
+		name
+	).toEqual([]);
+	const overflow = await page.evaluate(
+		() => document.documentElement.scrollWidth - document.documentElement.clientWidth
+	);
+	expect(overflow, `${name} scrolls sideways`).toBeLessThanOrEqual(0);
+}
+
+/** JSON of the API, asked by the page's own session. */
+export async function api<T>(page: Page, path: string): Promise<T> {
+	const answer = await page.request.get(`${origin()}${path}`);
+	expect(answer.status(), path).toBe(200);
+	return (await answer.json()) as T;
+}
+
+export type Summary = {
+	unit: { id: string; tag: string };
+	starts: number;
+	startupTrips: number;
+	verdict: string | null;
+	leading: { key: string } | null;
+};
+
+/** The unit that leads the list, and its newest tripped start. */
+export async function worst(page: Page): Promise<{ unit: Summary['unit']; start: string }> {
+	const { units } = await api<{ units: Summary[] }>(page, '/api/units?view=summary');
+	const unit = units[0]?.unit ?? { id: '', tag: '' };
+	const { starts } = await api<{ starts: { id: string }[] }>(page, `/api/units/${unit.id}/starts?outcome=tripped`);
+	return { unit, start: starts.at(-1)?.id ?? '' };
+}
