@@ -4,7 +4,9 @@ import type { StartRecord } from '$lib/model/start';
 import { limitAt } from '$lib/model/unit';
 import { prepareCircuit, type Circuit } from './circuit';
 import { readFigures } from './figures/read-figures';
+import { markPinnedCurrent } from './figures/pinned-current';
 import type { FigureContext } from './figures/sheet';
+import { stageOf } from './figures/stages';
 import { activationsOf, type Activation } from './outcomes/activations';
 import type { Verdict } from './outcomes/judge';
 import { proposeShift } from './outcomes/match';
@@ -38,12 +40,14 @@ export function analyseCircuit(input: CircuitInput): CircuitAnalysis {
 		contexts.map((c) => ({ startedAt: c.startedAt, restSeconds: c.restSeconds, outlived: c.seconds >= c.window })),
 		limitAt(input.limits, 'firstStartRest', Infinity)?.value ?? 21_600
 	);
+	const stage = stageOf(circuit);
 	const starts = contexts.map((context, i) => {
 		const verdict = verdicts[i];
 		const episode = episodes[i];
 		if (verdict === undefined || episode === undefined) throw new RangeError(`no verdict on start ${i}`);
-		return { ...record(context, verdict), ...episode, ...readFigures(context, brackets) };
+		return { ...record(context, verdict), ...episode, ...readFigures(context, brackets, stage) };
 	});
+	markPinnedCurrent(circuit, starts);
 	return {
 		circuit: input.circuit,
 		starts,

@@ -41,7 +41,7 @@ export const WATCHES: readonly Watch[] = [
 		'discharge temperature'
 	),
 	watch('oilTemp', 'oilTemp', ['oilTempCutout'], -1, 'high-oil-temperature', 'oil temperature'),
-	watch('oilNet', 'oilNet', ['oilNetCutout'], 1, 'oil-flow', 'net oil pressure', 30),
+	// Before net oil pressure, which follows it down on machines whose oil the difference moves.
 	watch(
 		'systemDelta',
 		'systemDelta',
@@ -51,6 +51,7 @@ export const WATCHES: readonly Watch[] = [
 		'system pressure difference',
 		60
 	),
+	watch('oilNet', 'oilNet', ['oilNetCutout'], 1, 'oil-flow', 'net oil pressure', 30),
 	watch('margin', 'margin', ['marginCutout'], 1, 'oil-flow', 'margin', 60),
 	watch('windingTemp', 'windingTemp', ['windingTempCutout'], -1, 'motor-temperature', 'winding temperature')
 ];

@@ -19,8 +19,8 @@ import { findStall } from './stall';
 
 export type FigureSheet = Figures & { settled: Interval | null; stall: Stall | null };
 
-/** Every figure of a start (method.md, "Figures of a start"), its settled stretch and its stall. */
-export function readFigures(context: FigureContext, learned: readonly LearnedBracket[]): FigureSheet {
+/** Every figure of a start (method.md, "Figures of a start"), its settled stretch and its stall. `stage`: see stages.ts. */
+export function readFigures(context: FigureContext, learned: readonly LearnedBracket[], stage: number): FigureSheet {
 	const sheet = emptyFigures();
 	for (const read of [
 		readStartLoading,
@@ -44,5 +44,5 @@ export function readFigures(context: FigureContext, learned: readonly LearnedBra
 	const stretch = settledStretch(context);
 	readSettled(context, sheet, stretch);
 	readHeadroom(context, sheet, learned);
-	return { ...sheet, settled: 'from' in stretch ? stretch : null, stall: findStall(context) };
+	return { ...sheet, settled: 'from' in stretch ? stretch : null, stall: findStall(context, stage) };
 }

@@ -25,14 +25,15 @@ const RAMP_ENDS = 900_000;
  * The stall of a start: capacity (or speed, % of its own most) flat for 5 min, at least 5 points below raw demand, or
  * with leaving water above setpoint + dead band + 2 °F, and short of its maximum; `limited` when a limit holds it,
  * `cannot-tell` when that is not known. The longest stretch counts, one that is a stall before any other.
+ * `stage`: points between two stages of a stepped machine, which is short of demand only beyond one more.
  * @returns null when there is none, or neither demand nor setpoint is logged
  */
-export function findStall(context: FigureContext): Stall | null {
+export function findStall(context: FigureContext, stage = 0): Stall | null {
 	const load = loadPercent(context);
 	if (load === null) return null;
 	const from = context.startedAt + 180_000;
 	const to = context.stopped ? context.stop - 30_000 : context.run.lastOn;
-	const view = viewOf(context, load);
+	const view = viewOf(context, load, stage);
 	const full = (context.circuit.input.nature.maxCapacity ?? 100) - FULL_BY;
 	const held = (a: number, b: number) => {
 		const fit = view.load.fitWithin(a, b, 0.75);
@@ -48,16 +49,24 @@ export function findStall(context: FigureContext): Stall | null {
 }
 
 /** What the windows of a run are judged by. */
-type View = { load: Sliding; demand: Sliding | null; water: Sliding | null; setpoint: Series | undefined };
+type View = {
+	load: Sliding;
+	demand: Sliding | null;
+	water: Sliding | null;
+	setpoint: Series | undefined;
+	/** How far below raw demand is short of it, points: 5, and a stage more on a stepped machine. */
+	short: number;
+};
 
-function viewOf(context: FigureContext, load: Series): View {
+function viewOf(context: FigureContext, load: Series, stage: number): View {
 	const { demand, evapWaterOut, waterSetpoint } = context.circuit.map;
 	const ran = (series: Series) => sliding(readingsWithin(series, context.startedAt, context.run.lastOn));
 	return {
 		load: ran(load),
 		demand: hasReadings(demand) ? ran(demand) : null,
 		water: hasReadings(evapWaterOut) ? ran(evapWaterOut) : null,
-		setpoint: waterSetpoint
+		setpoint: waterSetpoint,
+		short: SHORT_OF_DEMAND + stage
 	};
 }
 
@@ -79,7 +88,7 @@ function loadPercent(context: FigureContext): Series | null {
 function moreWanted(view: View, stretch: Interval, level: number): boolean {
 	const demand = view.demand?.fitWithin(stretch.from, stretch.to, 0.5) ?? null;
 	if (demand !== null) {
-		if (demand.mean >= level + SHORT_OF_DEMAND) return true;
+		if (demand.mean >= level + view.short) return true;
 		const before = view.demand?.mostBefore(stretch.from) ?? -Infinity;
 		if (before < level + 10 || view.load.mostBefore(stretch.from) > level + 4) return false;
 	}

@@ -32,7 +32,7 @@ export function readStop(
 	commandTells: boolean
 ): StopEvidence {
 	const unloading = readUnloading(circuit, run, stop, spacing);
-	const water = readWater(circuit, stop);
+	const water = readWater(circuit, run.lastOn);
 	return {
 		commandFellAt: commandTells ? commandFall(circuit.input.series.startCommand, run, stop) : null,
 		unloaded: unloading.unloaded,
@@ -118,12 +118,12 @@ function valveClosed(circuit: Circuit, run: Run): boolean {
 	return most >= 10 && last <= 0.2 * most && last <= 5;
 }
 
-/** Leaving water minus setpoint at a stop, K; null when either is not fresh. */
-export function readWater(circuit: Circuit, stop: number): number | null {
+/** Leaving water minus setpoint at the last running reading, K; null when either is not fresh. */
+function readWater(circuit: Circuit, lastOn: number): number | null {
 	const { evapWaterOut, waterSetpoint } = circuit.map;
 	if (evapWaterOut === undefined || waterSetpoint === undefined) return null;
-	const water = lastReading(evapWaterOut, stop, 400);
-	const setpoint = valueInForce('waterSetpoint', waterSetpoint, stop, 900);
+	const water = lastReading(evapWaterOut, lastOn, 400);
+	const setpoint = valueInForce('waterSetpoint', waterSetpoint, lastOn, 900);
 	return water === null || Number.isNaN(setpoint) ? null : water.value - setpoint;
 }
 

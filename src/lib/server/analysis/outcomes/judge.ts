@@ -14,6 +14,8 @@ export type Case = {
 	evidence: StopEvidence | null;
 	inferred: Trip | null;
 	onSchedule: boolean;
+	/** The pumps stopped in the row of the stop although they usually run on; null when that cannot be told. */
+	pumpsStopped: boolean | null;
 	/** A protective quantity was past its configured limit at the stop. */
 	pastLimit: boolean;
 };
@@ -35,9 +37,8 @@ const SUPPLY_KINDS: ReadonlySet<string> = new Set([
 export function judge(one: Case): Verdict {
 	const { run, alarm, evidence } = one;
 	if (alarm?.power) return powerFailed('The log names a power failure.');
-	const all = evidence?.allStopped === true && !normalStop(one);
-	if (all && (alarm === null || SUPPLY_KINDS.has(alarm.kind))) {
-		return powerFailed('Everything on the site that ran stopped at the same moment.');
+	if (supplyWent(one) && (alarm === null || SUPPLY_KINDS.has(alarm.kind))) {
+		return powerFailed('All that ran stopped at the same moment.');
 	}
 	if (alarm !== null) return recorded(alarm, run);
 	const lasted = ((run.endedAt ?? one.logTo) - run.startedAt) / 1000;
@@ -68,6 +69,18 @@ function told(outcome: Outcome, reason: string): Verdict {
 
 function powerFailed(reason: string): Verdict {
 	return told('lost', `Power failed. ${reason}`);
+}
+
+/**
+ * Did the supply go: other units too, or the pumps that usually run on, stopped in the same moment, with nothing of a
+ * normal stop before it? A command that falls in the stop's own row may have gone with the supply.
+ */
+function supplyWent(one: Case): boolean {
+	const { evidence, run } = one;
+	if (evidence === null || evidence.unloaded === true || evidence.valveClosed || one.onSchedule) return false;
+	if (evidence.commandFellAt !== null && evidence.commandFellAt <= run.lastOn) return false;
+	if (one.pumpsStopped === false) return false;
+	return one.pumpsStopped === true || (evidence.allStopped && evidence.commandFellAt === null);
 }
 
 /** Why a stop is normal, as a sentence, or null. */

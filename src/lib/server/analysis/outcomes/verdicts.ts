@@ -9,6 +9,7 @@ import { readStop } from './evidence';
 import { inferTrip, wasPastLimit, type LearnedLimits } from './inferred';
 import { judge, type Verdict } from './judge';
 import { matchAlarms } from './match';
+import { pumpsStoppedToo } from './pumps';
 import { onSchedule, siteClock } from './schedule';
 
 export type Judged = { verdicts: Verdict[]; brackets: LearnedBracket[] };
@@ -32,6 +33,8 @@ export function judgeStarts(
 		c.run.end === 'off' ? readStop(circuit, c.run, c.stop, c.spacing, tells) : null
 	);
 	const scheduled = scheduleMarks(circuit, contexts);
+	const pumps = pumpsStoppedToo(circuit);
+	const pumpsAt = new Map(circuit.runs.map((run, i) => [run.startedAt, pumps[i] ?? null]));
 	const verdict = (i: number, learned: LearnedLimits | null): Verdict => {
 		const context = contexts[i];
 		if (context === undefined) throw new RangeError(`no start ${i}`);
@@ -47,7 +50,12 @@ export function judgeStarts(
 		const one = { run: context.run, window: context.window, logTo: circuit.logTo, alarm, evidence: seen, inferred };
 		const pastLimit = seen !== null && wasPastLimit(circuit, context.run, context.stop, context.spacing);
 		return correctedVerdict(
-			judge({ ...one, onSchedule: scheduled[i] === true, pastLimit }),
+			judge({
+				...one,
+				onSchedule: scheduled[i] === true,
+				pastLimit,
+				pumpsStopped: pumpsAt.get(context.observedAt) ?? null
+			}),
 			context.correction,
 			context.stop
 		);

@@ -36,6 +36,7 @@ describe('readAlarm', () => {
 		['Refrigerant leak detector', 'refrigerant-detector'],
 		['E-STOP', 'emergency-stop'],
 		['Surge protection', 'other'],
+		['Wet discharge gas shutdown', 'other'],
 		['E-217', 'unknown'],
 		['1044', 'unknown'],
 		['General fault', 'unknown'],

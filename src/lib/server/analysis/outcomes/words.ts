@@ -100,7 +100,12 @@ const RULES: readonly Rule[] = [
 		kind: 'external-interlock',
 		all: [/\b(interlock|external|ext|remote|customer|auxiliary|aux|fire|plant safety|bms)\b/]
 	},
-	{ kind: 'other', all: [/\b(surge|purge|vanes?|slide|level|valve|vibration|superheat|bearing|limit)\b/] }
+	{
+		kind: 'other',
+		all: [
+			/\b(surge|purge|vanes?|slide|level|valve|vibration|superheat|bearing|limit|wet|liquid|gas|slugging|flooding|discharge)\b/
+		]
+	}
 ];
 
 const NOTHING =
