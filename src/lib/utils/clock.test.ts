@@ -56,3 +56,19 @@ describe('periods, elapsed and lengths of time', () => {
 		expect(clock.formatDaysSince('2025-01-01T10:00:00Z', '2025-01-24T11:00:00Z')).toBe('23 days');
 	});
 });
+
+describe('days of a site as instants', () => {
+	// IANA tz: New York is 5 h behind UTC in winter, 4 h in summer; its day of 2024-11-03 has 25 hours, of 2024-03-10 23.
+	it('knows days of 23 and 25 hours', () => {
+		expect(clock.dayBegins('2024-11-03', 'America/New_York')).toBe('2024-11-03T04:00:00.000Z');
+		expect(clock.dayEnds('2024-11-03', 'America/New_York')).toBe('2024-11-04T05:00:00.000Z');
+		expect(clock.dayBegins('2024-03-10', 'America/New_York')).toBe('2024-03-10T05:00:00.000Z');
+		expect(clock.dayEnds('2024-03-10', 'America/New_York')).toBe('2024-03-11T04:00:00.000Z');
+	});
+	// IANA tz: Lord Howe is 10:30 ahead in winter and shifts by half an hour.
+	it('knows half hours, and zones ahead of UTC', () => {
+		expect(clock.dayBegins('2024-07-01', 'Australia/Lord_Howe')).toBe('2024-06-30T13:30:00.000Z');
+		expect(clock.dayEnds('2026-12-31', 'UTC')).toBe('2027-01-01T00:00:00.000Z');
+	});
+	it('refuses what is no date', () => expect(() => clock.dayBegins('2026-13-01', 'UTC')).toThrow(RangeError));
+});

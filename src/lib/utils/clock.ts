@@ -144,3 +144,27 @@ export function formatDaysSince(from: string | number, now: string | number): st
 	if (days < 1) return 'today';
 	return days === 1 ? '1 day' : `${formatNumber(days)} days`;
 }
+
+/** How far a zone's clock is ahead of UTC at an instant, ms. */
+function zoneOffset(at: number, timeZone: string): number {
+	const p = partsOf(at, timeZone);
+	const shown = Date.parse(`${isoDate(at, timeZone)}T${p.hour}:${p.minute}:${p.second}Z`);
+	return shown - Math.floor(at / 1000) * 1000;
+}
+
+/**
+ * The instant a date of the site begins, ISO UTC. Where the clock leaps over midnight it is the first instant after.
+ * @throws RangeError when the date is none
+ */
+export function dayBegins(date: string, timeZone: string): string {
+	const midnight = instant(`${date}T00:00:00Z`);
+	// Two rounds: the offset at the guess may be that of the other side of a change of clocks.
+	const guess = midnight - zoneOffset(midnight, timeZone);
+	return new Date(midnight - zoneOffset(guess, timeZone)).toISOString();
+}
+
+/** The instant a date of the site ends, ISO UTC: the beginning of the next. */
+export function dayEnds(date: string, timeZone: string): string {
+	const next = new Date(instant(`${date}T00:00:00Z`) + 86_400_000).toISOString().slice(0, 10);
+	return dayBegins(next, timeZone);
+}
