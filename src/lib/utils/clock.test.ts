@@ -21,8 +21,15 @@ describe('clock and date of a site', () => {
 	it('names the zone of the printing', () => {
 		expect(clock.formatPrintedAt('2025-06-01T12:05:00Z', 'UTC')).toBe('2025-06-01 12:05 UTC');
 	});
+	it('abbreviates zones as their own people do', () => {
+		expect(clock.formatPrintedAt('2026-01-10T12:05:00Z', 'America/Phoenix')).toBe('2026-01-10 05:05 MST');
+		expect(clock.formatPrintedAt('2026-01-10T12:05:00Z', 'Europe/Berlin')).toBe('2026-01-10 13:05 CET');
+	});
 	it('refuses what is no instant', () => {
 		expect(() => clock.formatClock('yesterday', 'UTC')).toThrow(RangeError);
+	});
+	it('gives the minute of the site’s day', () => {
+		expect(clock.minuteOfDay('2026-05-12T03:20:00Z', 'America/Chicago')).toEqual({ date: '2026-05-11', minute: 1340 });
 	});
 	it('splits a date that is already the site’s', () => {
 		expect(clock.dayParts('2026-05-10')).toEqual({ weekday: 'Sun', day: '10', month: 'May', weekend: true });

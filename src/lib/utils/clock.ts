@@ -57,6 +57,14 @@ function partsOf(at: string | number, timeZone: string): Parts {
 	};
 }
 
+/** A zone's short name. English speakers abbreviate only their own zones, so two Englishes are asked. */
+function zoneName(at: string | number, timeZone: string): string {
+	const british = partsOf(at, timeZone).zone;
+	if (!/^GMT[+-]/.test(british)) return british;
+	const american = new Intl.DateTimeFormat('en-US', { timeZone, timeZoneName: 'short' }).formatToParts(instant(at));
+	return american.find((part) => part.type === 'timeZoneName')?.value ?? british;
+}
+
 /** The site's 24-hour clock of an instant: "14:20", with seconds "14:20:37". */
 export function formatClock(at: string | number, timeZone: string, options: { seconds?: boolean } = {}): string {
 	const p = partsOf(at, timeZone);
@@ -85,9 +93,15 @@ export function isoDate(at: string | number, timeZone: string): string {
 	return `${p.year}-${String(month).padStart(2, '0')}-${p.day.padStart(2, '0')}`;
 }
 
+/** The date and the minute of the day at a site, for strips that end at the present. */
+export function minuteOfDay(at: string | number, timeZone: string): { date: string; minute: number } {
+	const p = partsOf(at, timeZone);
+	return { date: isoDate(at, timeZone), minute: Number(p.hour) * 60 + Number(p.minute) };
+}
+
 /** "2026-03-06 14:20 GMT": printed at, with its zone. */
 export function formatPrintedAt(at: string | number, timeZone: string): string {
-	return `${isoDate(at, timeZone)} ${formatClock(at, timeZone)} ${partsOf(at, timeZone).zone}`;
+	return `${isoDate(at, timeZone)} ${formatClock(at, timeZone)} ${zoneName(at, timeZone)}`;
 }
 
 /** A site's date that is already text, YYYY-MM-DD, in its pieces; `weekend` for Saturday and Sunday. */

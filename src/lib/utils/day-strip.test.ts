@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import type { Stroke } from '../model/wire/views';
 import { evenClock } from './day-clock';
-import { barsPath, dayEnd, notRun, stripShapes, unlogged } from './day-strip';
+import { barsPath, dayEnd, loggableUntil, notRun, stripShapes, unlogged } from './day-strip';
 
 // Invented strokes.
 const stroke = (from: number, to: number, outcome: Stroke['outcome']): Stroke => ({
@@ -49,6 +49,19 @@ describe('notRun', () => {
 	it('wants a whole log and no run', () => {
 		expect(notRun({ strokes: [], logged: [[0, 1440]] })).toBe(true);
 		expect(notRun({ strokes: [], logged: [[0, 700]] })).toBe(false);
+	});
+});
+
+describe('loggableUntil', () => {
+	const now = { date: '2026-05-08', minute: 510 };
+	it('ends today at the present minute, and asks nothing of tomorrow', () => {
+		expect(loggableUntil('2026-05-07', now)).toBe(1440);
+		expect(loggableUntil('2026-05-08', now)).toBe(510);
+		expect(loggableUntil('2026-05-09', now)).toBe(0);
+		expect(loggableUntil('2026-05-09', null)).toBe(1440);
+	});
+	it('keeps what is left of today from looking like a gap', () => {
+		expect(unlogged({ logged: [[0, 505]] }, 510)).toEqual([]);
 	});
 });
 

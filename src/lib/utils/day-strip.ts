@@ -32,16 +32,22 @@ export function unlogged(day: Pick<DayStrip, 'logged'>, end = 1440): [number, nu
 	const bare: [number, number][] = [];
 	let at = 0;
 	for (const [from, to] of [...day.logged].sort((a, b) => a[0] - b[0])) {
-		if (from - at >= 10) bare.push([at, Math.min(from, end)]);
+		bare.push([at, Math.min(from, end)]);
 		at = Math.max(at, to);
 	}
-	if (end - at >= 10) bare.push([at, end]);
-	return bare;
+	bare.push([at, end]);
+	return bare.filter(([from, to]) => to - from >= 10);
 }
 
-/** Is there a log for nearly all of the day, and no run in it? */
-export function notRun(day: Pick<DayStrip, 'strokes' | 'logged'>): boolean {
-	return day.strokes.length === 0 && unlogged(day).length === 0;
+/** Where a day's paper ends for "no log": today at the present minute, since what has not been is not missing. */
+export function loggableUntil(date: string, now: { date: string; minute: number } | null): number {
+	if (now === null || date < now.date) return 1440;
+	return date === now.date ? now.minute : 0;
+}
+
+/** Is there a log for nearly all of the day up to `until`, and no run in it? */
+export function notRun(day: Pick<DayStrip, 'strokes' | 'logged'>, until = 1440): boolean {
+	return day.strokes.length === 0 && until > 0 && unlogged(day, until).length === 0;
 }
 
 /** Path of short bars, 1 wide and 3 apart, that fill `from`…`to` px around `y`: "no log". */

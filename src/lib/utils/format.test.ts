@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import {
 	counted,
 	formatBytes,
+	formatCoverage,
 	formatMeasure,
 	formatNumber,
 	formatRange,
@@ -50,6 +51,10 @@ describe('quantities', () => {
 describe('shares, ranges, bytes and counts', () => {
 	it('prints them as the sheets do', () => {
 		expect(formatShare(0.2731)).toBe('27\u00a0%');
+		expect(formatCoverage(0.99996)).toBe('99.9\u00a0%');
+		expect(formatCoverage(1)).toBe('100\u00a0%');
+		expect(formatCoverage(0.5)).toBe('50.0\u00a0%');
+		expect(formatCoverage(0)).toBe('0\u00a0%');
 		expect(formatRange('12', '18')).toBe('12–18');
 		expect(formatBytes(310)).toBe('310\u00a0B');
 		expect(formatBytes(75_200)).toBe('75\u00a0kB');

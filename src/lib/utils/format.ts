@@ -79,6 +79,12 @@ export function formatShare(share: number, decimals = 0): string {
 	return withUnit(formatNumber(share * 100, decimals), '%');
 }
 
+/** Log coverage 0…1, rounded down to a tenth of a per cent: only a whole log prints as 100 %. */
+export function formatCoverage(share: number): string {
+	const tenths = Math.floor(share * 1000 + 1e-9);
+	return withUnit(tenths === 1000 || tenths === 0 ? String(tenths / 10) : formatNumber(tenths / 10, 1), '%');
+}
+
 /** Two ends of a range with an en dash: "12–18". */
 export function formatRange(low: string, high: string): string {
 	return `${low}–${high}`;

@@ -3,7 +3,7 @@ import { METHOD_VERSION } from '$lib/model/circuit-input';
 import type { UnitSystem } from '$lib/model/quantities';
 import type { Site, Unit } from '$lib/model/wire/site-unit';
 import { formatPeriod, formatPrintedAt } from '$lib/utils/clock';
-import { formatShare } from '$lib/utils/format';
+import { formatCoverage } from '$lib/utils/format';
 
 export const MEASURES_IN_WORDS: Readonly<Record<UnitSystem, string>> = {
 	ip: '°F, psi, gpm, tons',
@@ -33,7 +33,7 @@ export function titleCells(
 	];
 	if (sheet.from && sheet.to) cells.push({ label: 'Period', value: formatPeriod(sheet.from, sheet.to) });
 	if (sheet.extra) cells.push(sheet.extra);
-	if (typeof sheet.coverage === 'number') cells.push({ label: 'Log coverage', value: formatShare(sheet.coverage, 1) });
+	if (typeof sheet.coverage === 'number') cells.push({ label: 'Log coverage', value: formatCoverage(sheet.coverage) });
 	if (!sheet.brief) {
 		cells.push({ label: 'Units of measure', value: MEASURES_IN_WORDS[sheet.units] });
 		cells.push({ label: 'Method', value: `version ${METHOD_VERSION}` });
