@@ -26,10 +26,10 @@ const envelope: Envelope = {
 describe('envelopePanel', () => {
 	it('letters both groups, and leaves paper where one is no longer whole', () => {
 		const drawn = envelopePanel(envelope, null, 300, 120);
-		expect(drawn?.panel.xDomain).toEqual([-20, 120]);
+		expect(drawn?.panel.xDomain).toEqual([-20, 96]);
 		expect(drawn?.panel.bareFrom).toEqual({ x: 80, words: 'A no longer whole' });
 		expect(drawn?.labels.map(({ key }) => key).sort()).toEqual(['A', 'B']);
-		expect(drawn?.panel.xTicks.map(({ label }) => label)).toEqual(['0', '30', '45', '60', '90', '120']);
+		expect(drawn?.panel.xTicks.map(({ label }) => label)).toEqual(['0', '30', '45', '60', '90']);
 	});
 	it('is nothing without points', () => {
 		const bare = { count: 0, t: [], median: [], low: [], high: [], wholeUntil: null };

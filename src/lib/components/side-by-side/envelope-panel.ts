@@ -9,9 +9,9 @@ export const LANDMARKS = [30, 45, 60, 90, 120] as const;
 
 type Side = Envelope['a'];
 
-function sideLine(side: Side, key: 'A' | 'B', signal: TraceKey): PanelLine & { label: string } {
+function sideLine(side: Side, key: 'A' | 'B', signal: TraceKey, until: number): PanelLine & { label: string } {
 	const style = traceStyle(signal);
-	const data = side.t.map((x, k) => ({ x, y: side.median[k] ?? null }));
+	const data = side.t.map((x, k) => ({ x, y: x > until ? null : (side.median[k] ?? null) }));
 	// A is the group that is asked about: full line; B stands behind it.
 	return {
 		key,
@@ -23,9 +23,17 @@ function sideLine(side: Side, key: 'A' | 'B', signal: TraceKey): PanelLine & { l
 	};
 }
 
-function sideBand(side: Side, key: 'A' | 'B', signal: TraceKey): PanelBand {
-	const data = side.t.map((x, k) => ({ x, low: side.low[k] ?? null, high: side.high[k] ?? null }));
+function sideBand(side: Side, key: 'A' | 'B', signal: TraceKey, until: number): PanelBand {
+	const within = side.t.filter((x) => x <= until);
+	const data = within.map((x, k) => ({ x, low: side.low[k] ?? null, high: side.high[k] ?? null }));
 	return { key, data, ink: inkOf(traceStyle(signal).family), opacity: key === 'A' ? 0.3 : 0.16 };
+}
+
+/** Medians and quartiles of a group up to an instant. */
+function valuesUntil(side: Side, until: number): number[] {
+	return side.t.flatMap((t, k) =>
+		t > until ? [] : [side.median[k], side.low[k], side.high[k]].map((value) => value ?? Number.NaN)
+	);
 }
 
 /** Where one of the groups stops being whole, and which. */
@@ -54,15 +62,18 @@ export function envelopePanel(
 	const { signal, a, b } = envelope;
 	const times = [...a.t, ...b.t];
 	if (!isTrace(signal) || times.length < 2) return null;
-	const xDomain: [number, number] = [Math.min(...times), Math.max(...times)];
-	const values = [a, b].flatMap(({ median, low, high }) => [...median, ...low, ...high]).map((v) => v ?? Number.NaN);
+	const bare = bareFrom(envelope);
+	const first = Math.min(...times);
+	// A little paper after the group that ends first: enough to say so.
+	const xDomain: [number, number] = [first, bare ? bare.x + 0.16 * (bare.x - first) : Math.max(...times)];
+	const values = [a, b].flatMap((side) => valuesUntil(side, bare?.x ?? xDomain[1]));
 	const axis = panelAxis(limit ? [...values, limit.value] : values, 4);
 	const marks = LANDMARKS.filter((at) => at > xDomain[0] && at <= xDomain[1]);
 	const x = (s: number) => ((s - xDomain[0]) / (xDomain[1] - xDomain[0])) * width;
 	const [low, high] = axis.domain;
 	const y = (v: number) => height - ((v - low) / (high - low)) * height;
-	const lines = [sideLine(b, 'B', signal), sideLine(a, 'A', signal)];
-	const bare = bareFrom(envelope);
+	const until = bare?.x ?? xDomain[1];
+	const lines = [sideLine(b, 'B', signal, until), sideLine(a, 'A', signal, until)];
 	const ink = limit?.text.includes('cut-out') ? 'var(--trip)' : 'var(--ink2)';
 	const labels = labelPanel([...lines].reverse(), {
 		width: bare ? x(bare.x) : width,
@@ -80,7 +91,7 @@ export function envelopePanel(
 		yDomain: axis.domain,
 		xTicks: [0, ...room].map((value) => ({ value, label: String(value) })),
 		yTicks: axis.ticks,
-		bands: [sideBand(b, 'B', signal), sideBand(a, 'A', signal)],
+		bands: [sideBand(b, 'B', signal, until), sideBand(a, 'A', signal, until)],
 		lines,
 		levels: limit ? [{ value: limit.value, kind: limit.text.includes('cut-out') ? 'trip' : 'usual' }] : [],
 		uprights: [{ x: 0, kind: 'start' }, ...marks.map((at) => ({ x: at, kind: 'landmark' as const }))],
@@ -106,4 +117,22 @@ export function landmarkRows(
 ): { signal: string; label: string; quantity: string; described: boolean }[] {
 	const known = new Map(landmarks.flatMap(({ rows }) => rows).map((row) => [row.signal, row]));
 	return [...known.values()].map(({ signal, label, quantity, described }) => ({ signal, label, quantity, described }));
+}
+
+/** Signals that most often part two groups come first; a page shows the first few and folds the rest. */
+const TELLING: readonly string[] = [
+	'lift',
+	'condWaterIn',
+	'evapSaturation',
+	'capacity',
+	'valvePosition',
+	'margin',
+	'superheat',
+	'evapWaterOut'
+];
+
+/** The envelopes in the order they are shown. */
+export function inOrder(envelopes: readonly Envelope[]): Envelope[] {
+	const place = ({ signal }: Envelope) => (TELLING.includes(signal) ? TELLING.indexOf(signal) : TELLING.length);
+	return [...envelopes].sort((a, b) => place(a) - place(b));
 }

@@ -75,7 +75,7 @@ export function stripDomain(
 		});
 		values = [...values, ...near];
 	}
-	const most = height < 56 ? 3 : 4;
+	const most = height < 56 ? 3 : height < 100 ? 4 : 5;
 	const axis = valueTicks(values.map(print), most, spec.least * Math.abs(MEASURES[measure].factor));
 	const [low, high] = fixed ? [print(fixed.low), print(fixed.high)] : [axis.low, axis.high];
 	const yPrinted = (value: number) => height - PAD - ((value - low) / (high - low)) * (height - 2 * PAD);

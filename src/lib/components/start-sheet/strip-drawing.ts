@@ -42,9 +42,6 @@ export type StripDrawing = {
 	gaps: { x: number; width: number; minutes: number }[];
 };
 
-/** Readings farther apart than this many spacings are not joined, even where the log marks no break. */
-const LIFT_SPACINGS = 3;
-
 function drawTrace(
 	trace: StartTrace,
 	set: StartTraces,
@@ -56,7 +53,6 @@ function drawTrace(
 	const style = traceStyle(trace.key);
 	const plane = { x: (ms: number) => toPixel(scale, (ms - set.startMs) / 1000), y: domain.y };
 	const window = { from: set.startMs + scale.from * 1000, to: set.startMs + scale.to * 1000 };
-	const lift = trace.hold ? Infinity : Math.max(60_000, LIFT_SPACINGS * set.spacing);
 	return {
 		key: trace.key,
 		startId: set.startId,
@@ -66,7 +62,7 @@ function drawTrace(
 		ink: inkOf(style.family, role === 'ghost'),
 		width: role === 'own' ? style.width : GHOST_WIDTH,
 		dash: style.dash,
-		path: tracePath(trace, plane, window, { step: trace.hold, lift }),
+		path: tracePath(trace, plane, window, { step: trace.hold }),
 		points: [...lonePoints(trace, plane, window), ...(role === 'own' ? samplePoints(trace, plane, window) : [])],
 		extents: traceExtents(trace, plane.x, plane.y, window, scale.width, trace.hold)
 	};
@@ -105,6 +101,9 @@ function drawLimits(spec: StripSpec, limits: LimitsInForce, domain: StripDomain,
 	});
 }
 
+/** Strips whose stretch below a low trip limit is hatched; elsewhere a start begins below as a matter of course. */
+const HATCHED: Readonly<Record<string, TraceKey>> = { 'low-side': 'evapSaturation', margin: 'margin' };
+
 /** Hatch of the readings below the strip's first low trip limit, from the start on. */
 function drawBelow(
 	drawn: StripDrawing['limits'],
@@ -114,7 +113,7 @@ function drawBelow(
 	y: StripDomain['y']
 ) {
 	const limit = drawn.find(({ kind, edge }) => kind === 'trip' && edge === 'below');
-	const key = spec.key === 'low-side' ? 'evapSaturation' : spec.traces[0]?.key;
+	const key = HATCHED[spec.key];
 	const trace = key ? set.traces.get(key) : undefined;
 	if (!limit || !trace) return '';
 	const plane = { x: (ms: number) => toPixel(scale, (ms - set.startMs) / 1000), y };
