@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { Envelope } from '$lib/model/wire/comparison';
-import { envelopePanel, shiftScale } from './envelope-panel';
+import { envelopePanel, inOrder, landmarkRows, shiftScale } from './envelope-panel';
 
 /** Invented medians of a group, 10 s apart from −20 s on. */
 const side = (until: number, level: number, wholeUntil: number | null): Envelope['a'] => {
@@ -43,5 +43,31 @@ describe('shiftScale', () => {
 		expect(x?.(0)).toBe(55);
 		expect(x?.(-4)).toBe(5);
 		expect(shiftScale({ shift: 0, low: null, high: null }, 110)).toBeNull();
+	});
+});
+
+describe('landmarkRows', () => {
+	it('names each signal once, and none that was never read', () => {
+		const row = (signal: string, a: number | null) => ({
+			signal,
+			label: signal,
+			quantity: 'percent',
+			described: false,
+			a,
+			b: null
+		});
+		const mark = (seconds: number, rows: ReturnType<typeof row>[]) => ({ seconds, countA: 3, countB: 3, rows });
+		const rows = landmarkRows([
+			mark(30, [row('lift', null), row('capacity', 4)]),
+			mark(60, [row('capacity', 5), row('margin', null)])
+		]);
+		expect(rows.map(({ signal }) => signal)).toEqual(['capacity']);
+	});
+});
+
+describe('inOrder', () => {
+	it('puts the telling signals first', () => {
+		const order = inOrder([{ ...envelope, signal: 'demand' }, { ...envelope, signal: 'capacity' }, envelope]);
+		expect(order.map(({ signal }) => signal)).toEqual(['lift', 'capacity', 'demand']);
 	});
 });

@@ -7,6 +7,9 @@ import type { Comparison, Envelope } from '$lib/model/wire/comparison';
 /** Landmarks that groups are read at, seconds from the start (method.md). */
 export const LANDMARKS = [30, 45, 60, 90, 120] as const;
 
+/** The least span worth drawing, so that a steady signal is not blown up: by quantity, in printed units. */
+const LEAST: Readonly<Record<string, number>> = { percent: 20, current: 20, pressure: 10, flow: 10 };
+
 type Side = Envelope['a'];
 
 function sideLine(side: Side, key: 'A' | 'B', signal: TraceKey, until: number): PanelLine & { label: string } {
@@ -67,7 +70,7 @@ export function envelopePanel(
 	// A little paper after the group that ends first: enough to say so.
 	const xDomain: [number, number] = [first, bare ? bare.x + 0.16 * (bare.x - first) : Math.max(...times)];
 	const values = [a, b].flatMap((side) => valuesUntil(side, bare?.x ?? xDomain[1]));
-	const axis = panelAxis(limit ? [...values, limit.value] : values, 4);
+	const axis = panelAxis(limit ? [...values, limit.value] : values, LEAST[envelope.quantity] ?? 4);
 	const marks = LANDMARKS.filter((at) => at > xDomain[0] && at <= xDomain[1]);
 	const x = (s: number) => ((s - xDomain[0]) / (xDomain[1] - xDomain[0])) * width;
 	const [low, high] = axis.domain;
@@ -111,11 +114,12 @@ export function shiftScale(
 	return (value) => width / 2 + (value / most) * reach;
 }
 
-/** The signals read at any landmark, each once, in their first order. */
+/** The signals read at any landmark, each once, in their first order; one that no group has is left out. */
 export function landmarkRows(
 	landmarks: Comparison['landmarks']
 ): { signal: string; label: string; quantity: string; described: boolean }[] {
-	const known = new Map(landmarks.flatMap(({ rows }) => rows).map((row) => [row.signal, row]));
+	const read = landmarks.flatMap(({ rows }) => rows).filter(({ a, b }) => a !== null || b !== null);
+	const known = new Map(read.map((row) => [row.signal, row]));
 	return [...known.values()].map(({ signal, label, quantity, described }) => ({ signal, label, quantity, described }));
 }
 
