@@ -2,7 +2,6 @@ import { theilSen } from '../series/numbers';
 import { spacingWithin } from '../series/spacing';
 import { extreme, type Readings } from '../series/window';
 import { absence, during, put, shortRun, type FigureContext, type Figures } from './sheet';
-import { sliding } from './sliding';
 
 /** minEvapSaturation (°C) and when (s): the least from 5 s after the start to the stop. */
 export function readLeastSaturation(context: FigureContext, sheet: Figures): void {
@@ -22,7 +21,7 @@ const FALL_MOST = 30_000;
 const FALL_LEAST = 15_000;
 
 /**
- * steepestFall, K/min: the most negative least-squares slope of evaporator saturation over any 30 s of the start-up
+ * steepestFall, K/min: the most negative slope of evaporator saturation over any 30 s of the start-up
  * window, two samples at least and no less than 15 s apart. A slope: a falling saturation gives a negative figure.
  */
 export function readSteepestFall(context: FigureContext, sheet: Figures): void {
@@ -38,16 +37,16 @@ export function readSteepestFall(context: FigureContext, sheet: Figures): void {
 	put(sheet, 'steepestFall', shortRun(context, 15));
 }
 
-/** Most negative least-squares slope, K/min, over a reading and those within 30 s after it. null when no stretch fits */
+/** Most negative slope, K/min, between a reading and the last one within 30 s after it. null when no pair fits */
 export function steepestSlope(readings: Readings): number | null {
-	const { fit } = sliding(readings);
 	let best: number | null = null;
 	let j = 0;
 	for (let i = 0; i < readings.t.length; i++) {
 		const from = readings.t[i] ?? NaN;
 		while (j + 1 < readings.t.length && (readings.t[j + 1] ?? Infinity) - from <= FALL_MOST) j++;
-		if (!((readings.t[j] ?? NaN) - from >= FALL_LEAST)) continue;
-		const slope = (fit(i, j + 1)?.slope ?? NaN) * 60;
+		const length = (readings.t[j] ?? NaN) - from;
+		if (!(length >= FALL_LEAST)) continue;
+		const slope = (((readings.v[j] ?? NaN) - (readings.v[i] ?? NaN)) / length) * 60_000;
 		if (best === null || slope < best) best = slope;
 	}
 	return best;

@@ -1,4 +1,4 @@
-import type { StartRecord } from '$lib/model/start';
+import type { Stall, StartRecord } from '$lib/model/start';
 import type { Circuit } from '../circuit';
 import { median, quantile } from '../series/numbers';
 import { readingsWithin } from '../series/window';
@@ -10,6 +10,9 @@ const OTHER_CAPACITY = 8;
 /** A limit is also where the current tops out: no more than this share above it in the runs. */
 const TOPS_OUT = 1.05;
 
+/** Another limit than current holds it. */
+const byAnother = (stall: Stall) => stall.verdict === 'limited' && stall.limiting !== 'motor current';
+
 /**
  * Marks stalls as limited by motor current where the limit is not logged but shows: over three stretches or more the
  * current stood within 4 % of one value while capacity differed by 8 points or more, and the machine never runs above
@@ -19,7 +22,7 @@ const TOPS_OUT = 1.05;
 export function markPinnedCurrent(circuit: Circuit, starts: readonly StartRecord[]): void {
 	const current = circuit.trace('motorCurrent');
 	if (current === undefined) return;
-	const stalls = starts.flatMap(({ stall }) => (stall === null || stall.verdict === 'limited' ? [] : [stall]));
+	const stalls = starts.flatMap(({ stall }) => (stall === null || byAnother(stall) ? [] : [stall]));
 	if (stalls.length < LEAST) return;
 	const amps = stalls.map((stall) => median(readingsWithin(current, stall.from, stall.to).v) ?? NaN);
 	const usual = median(amps) ?? NaN;

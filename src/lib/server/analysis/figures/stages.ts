@@ -8,20 +8,29 @@ const MOST_LEVELS = 8;
 /** Levels held for this share of the running time between them make it stepped. */
 const SHARE = 0.9;
 
+/** A stepped machine whose levels cannot be read is taken for one of four stages, points. */
+const USUAL_STAGE = 25;
+
 /**
- * The capacity between two stages of a machine with stepped capacity, points: the widest distance between neighbouring
- * levels it runs at. Zero for a machine that is not stepped, by its nature, or where nature is silent by its readings:
- * at most eight levels of whole points (±1) that hold nine tenths of the running readings. A stepped machine stands
- * between two stages by nature, so short of demand by less than a stage is no stall.
+ * The capacity between two stages of a machine with stepped capacity, points. Zero for a machine that is not stepped: by
+ * its nature, or where nature is silent by its readings, which are those of stages only when nine tenths of the running
+ * time stand on even parts of 100 % (halves to eighths). A stepped machine stands between two stages by nature, so short
+ * of demand by less than a stage is no stall.
  */
 export function stageOf(circuit: Circuit): number {
 	const control = circuit.input.nature.capacityControl;
 	if (control !== undefined && control !== null && control !== 'steps') return 0;
 	const levels = levelsOf(circuit);
-	if (levels === null) return control === 'steps' ? 25 : 0;
-	let widest = levels[0] ?? 0;
-	levels.forEach((level, i) => (widest = Math.max(widest, level - (levels[i - 1] ?? 0))));
-	return widest;
+	if (control === 'steps') {
+		const apart = (levels ?? []).slice(1).map((level, i) => level - (levels?.[i] ?? 0));
+		return apart.length > 0 ? Math.min(50, Math.max(...apart)) : USUAL_STAGE;
+	}
+	if (levels === null) return 0;
+	for (let parts = 2; parts <= 8; parts++) {
+		const stage = 100 / parts;
+		if (levels.every((level) => Math.abs(level - stage * Math.round(level / stage)) <= 1.5)) return stage;
+	}
+	return 0;
 }
 
 /** Capacity levels that hold most of the running time, rising; null when they do not. */

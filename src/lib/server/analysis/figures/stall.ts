@@ -89,6 +89,8 @@ function moreWanted(view: View, stretch: Interval, level: number): boolean {
 	const demand = view.demand?.fitWithin(stretch.from, stretch.to, 0.5) ?? null;
 	if (demand !== null) {
 		if (demand.mean >= level + view.short) return true;
+		// On a stepped machine demand stands between two stages by nature.
+		if (demand.mean >= level + SHORT_OF_DEMAND) return false;
 		const before = view.demand?.mostBefore(stretch.from) ?? -Infinity;
 		if (before < level + 10 || view.load.mostBefore(stretch.from) > level + 4) return false;
 	}
