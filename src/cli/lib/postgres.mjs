@@ -104,6 +104,18 @@ function running(folder) {
 	return null;
 }
 
+/** The running server, once it is clear that it is not on its way out (a start right after a stop). */
+async function settled(folder) {
+	for (let waited = 0; ; waited += 500) {
+		const found = running(folder);
+		if (!found) return null;
+		const status = readFileSync(join(folder, 'postmaster.pid'), 'utf8').split('\n')[7]?.trim();
+		if (status === 'ready' && waited >= 1000) return found;
+		if (waited > 60_000) throw new Error(`PostgreSQL on ${folder} neither serves nor ends (process ${found.pid}).`);
+		await pause(500);
+	}
+}
+
 function launch(bin, folder, account, port, settings) {
 	const log = `${folder}.log`;
 	const out = openSync(log, 'a');
@@ -141,7 +153,7 @@ export async function startPostgres(folder, settings = {}) {
 	const bin = await binaries();
 	const account = databaseAccount();
 	if (!existsSync(join(folder, 'PG_VERSION'))) await initialise(bin, folder, account);
-	const before = running(folder);
+	const before = await settled(folder);
 	const port = before?.port ?? (await freePort());
 	const started = before ? null : launch(bin, folder, account, port, settings);
 	const password = readFileSync(`${folder}.password`, 'utf8');
