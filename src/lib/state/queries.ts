@@ -2,6 +2,7 @@ import { browser } from '$app/environment';
 import { QueryClient, queryOptions } from '@tanstack/svelte-query';
 import type { UnitSystem } from '$lib/model/quantities';
 import type { Log, LogPreview } from '$lib/model/wire/log';
+import type { Method } from '$lib/model/wire/method';
 import type { Site, Unit } from '$lib/model/wire/site-unit';
 import type { Start } from '$lib/model/wire/start';
 import type { Days, UnitSummary } from '$lib/model/wire/views';
@@ -110,5 +111,13 @@ export function previewQuery(fetcher: typeof fetch, log: string) {
 	return queryOptions({
 		queryKey: ['logs', log, 'preview'],
 		queryFn: () => getJson<LogPreview & { signals?: SignalNotes[] }>(fetcher, `/api/logs/${log}/preview`)
+	});
+}
+
+export function methodQuery(fetcher: typeof fetch) {
+	return queryOptions({
+		queryKey: ['method'],
+		queryFn: () => getJson<Method>(fetcher, '/api/method'),
+		staleTime: Infinity
 	});
 }
