@@ -27,7 +27,9 @@ function scoreOf(rule: NameRule, ideas: ReadonlySet<Idea>, fromUnit: Idea | null
 		else sure *= SPOILERS.has(idea) ? 0.25 : 0.6;
 	}
 	// A word nobody knows may change the meaning, though tags, sites and numbers seldom do.
-	return sure * Math.max(0.8, 1 - 0.035 * unknown);
+	// Where no word says evaporator or condenser, the unknown one might have.
+	const sideless = (rule.signal === 'evapWaterOut' || rule.signal === 'evapWaterIn') && !ideas.has('evap');
+	return sure * Math.max(sideless ? 0.7 : 0.8, 1 - (sideless ? 0.09 : 0.035) * unknown);
 }
 
 /**

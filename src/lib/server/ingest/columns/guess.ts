@@ -62,7 +62,7 @@ function formFit(sample: ColumnSample, signal: SignalKey): number {
 	if (shape.numbers < 0.2 * shape.filled) return 0.5;
 	if (form === 'counter') return shape.rising || shape.distinct <= 1 || shape.most > 50 ? 1 : 0.5;
 	// An analogue that is only ever 0 or 1 is a state under another name, unless the machine never ran.
-	if (shape.binary && shape.distinct === 2 && shape.numbers > 20) return 0.4;
+	if (shape.binary && shape.distinct === 2 && shape.numbers > 20 && !sample.unit) return 0.4;
 	return 1;
 }
 

@@ -80,7 +80,7 @@ function say(phrases: string, ...ideas: Idea[]): void {
 }
 
 say('evap|evaporator|evapr|evp|evaporateur|verdampfer|cooler|evap shell|chiller barrel|barrel', 'evap');
-say('cond|condenser|cnd|condensor|kondensator|verflussiger|condenseur|cdsr', 'cond');
+say('cond|condenser|cnd|condensor|kondensator|verflussiger|condenseur|cdsr|cd|cdr', 'cond');
 say(
 	'chilled water|chw|chilled wtr|chill water|chlw|chl water|ch water|chilled fluid|chilled|chwater|kaltwasser|cold water',
 	'evap',

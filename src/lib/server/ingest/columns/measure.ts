@@ -42,7 +42,10 @@ export function possibleMeasures(sample: ColumnSample, signal: SignalKey, system
 	return [...new Set([...all.ip, ...all.si])];
 }
 
-/** Share of a column's figures inside a signal's range when read in a unit, halved when their median is unusual. */
+/**
+ * Share of a column's figures inside a signal's range when read in a unit. Where the unit is not said, a median that is
+ * unusual halves it: that tells °F from °C.
+ */
 export function fitOf(sample: ColumnSample, signal: SignalKey, measure: MeasureKey, air: number): number {
 	const { wide, usual } = rangeOf(signal);
 	if (MEASURES[measure].quantity === 'current' && measure === 'pctRated') {
@@ -57,6 +60,7 @@ export function fitOf(sample: ColumnSample, signal: SignalKey, measure: MeasureK
 		if (stored >= wide[0] && stored <= wide[1]) within++;
 	}
 	if (n === 0) return 0.5;
+	if (sample.unit?.length === 1) return within / n;
 	const middle = toStored(sample.shape.median, measure, air);
 	return (within / n) * (middle >= usual[0] && middle <= usual[1] ? 1 : 0.5);
 }

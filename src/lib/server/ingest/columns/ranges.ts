@@ -20,7 +20,7 @@ const RANGES: Readonly<Partial<Record<SignalKey, Range>>> = {
 	dischargeTemp: { wide: [-10, 135], usual: [12, 100] },
 	oilTemp: { wide: [-5, 115], usual: [14, 85] },
 	windingTemp: { wide: [-10, 170], usual: [10, 130] },
-	evapPressure: { wide: [5, 1700], usual: [20, 1300] },
+	evapPressure: { wide: [5, 2600], usual: [20, 1800] },
 	condPressure: { wide: [5, 4500], usual: [60, 3600] },
 	dischargePressure: { wide: [5, 4500], usual: [60, 3600] },
 	oilPressure: { wide: [5, 4800], usual: [60, 3800] },

@@ -30,6 +30,12 @@ export function settleRivals(guesses: readonly Guess[]): void {
 			kept.push(guess);
 			continue;
 		}
+		// Two names equally good: neither is sure.
+		const winner = rivals[0];
+		if (winner && !otherFile && guess.confidence > 0.97 * winner.confidence) {
+			winner.confidence *= 0.85;
+			winner.reasons.push(`${guess.sample.column} could be it as well`);
+		}
 		guess.reasons.push(
 			`${rivals[0]?.sample.column ?? 'another column'} carries ${SIGNALS[guess.signal ?? 'alarm'].label} more surely`
 		);
@@ -45,7 +51,13 @@ export function findDuplicates(guesses: readonly Guess[], fileOf: (file: number)
 	for (const [i, a] of guesses.entries()) {
 		if (!a.signal || a.sample.shape.distinct < 6) continue;
 		for (const b of guesses.slice(i + 1)) {
-			if (b.sample.t !== a.sample.t || !b.signal || b.sample.shape.median !== a.sample.shape.median) continue;
+			if (
+				b.sample.t !== a.sample.t ||
+				!b.signal ||
+				b.signal === a.signal ||
+				b.sample.shape.median !== a.sample.shape.median
+			)
+				continue;
 			const pairs = pairedValues(a.sample, b.sample);
 			if (pairs.length < 20 || pairs.some(([x, y]) => x !== y)) continue;
 			const weaker = b.confidence > a.confidence ? a : b;
@@ -59,6 +71,13 @@ export function findDuplicates(guesses: readonly Guess[], fileOf: (file: number)
 	return problems;
 }
 
+/** A working temperature or pressure moves within a day, ms. */
+const DEAD_AFTER = 20 * 3_600_000;
+
+function spanOf(t: readonly number[]): number {
+	return Math.abs((t.at(-1) ?? NaN) - (t[0] ?? NaN));
+}
+
 /** Measured columns that never move although the log goes on. */
 export function findDead(guesses: readonly Guess[], fileOf: (file: number) => string): Problem[] {
 	const problems: Problem[] = [];
@@ -67,7 +86,7 @@ export function findDead(guesses: readonly Guess[], fileOf: (file: number) => st
 			continue;
 		const { shape } = guess.sample;
 		if (['waterSetpoint', 'motorCurrent', 'power', 'speed', 'evapFlow', 'condFlow'].includes(guess.signal)) continue;
-		if (shape.numbers < 100 || shape.distinct > 1) continue;
+		if (shape.numbers < 100 || shape.distinct > 1 || spanOf(guess.sample.t) < DEAD_AFTER) continue;
 		guess.reasons.push('never moves');
 		const message = `"${guess.sample.column}" reads ${shape.least} in every row looked at: a dead sensor or a fixed value.`;
 		problems.push(problem(guess, fileOf(guess.sample.file), 'dead-column', message));
@@ -170,7 +189,9 @@ export function checkRunning(guesses: readonly Guess[]): void {
 			if (on.length < 10 || off.length < 10 || !(most > 0)) continue;
 			const idle = on.filter(([, x]) => x < 0.05 * most).length / on.length;
 			const loaded = off.filter(([, x]) => x > 0.3 * most).length / off.length;
-			if (idle < 0.4 && loaded < 0.4) continue;
+			// A slide may stay where it was while the machine rests; current and power cannot.
+			const parked = signal === 'capacity' || signal === 'speed';
+			if (idle < 0.4 && (loaded < 0.4 || parked)) continue;
 			load.confidence *= 0.75;
 			if (idle > 0.6 && loaded > 0.6) running.confidence *= 0.75;
 			load.reasons.push(`does not move with ${running.sample.column}`);

@@ -23,6 +23,8 @@ export type Draft = {
 };
 
 const MOST_HEAD_ROWS = 240;
+/** Rows that decide which kind of layout a table has. */
+const MOST_JUDGED = 600;
 
 function sampleRows(
 	look: Look,
@@ -74,8 +76,8 @@ export function draftFile(leaf: Leaf, look: Look, ctx: ReadContext): Draft | Pro
 	const decimal = guessDecimal(cells, table.delimiter);
 	const answered = ctx.answers?.decimal;
 	const sign = answered === '.' || answered === ',' ? answered : decimal.decimal;
-	const grid = rows.map((row) => row.cells);
-	const kinds = columnKinds(header.names, grid.slice(0, 600), sign);
+	const grid = rows.slice(0, MOST_JUDGED).map((row) => row.cells);
+	const kinds = columnKinds(header.names, grid, sign);
 	const timing = decideTime(
 		{
 			column,

@@ -129,15 +129,20 @@ export function eventRoles(
 	const others = all.filter((k) => !dated(k));
 	const measured = others.filter((k) => k.numbers >= 0.5 * k.filled && !CODE.test(k.name) && !SEVERITY.test(k.name));
 	if (others.length === 0 || others.length > 12 || measured.length > 1) return null;
-	const texts = others.filter(isWordy);
+	// A class or state is told by few words that recur; the text is what varies, or what is left.
+	const words = others.filter(isWordy);
+	const free = words.filter((k) => !SEVERITY.test(k.name.trim()) && !(STATE.test(k.name) && !MESSAGE.test(k.name)));
+	const texts = free.length > 0 ? free : words;
 	const alarmShare = (k: ColumnKind) =>
 		rows.filter((row) => ALARM_TEXT.test(row[k.index] ?? '')).length / Math.max(1, k.filled);
+	const length = (k: ColumnKind) =>
+		rows.reduce((n, row) => n + (row[k.index]?.length ?? 0), 0) / Math.max(1, rows.length);
 	const scored = texts
-		.map((k) => ({ k, score: alarmShare(k) + (MESSAGE.test(k.name) ? 0.5 : 0) + Math.min(0.3, k.distinct / 100) }))
+		.map((k) => ({ k, score: alarmShare(k) + (MESSAGE.test(k.name) ? 0.5 : 0) + Math.min(0.3, length(k) / 100) }))
 		.sort((a, b) => b.score - a.score);
 	const text = scored[0];
 	const code = others.find((k) => CODE.test(k.name) && k !== text?.k);
-	if ((!text || text.score < 0.55) && !(code && /alarm|fault|event/i.test(code.name))) return null;
+	if ((!text || text.score < 0.5) && !(code && /alarm|fault|event/i.test(code.name))) return null;
 	const rest = others.filter((k) => k !== text?.k && k !== code);
 	const severity = rest.find((k) => SEVERITY.test(k.name));
 	const state = rest.find(
