@@ -61,10 +61,11 @@ export class SheetView {
 		to: Math.min(DAY, Math.max(HOME_WINDOW.to, (this.runSeconds ?? 7200) + 600))
 	});
 
-	/** One speed at home on a phone: the first minutes, with the trip in them. */
-	readonly phoneHome: TimeWindow = $derived({
-		from: -30,
-		to: Math.max(150, Math.min(FAST_WINDOW.to, (this.tripSeconds ?? 0) + 30))
+	/** One speed at home on a phone: the first minutes, with a start-up trip in them. */
+	readonly phoneHome: TimeWindow = $derived.by(() => {
+		const trip = this.tripSeconds ?? 0;
+		const length = Math.max(150, trip < 1200 ? trip * 1.08 + 20 : FAST_WINDOW.to);
+		return { from: -Math.max(30, Math.round(length * 0.12)), to: Math.round(length) };
 	});
 
 	readonly scale: PaperScale | null = $derived.by(() => {

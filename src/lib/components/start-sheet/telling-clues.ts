@@ -3,7 +3,7 @@ import type { StartSheet } from '$lib/model/wire/start-sheet';
 type StartClue = StartSheet['clues'][number];
 
 /** How many clues of each direction a sheet has room for. */
-const ROOM = { for: 5, against: 3, missing: 2 } as const;
+const ROOM = { for: 3, against: 2, missing: 1 } as const;
 /** Two clues of one suspect say what there is to say; the rest stands on the suspects' sheet. */
 const EACH = 2;
 
