@@ -40,8 +40,9 @@ for (const size of SIZES)
 		});
 
 test('the sign-in page is sound', async ({ browser }) => {
-	const page = await browser.newPage();
+	const context = await browser.newContext();
+	const page = await context.newPage();
 	await page.goto(`${process.env.FIRSTPULL_ORIGIN}/sign-in`);
 	await expectSound(page, '/sign-in');
-	await page.close();
+	await context.close();
 });

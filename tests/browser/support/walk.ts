@@ -37,14 +37,16 @@ export async function signedIn(
 /** axe finds nothing wrong with the page, and it is no wider than the window. */
 export async function expectSound(page: Page, name: string): Promise<void> {
 	const { violations } = await new AxeBuilder({ page }).analyze();
-	expect(
-		violations.map((violation) => `${violation.id}: ${violation.nodes[0]?.target.join(' ')}`),
-		name
-	).toEqual([]);
+	expect
+		.soft(
+			violations.map((violation) => `${violation.id}: ${violation.nodes[0]?.target.join(' ')}`),
+			name
+		)
+		.toEqual([]);
 	const overflow = await page.evaluate(
 		() => document.documentElement.scrollWidth - document.documentElement.clientWidth
 	);
-	expect(overflow, `${name} scrolls sideways`).toBeLessThanOrEqual(0);
+	expect.soft(overflow, `${name} scrolls sideways`).toBeLessThanOrEqual(0);
 }
 
 /** JSON of the API, asked by the page's own session. */
