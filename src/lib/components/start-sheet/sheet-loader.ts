@@ -3,7 +3,7 @@ import { fetchTraces, type StartTraces, type TraceLevel } from './start-traces';
 import type { SheetState } from './sheet-state.svelte';
 
 /** px of a plot on a printed landscape page; the sheet is scaled to the page from the width it was drawn for. */
-const PRINTED = { width: 740, narrow: false };
+const PRINTED = { width: 780, narrow: false };
 
 /** Brings the traces of a sheet: of the start, of the ghost, of further starts, at the level the view asks for. */
 export class SheetLoader {
@@ -101,5 +101,6 @@ export class SheetLoader {
 		const { width, narrow } = begins ? PRINTED : this.#screen;
 		view.width = width;
 		view.narrow = narrow;
+		view.compact = begins;
 	}
 }

@@ -30,6 +30,8 @@ export class SheetView {
 	/** px of the plot; 0 until the page knows. */
 	width = $state(0);
 	narrow = $state(false);
+	/** Strips are drawn lower, so that a sheet fits its printed page. */
+	compact = $state(false);
 	/** null: home. */
 	window = $state.raw<TimeWindow | null>(null);
 	/** The stretch being dragged with the mouse, px. */
