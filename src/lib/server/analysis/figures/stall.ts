@@ -121,7 +121,8 @@ function describe(context: FigureContext, load: Series, stretch: Interval): Stal
 	const limiting = limitingOver(context.circuit, stretch, level);
 	// With water alone the other circuit may be the one that is to load: only at its own maximum does this one count.
 	const unknownSister = byWater && limiting.verdict === 'stall' && sisterHasRoom(context, stretch);
-	const verdict = unknownSister ? ('cannot-tell' as const) : limiting.verdict;
+	const unknown = limiting.verdict === 'stall' && (unknownSister || cameDown(context, load, stretch, level));
+	const verdict = unknown ? ('cannot-tell' as const) : limiting.verdict;
 	return {
 		from: stretch.from,
 		to: stretch.to,
@@ -130,6 +131,28 @@ function describe(context: FigureContext, load: Series, stretch: Interval): Stal
 		verdict,
 		limiting: limiting.limiting
 	};
+}
+
+/** A capacity that came down by this much to where it stands, while more was demanded, was taken down [ours]. */
+const TAKEN_DOWN = 8;
+
+/**
+ * Did the capacity come down to its level in the quarter of an hour before, while demand stood above it? Then something
+ * that is not logged holds it (an outside limit): a machine that stalls stops on its way up. Not in the first ten
+ * minutes, where a slide may come down to its start position.
+ */
+function cameDown(context: FigureContext, load: Series, stretch: Interval, level: number): boolean {
+	const from = Math.max(context.startedAt + 600_000, stretch.from - 900_000);
+	const { demand } = context.circuit.map;
+	if (demand === undefined || stretch.from - from < 120_000 || circuitNamesLimits(context)) return false;
+	const before = quantile(readingsWithin(load, from, stretch.from).v, 0.9) ?? -Infinity;
+	const wanted = median(readingsWithin(demand, stretch.from - 120_000, stretch.from).v) ?? -Infinity;
+	return before >= level + TAKEN_DOWN && wanted >= level + SHORT_OF_DEMAND;
+}
+
+/** A log that names its limits would have named this one. */
+function circuitNamesLimits(context: FigureContext): boolean {
+	return context.circuit.input.texts.activeLimit !== undefined;
 }
 
 function sisterHasRoom(context: FigureContext, stretch: Interval): boolean {
