@@ -98,6 +98,18 @@ describe('findStall', () => {
 		expect([found(null), found(60), found(100)]).toEqual(['cannot-tell', 'cannot-tell', 'stall']);
 	});
 
+	it('takes a met setpoint for what holds it, whatever the demand says', () => {
+		expect(stall({ evapWaterOut: () => 6.8 })).toMatchObject({ verdict: 'limited', limiting: 'met setpoint' });
+		expect(stall({ evapWaterOut: () => 6.8, capacity: upTo(50) }, rated, 5, 25)).toBeNull();
+	});
+
+	it('cannot tell where the capacity was taken down while more was demanded', () => {
+		const takenDown: Shape = (_, s) => (Number.isNaN(s) ? 0 : s < 1500 ? Math.min(45 + s / 6, 100) : 60);
+		expect(stall({ capacity: takenDown })?.verdict).toBe('cannot-tell');
+		const limits = { ...rated, texts: { activeLimit: { t: Float64Array.of(MIDNIGHT), text: ['None'] } } };
+		expect(stall({ capacity: takenDown }, limits)?.verdict).toBe('stall');
+	});
+
 	it('takes an early hold that goes on loading for a ramp', () => {
 		const ramp: Shape = (_, s) => (s < 660 ? 50 : Math.min(50 + (s - 660) / 6, 100));
 		expect(stall({ capacity: ramp })).toBeNull();

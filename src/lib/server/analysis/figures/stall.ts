@@ -43,7 +43,7 @@ export function findStall(context: FigureContext, stage = 0): Stall | null {
 	};
 	const width = Math.max(FLAT_MS, 2000 * context.spacing);
 	const stretches = goodStretches(from, to, width, 30_000, held).filter((s) => !isRamp(context, load, s));
-	const stalls = stretches.map((stretch) => describe(context, load, stretch));
+	const stalls = stretches.map((stretch) => describe(context, load, stretch, waterOver(view, stretch)));
 	const rank = (stall: Stall) => (stall.verdict === 'stall' ? 1e12 : 0) + (stall.to - stall.from);
 	return stalls.reduce<Stall | null>((a, b) => (a !== null && rank(a) >= rank(b) ? a : b), null);
 }
@@ -56,6 +56,7 @@ type View = {
 	setpoint: Series | undefined;
 	/** How far below raw demand is short of it, points: 5, and a stage more on a stepped machine. */
 	short: number;
+	stepped: boolean;
 };
 
 function viewOf(context: FigureContext, load: Series, stage: number): View {
@@ -66,7 +67,8 @@ function viewOf(context: FigureContext, load: Series, stage: number): View {
 		demand: hasReadings(demand) ? ran(demand) : null,
 		water: hasReadings(evapWaterOut) ? ran(evapWaterOut) : null,
 		setpoint: waterSetpoint,
-		short: SHORT_OF_DEMAND + stage
+		short: SHORT_OF_DEMAND + stage,
+		stepped: stage > 0
 	};
 }
 
@@ -83,22 +85,31 @@ function loadPercent(context: FigureContext): Series | null {
 /**
  * Is more wanted over a stretch at `level` %? By raw demand 5 points above it, or by warm water where no demand is
  * logged or demand came down to the capacity (it had stood 10 points above while capacity never passed this level: it
- * follows the capacity, so it is not raw).
+ * follows the capacity, so it is not raw). A stepped machine whose water is at its setpoint stands where it should.
  */
 function moreWanted(view: View, stretch: Interval, level: number): boolean {
 	const demand = view.demand?.fitWithin(stretch.from, stretch.to, 0.5) ?? null;
 	if (demand !== null) {
-		if (demand.mean >= level + view.short) return true;
+		if (demand.mean >= level + view.short) return !(view.stepped && setpointMet(waterOver(view, stretch)));
 		// On a stepped machine demand stands between two stages by nature.
 		if (demand.mean >= level + SHORT_OF_DEMAND) return false;
 		const before = view.demand?.mostBefore(stretch.from) ?? -Infinity;
 		if (before < level + 10 || view.load.mostBefore(stretch.from) > level + 4) return false;
 	}
-	const water = view.water?.fitWithin(stretch.from, stretch.to, 0.5) ?? null;
-	if (water === null || view.setpoint === undefined) return false;
-	const setpoint = valueInForce('waterSetpoint', view.setpoint, stretch.to, 900);
-	return water.mean - setpoint > DEAD_BAND + WATER_ABOVE;
+	const water = waterOver(view, stretch);
+	return water !== null && water > DEAD_BAND + WATER_ABOVE;
 }
+
+/** Mean leaving water minus setpoint over a stretch, K; null where either is not logged. */
+function waterOver(view: View, stretch: Interval): number | null {
+	const water = view.water?.fitWithin(stretch.from, stretch.to, 0.5) ?? null;
+	if (water === null || view.setpoint === undefined) return null;
+	const setpoint = valueInForce('waterSetpoint', view.setpoint, stretch.to, 900);
+	return Number.isNaN(setpoint) ? null : water.mean - setpoint;
+}
+
+/** Water within its dead band asks for no more, whatever a demand figure says. */
+const setpointMet = (above: number | null) => above !== null && above <= DEAD_BAND;
 
 function demandOver(context: FigureContext, stretch: Interval): number | null {
 	const demand = context.circuit.map.demand;
@@ -114,11 +125,15 @@ function isRamp(context: FigureContext, load: Series, stretch: Interval): boolea
 	return (quantile(after, 0.9) ?? NaN) >= level + 5;
 }
 
-function describe(context: FigureContext, load: Series, stretch: Interval): Stall {
+function describe(context: FigureContext, load: Series, stretch: Interval, water: number | null): Stall {
 	const level = median(readingsWithin(load, stretch.from, stretch.to).v) ?? NaN;
 	const demand = demandOver(context, stretch);
 	const byWater = demand === null || demand < level + SHORT_OF_DEMAND;
 	const limiting = limitingOver(context.circuit, stretch, level);
+	if (!byWater && limiting.verdict === 'stall' && setpointMet(water)) {
+		limiting.verdict = 'limited';
+		limiting.limiting = 'met setpoint';
+	}
 	// With water alone the other circuit may be the one that is to load: only at its own maximum does this one count.
 	const unknownSister = byWater && limiting.verdict === 'stall' && sisterHasRoom(context, stretch);
 	const unknown = limiting.verdict === 'stall' && (unknownSister || cameDown(context, load, stretch, level));
