@@ -18,13 +18,16 @@ export function reduceTrace(t: Float64Array, v: Float64Array, columns: number): 
 	const first = t[0] ?? 0;
 	const last = t.at(-1) ?? 0;
 	if (t.length <= columns * 5 || last <= first) return { t, v };
-	const scale = columns / (last - first);
+	const width = (last - first) / columns;
 	const kept = new Int32Array(columns * 5 + 5);
 	let count = 0;
-	for (let from = 0; from < t.length;) {
-		const column = Math.min(columns - 1, Math.floor(((t[from] ?? 0) - first) * scale));
+	let column = 0;
+	for (let from = 0; from < t.length; ) {
+		// The stretch this reading lies in; empty ones are passed over.
+		while (column < columns - 1 && (t[from] ?? 0) >= first + (column + 1) * width) column++;
+		const end = column === columns - 1 ? Infinity : first + (column + 1) * width;
 		let to = from + 1;
-		while (to < t.length && Math.min(columns - 1, Math.floor(((t[to] ?? 0) - first) * scale)) === column) to++;
+		while (to < t.length && (t[to] ?? 0) < end) to++;
 		count = keepStretch(v, from, to, kept, count);
 		from = to;
 	}
@@ -42,13 +45,19 @@ function keepStretch(v: Float64Array, from: number, to: number, kept: Int32Array
 	let least = -1;
 	let most = -1;
 	let gap = -1;
+	let low = Infinity;
+	let high = -Infinity;
 	for (let i = from; i < to; i++) {
 		const value = v[i] ?? NaN;
-		if (Number.isNaN(value)) gap = gap < 0 ? i : gap;
-		else {
-			if (least < 0 || value < (v[least] ?? 0)) least = i;
-			if (most < 0 || value > (v[most] ?? 0)) most = i;
+		if (value < low) {
+			low = value;
+			least = i;
 		}
+		if (value > high) {
+			high = value;
+			most = i;
+		}
+		if (value !== value && gap < 0) gap = i;
 	}
 	const places = [...new Set([from, least, most, gap, to - 1])].filter((place) => place >= 0).sort((a, b) => a - b);
 	for (const place of places) kept[count++] = place;
