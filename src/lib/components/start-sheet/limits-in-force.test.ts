@@ -13,6 +13,11 @@ describe('limitsInForce', () => {
 		expect(limitsInForce(limits, changed - 1).evapSaturationCutout?.value).toBe(-1);
 		expect(limitsInForce(limits, changed).evapSaturationCutout?.value).toBe(-2);
 	});
+	it('falls back on this product’s own choice, and a person’s value beats it', () => {
+		expect(limitsInForce({}, changed).firstStartRest).toMatchObject({ value: 21_600, provenance: 'ours' });
+		const own = { firstStartRest: [{ value: 7200, provenance: 'given' as const, validFrom: null }] };
+		expect(limitsInForce(own, changed).firstStartRest?.value).toBe(7200);
+	});
 	it('leaves out what is not known', () => {
 		expect(limitsInForce(limits, changed).oilTempCutout).toBeUndefined();
 	});

@@ -1,4 +1,4 @@
-import { LIMIT_KEYS } from '$lib/model/unit';
+import { DEFAULT_LIMITS, LIMIT_KEYS, limitAt } from '$lib/model/unit';
 import type { Unit } from '$lib/model/wire/site-unit';
 import type { LimitsInForce } from './strip-domain';
 
@@ -6,6 +6,9 @@ import type { LimitsInForce } from './strip-domain';
 export function limitsInForce(limits: Unit['limits'], at: number): LimitsInForce {
 	const inForce: LimitsInForce = {};
 	for (const key of LIMIT_KEYS) {
+		// What nobody has changed is this product's own choice.
+		const own = limitAt(DEFAULT_LIMITS, key, at);
+		if (own) inForce[key] = own;
 		let latest = -Infinity;
 		for (const { value, provenance, validFrom, note } of limits[key] ?? []) {
 			const from = validFrom === null ? -Infinity : Date.parse(validFrom);
