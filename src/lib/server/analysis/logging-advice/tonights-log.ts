@@ -4,7 +4,7 @@ import type { SuspectKey, SuspectsResult } from '$lib/model/suspect';
 import type { UnitNature } from '$lib/model/unit';
 import { SUSPECT_WORDS } from '$lib/model/words';
 import { median } from '../statistics/median';
-import type { ClueRule } from '../suspects/clue-rule';
+import type { ClueRule, Need } from '../suspects/clue-rule';
 import { SUSPECT_TABLE } from '../suspects/table';
 import { type Readable, signalsOf } from '../suspects/trace-reader';
 import { countWords, listWords } from '../wording/quantity-words';
@@ -53,6 +53,13 @@ function leaders(suspects: SuspectsResult): SuspectKey[] {
 	return [...standing, ...others].slice(0, 2).map((one) => one.key);
 }
 
+/** The signals of a need, or of its best alternative that is logged. */
+function wished(need: Need, logged: ReadonlySet<SignalKey>): SignalKey[] {
+	const alternatives: readonly Readable[] = typeof need === 'string' ? [need] : need;
+	const best = alternatives.find((trace) => signalsOf(trace).every((signal) => logged.has(signal))) ?? alternatives[0];
+	return best === undefined ? [] : signalsOf(best);
+}
+
 type Wish = { at: ReadAt; weight: number; suspects: Set<string>; missing: boolean };
 
 function wishesOf(keys: readonly SuspectKey[], input: AdviceInput, coarse: boolean): Map<SignalKey, Wish> {
@@ -61,7 +68,7 @@ function wishesOf(keys: readonly SuspectKey[], input: AdviceInput, coarse: boole
 		for (const rule of row.clues) {
 			if ((rule.applies?.(input.nature) ?? 1) === 0) continue;
 			const at = rule.readAt ?? 'start';
-			for (const signal of rule.needs.flatMap((trace: Readable) => signalsOf(trace))) {
+			for (const signal of rule.needs.flatMap((need) => wished(need, input.logged))) {
 				const missing = !input.logged.has(signal);
 				if (!missing && !(coarse && at === 'start')) continue;
 				const wish = wishes.get(signal) ?? { at, weight: 0, suspects: new Set(), missing };

@@ -1,9 +1,10 @@
 import type { Quantity } from '$lib/model/quantities';
 import type { FigureKey, StartRecord } from '$lib/model/start';
 import type { UnitNature } from '$lib/model/unit';
+import { median } from '../statistics/median';
 import { theilSen } from '../statistics/theil-sen';
 import { countWords } from '../wording/quantity-words';
-import { type ClueReading, type ClueRule, SILENT } from './clue-rule';
+import { type ClueReading, type ClueRule, type Need, SILENT } from './clue-rule';
 import type { Beside, Context } from './context';
 import { ramp } from './strength';
 import type { Readable } from './trace-reader';
@@ -26,6 +27,12 @@ const DAY = 86_400_000;
 /** Starts whose state is asked: the tripped ones, else all of the period (a stall needs no trip). */
 export function telling(context: Context): readonly StartRecord[] {
 	return context.bad.length > 0 ? context.bad : context.starts;
+}
+
+/** The later half of the starts (of those that have a figure; four at least): a fault that grows is judged as it is now. */
+export function recent(context: Context, having?: FigureKey): readonly StartRecord[] {
+	const starts = having ? context.starts.filter((start) => start.figures[having] !== null) : context.starts;
+	return starts.slice(-Math.max(4, Math.ceil(starts.length / 2)));
 }
 
 /**
@@ -89,8 +96,11 @@ export function besideClue(
 export function figureClue(
 	spec: Common & {
 		figure: FigureKey;
-		needs: readonly Readable[];
-		of: (context: Context) => readonly StartRecord[];
+		needs: readonly Need[];
+		/** Which starts; left out: the later half of those that have the figure. */
+		of?: (context: Context) => readonly StartRecord[];
+		/** Read at full load: the figure over the settled share of capacity, where that is known. */
+		atFullLoad?: boolean;
 		strength: (value: number, context: Context) => number;
 		show?: { signals: string[]; from: number; to: number };
 	}
@@ -104,11 +114,12 @@ export function figureClue(
 		...(spec.applies ? { applies: spec.applies } : {}),
 		readAt: spec.readAt ?? 'run',
 		read: (context) => {
-			const reading = context.figure(spec.figure, spec.of(context));
+			const read = spec.atFullLoad ? context.atFullLoad : context.figure;
+			const reading = read(spec.figure, spec.of?.(context) ?? recent(context, spec.figure));
 			if (!reading) return null;
 			return {
 				strength: spec.strength(reading.value, context),
-				sentence: `${spec.what} ${context.words.of(reading.value, spec.quantity)}, median of ${countWords(reading.starts.length, 'start')}.`,
+				sentence: `${spec.what} ${context.words.of(reading.value, spec.quantity)}${spec.atFullLoad ? ' at full load' : ''}, median of ${countWords(reading.starts.length, 'start')}.`,
 				figures: { value: reading.value },
 				starts: reading.starts,
 				...(spec.show ? { show: spec.show } : {})
@@ -117,11 +128,24 @@ export function figureClue(
 	};
 }
 
+/** Starts near the median lift (3 K) and settled capacity (10 points): like conditions (method.md, oil limits). */
+function likeConditions(starts: readonly StartRecord[]): StartRecord[] {
+	const lift = median(starts.map((start) => start.figures.settledLift ?? NaN));
+	const load = median(starts.map((start) => start.figures.settledCapacity ?? NaN));
+	const near = (value: number | null, middle: number | null, reach: number) =>
+		middle === null || value === null || Math.abs(value - middle) <= reach;
+	return starts.filter(
+		(start) => near(start.figures.settledLift, lift, 3) && near(start.figures.settledCapacity, load, 10)
+	);
+}
+
 /**
- * A clue from the drift of a settled figure over the period: Theil–Sen over days, of eight starts or more over a week
- * or more, counted only when the slope's interval leaves zero out.
+ * A clue from the drift of a settled figure over the period: Theil–Sen over days, of eight starts or more over five
+ * days or more, counted only when the slope's interval leaves zero out.
  */
-export function driftClue(spec: Common & { figure: FigureKey; needs: readonly Readable[]; total: Ends }): ClueRule {
+export function driftClue(
+	spec: Common & { figure: FigureKey; needs: readonly Need[]; total: Ends; matched?: boolean }
+): ClueRule {
 	return {
 		key: spec.key,
 		direction: spec.direction ?? 'for',
@@ -130,10 +154,11 @@ export function driftClue(spec: Common & { figure: FigureKey; needs: readonly Re
 		needs: spec.needs,
 		readAt: 'run',
 		read: (context) => {
-			const starts = context.starts.filter((start) => start.figures[spec.figure] !== null);
+			const having = context.starts.filter((start) => start.figures[spec.figure] !== null);
+			const starts = spec.matched ? likeConditions(having) : having;
 			const days = starts.map((start) => start.startedAt / DAY);
 			const span = (days.at(-1) ?? 0) - (days[0] ?? 0);
-			if (starts.length < 8 || span < 7) return SILENT;
+			if (starts.length < 8 || span < 5) return SILENT;
 			const line = theilSen(
 				days,
 				starts.map((start) => start.figures[spec.figure] ?? NaN)
@@ -150,6 +175,38 @@ export function driftClue(spec: Common & { figure: FigureKey; needs: readonly Re
 	};
 }
 
+/**
+ * A clue from the growth of a settled figure at like load and lift: the last third of the runs beside the first. A fault
+ * that grows inside the log is small in its median.
+ */
+export function growthClue(
+	spec: Common & { figure: FigureKey; needs: readonly Need[]; factor: Ends; by: Ends }
+): ClueRule {
+	return {
+		key: spec.key,
+		direction: spec.direction ?? 'for',
+		weight: spec.weight,
+		discriminates: spec.discriminates ?? false,
+		needs: spec.needs,
+		readAt: 'run',
+		read: (context) => {
+			const starts = likeConditions(context.starts.filter((start) => start.figures[spec.figure] !== null));
+			const third = Math.floor(starts.length / 3);
+			if (third < 2) return SILENT;
+			const before = context.figure(spec.figure, starts.slice(0, third));
+			const now = context.figure(spec.figure, starts.slice(-third));
+			if (!before || !now || before.value <= 0) return SILENT;
+			const say = (value: number) => context.words.of(value, spec.quantity);
+			return {
+				strength: Math.min(ramp(now.value / before.value, ...spec.factor), ramp(now.value - before.value, ...spec.by)),
+				sentence: `${spec.what} grew from ${say(before.value)} to ${say(now.value)} at like load.`,
+				figures: { before: before.value, now: now.value },
+				starts: [...before.starts.slice(0, 2), ...now.starts.slice(-2)]
+			};
+		}
+	};
+}
+
 /** A clue from a field check or a person's finding. */
 export function checkClue(
 	key: string,
@@ -161,6 +218,7 @@ export function checkClue(
 		direction,
 		weight: 1,
 		discriminates: true,
+		overrules: true,
 		needs: [],
 		read: (context): ClueReading => {
 			const found = read(context);

@@ -14,6 +14,9 @@ export type ClueReading = {
 	show?: Clue['show'];
 };
 
+/** A trace, or several of which any one will do, the best first. */
+export type Need = Readable | readonly Readable[];
+
 /** One clue of the declared table. */
 export type ClueRule = {
 	key: string;
@@ -22,10 +25,12 @@ export type ClueRule = {
 	weight: number;
 	/** A positive discriminator: at least one of these must speak before a suspect can stand first. */
 	discriminates?: boolean;
+	/** Found by people under the right conditions: against a suspect it takes its standing, whatever the log says. */
+	overrules?: boolean;
 	/** When the reading is taken: decides how finely and how long it must be logged. Default: around the start. */
 	readAt?: 'start' | 'run' | 'rest';
-	/** Every one of these is needed; what the log lacks is named. */
-	needs: readonly Readable[];
+	/** Every one of these is needed (of a list: any one); what the log lacks is named. */
+	needs: readonly Need[];
 	/** 1 applies, 0.5 nature unknown, 0 does not apply. */
 	applies?: (nature: UnitNature) => 0 | 0.5 | 1;
 	/** Null: the signals are there but cannot be read here (spacing, no such start). */
@@ -41,6 +46,8 @@ export type SuspectRow = {
 	clues: readonly ClueRule[];
 	/** Suspects that bring this one's signature with them: when one of them stands, this share of its score weighs against. */
 	explainedBy?: readonly { key: SuspectKey; share: number }[];
+	/** Which trips its clues are read from: `low-side` leaves out flow, electrical, oil and high-side trips. */
+	trips?: 'low-side';
 	/** May be named on a unit without a trip or a stall (a slow fault that shows in settled runs). */
 	showsWithoutSymptom?: boolean;
 	check: DecisiveCheck;

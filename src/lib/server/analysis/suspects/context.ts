@@ -7,7 +7,8 @@ import { saturationsOf } from '../series/derived';
 import { median } from '../statistics/median';
 import { medianAbsoluteDeviation } from '../statistics/median-absolute-deviation';
 import { type Words, wordsFor } from '../wording/quantity-words';
-import { isTellingTrip, presentStarts, type SuspectEvidence } from './evidence';
+import { FIGURE_SIGNALS, stuckFinder } from './stuck-signals';
+import { isLowSideTrip, isTellingTrip, presentStarts, type SuspectEvidence } from './evidence';
 import { type Readable, traceReader, type TraceReader } from './trace-reader';
 
 /** A value read from several starts. */
@@ -41,6 +42,10 @@ export type Context = {
 	limit: (key: LimitKey) => number | null;
 	/** Median of a figure over starts, of those that have it. */
 	figure: (key: FigureKey, of: readonly StartRecord[]) => Reading | null;
+	/** As `figure`, scaled to full load by the settled capacity (a share under 0.35 is too light to scale). */
+	atFullLoad: (key: FigureKey, of: readonly StartRecord[]) => Reading | null;
+	/** Median over starts of whatever is read from each. */
+	gather: (of: readonly StartRecord[], read: (start: StartRecord) => number | null) => Reading | null;
 	/** Median of a trace over from…to seconds from the start (never past 0.5 s before the stop). */
 	window: (trace: Readable, from: number, to: number, of: readonly StartRecord[]) => Reading | null;
 	/** The trip minute of the tripped starts beside the same elapsed time of the held ones. */
@@ -110,6 +115,11 @@ function withSaturations(input: CircuitInput): CircuitInput['series'] {
 	};
 }
 
+function fullLoad(value: number | null, capacity: number | null): number | null {
+	if (value === null || capacity === null) return value;
+	return capacity < 35 ? null : value / (Math.min(100, capacity) / 100);
+}
+
 /** What the clues are read from, over given tripped and held starts. */
 export function contextOf(
 	evidence: SuspectEvidence,
@@ -121,6 +131,9 @@ export function contextOf(
 	const reader = traceReader(withSaturations(input));
 	const lastStart = starts.at(-1)?.startedAt ?? Infinity;
 	const beside = held.slice(-HELD_BESIDE);
+	const stuck = stuckFinder(reader);
+	const trusted = (start: StartRecord, key: FigureKey) =>
+		(FIGURE_SIGNALS[key] ?? []).some((signal) => stuck(signal, start)) ? null : start.figures[key];
 	return {
 		input,
 		nature: input.nature,
@@ -134,7 +147,9 @@ export function contextOf(
 		checks: evidence.checks ?? [],
 		changes: evidence.changes ?? [],
 		limit: (key) => limitAt(input.limits, key, lastStart)?.value ?? null,
-		figure: (key, of) => gather(of, (start) => start.figures[key]),
+		figure: (key, of) => gather(of, (start) => trusted(start, key)),
+		atFullLoad: (key, of) => gather(of, (start) => fullLoad(trusted(start, key), start.figures.settledCapacity)),
+		gather,
 		window: (trace, from, to, of) => gather(of, (start) => windowOf(reader, trace, start, from, to)),
 		tripMinute: (trace, earliest = 10) => {
 			const windows = bad.map((start) => ({ start, ...tripWindow(start) })).filter(({ to }) => to >= earliest);
@@ -162,11 +177,22 @@ export function contextOf(
 	};
 }
 
+/** The same context with only the trips that speak about the low side. */
+export function lowSideContext(evidence: SuspectEvidence, context: Context): Context {
+	const bad = context.bad.filter(isLowSideTrip);
+	return bad.length === context.bad.length ? context : contextOf(evidence, context.starts, bad, context.held);
+}
+
+/** Without a single trip, two stops or more that the log cannot explain within this many seconds are looked at. */
+const UNCLEAR_WITHIN = 1200;
+
 /** The context of a whole period: its tripped starts beside its held ones. */
 export function periodContext(evidence: SuspectEvidence): Context {
 	const starts = presentStarts(evidence);
 	const tripped = starts.filter(isTellingTrip);
 	const startUp = tripped.filter((start) => start.startupTrip);
+	const unclear = starts.filter((start) => start.outcome === 'unclear' && runSeconds(start) < UNCLEAR_WITHIN);
 	const held = starts.filter((start) => start.outcome === 'held');
-	return contextOf(evidence, starts, startUp.length > 0 ? startUp : tripped, held);
+	const bad = startUp.length > 0 ? startUp : tripped.length > 0 ? tripped : unclear.length > 1 ? unclear : [];
+	return contextOf(evidence, starts, bad, held);
 }

@@ -2,10 +2,11 @@ import { SUSPECT_WORDS } from '$lib/model/words';
 import type { Clue, Standing, SuspectResult, SuspectsResult, SuspectKey, Verdict } from '$lib/model/suspect';
 import type { StartRecord } from '$lib/model/start';
 import { median } from '../statistics/median';
-import { type Context, contextOf, periodContext } from './context';
+import { type Context, contextOf, lowSideContext, periodContext } from './context';
 import { eligibleStarts, type SuspectEvidence } from './evidence';
 import { scoreRow, type ScoredRow } from './score-row';
 import { SUSPECT_TABLE } from './table';
+import { slideNotLoading } from './table/load';
 import { capacityRuns } from './table/shared';
 
 /** Where the standings begin, in sums of weights [ours]. */
@@ -42,6 +43,7 @@ function explain(rows: readonly ScoredRow[]): void {
 
 function standingOf(one: ScoredRow, coarse: boolean): Standing {
 	const { pointsTo, fits } = STANDING_LIMITS;
+	if (one.overruled) return 'speaks-against';
 	if (one.score >= pointsTo.score && one.discriminator >= pointsTo.discriminator) return coarse ? 'fits' : 'points-to';
 	if (one.score >= fits.score && one.discriminator >= fits.discriminator) return 'fits';
 	return one.score <= -0.25 ? 'speaks-against' : 'cannot-tell';
@@ -78,10 +80,11 @@ function ranked(rows: readonly ScoredRow[], coarse: boolean): SuspectResult[] {
 
 const directionOrder = (clue: Clue) => ['for', 'against', 'missing'].indexOf(clue.direction);
 
-/** Trips, or stalls in a fair share of the long runs. */
+/** Trips, or (on a slide: steps stand still between their stages) stalls in a fair share of the long runs. */
 function hasSymptom(context: Context): boolean {
 	const runs = capacityRuns(context).length;
-	return context.bad.length > 0 || context.stalls.length >= Math.max(1, 0.12 * runs);
+	const slides = slideNotLoading.applies(context.nature) > 0;
+	return context.bad.length > 0 || (slides && context.stalls.length >= Math.max(1, 0.12 * runs));
 }
 
 /** What a log must hold before "nothing points to a fault" may be said: the low side, and how the machine is loaded. */
@@ -140,7 +143,10 @@ function quieten(context: Context, suspects: SuspectResult[], rows: readonly Sco
  */
 export function evaluateSuspects(evidence: SuspectEvidence): SuspectsResult {
 	const context = periodContext(evidence);
-	const rows = SUSPECT_TABLE.map((row) => scoreRow(row, context)).filter((one) => one !== null);
+	const lowSide = lowSideContext(evidence, context);
+	const rows = SUSPECT_TABLE.map((row) => scoreRow(row, row.trips === 'low-side' ? lowSide : context)).filter(
+		(one) => one !== null
+	);
 	explain(rows);
 	const verdict = verdictOf(context, rows);
 	const suspects = quieten(context, ranked(rows, isCoarse(context.bad)), rows);
@@ -161,8 +167,9 @@ export function cluesOfStart(evidence: SuspectEvidence, startedAt: number): Star
 	const held = eligibleStarts(evidence.starts).filter((one) => one.outcome === 'held' && one !== start);
 	const bad = start.outcome === 'tripped' ? [start] : [];
 	const context = contextOf({ ...evidence, checks: [], changes: [] }, [start], bad, held);
+	const lowSide = lowSideContext(evidence, context);
 	return SUSPECT_TABLE.flatMap((row) =>
-		(scoreRow(row, context)?.clues ?? [])
+		(scoreRow(row, row.trips === 'low-side' ? lowSide : context)?.clues ?? [])
 			.filter((clue) => clue.direction !== 'missing' && clue.weight >= START_CLUE_WEIGHT)
 			.filter((clue) => clue.starts.includes(startedAt))
 			.map((clue) => ({ ...clue, suspect: row.key }))

@@ -22,6 +22,24 @@ export function isTellingTrip(start: StartRecord): boolean {
 	return start.outcome === 'tripped' && !(start.trip && OUTSIDE.has(start.trip.kind));
 }
 
+/** Trips that another side of the machine explains: no witness for what happens in the evaporator. */
+const NOT_LOW_SIDE: ReadonlySet<TripKind> = new Set([
+	'loss-of-water-flow',
+	'starter-fault',
+	'phase-or-supply',
+	'motor-temperature',
+	'high-condensing',
+	'high-oil-temperature',
+	'oil-flow',
+	'low-pressure-difference',
+	'sensor-or-communication'
+]);
+
+/** Does the trip speak about the low side (or not say what it was)? */
+export function isLowSideTrip(start: StartRecord): boolean {
+	return !(start.trip && NOT_LOW_SIDE.has(start.trip.kind));
+}
+
 /** Starts that count: nobody was at the unit and it was no lay-up. */
 export function eligibleStarts(starts: readonly StartRecord[]): StartRecord[] {
 	return starts.filter((start) => !start.attended && !start.layUp && start.outcome !== 'lost');

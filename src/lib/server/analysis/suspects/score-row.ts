@@ -1,11 +1,14 @@
 import { SIGNALS } from '$lib/model/signals';
 import type { Clue } from '$lib/model/suspect';
 import { listWords } from '../wording/quantity-words';
-import type { ClueRule, SuspectRow } from './clue-rule';
+import type { ClueRule, Need, SuspectRow } from './clue-rule';
 import type { Context } from './context';
+import type { Readable } from './trace-reader';
 
 /** A clue speaks from this strength on: less is noise and would only lengthen the page [ours]. */
 const LEAST_STRENGTH = 0.08;
+/** A check of this weight against a suspect overrules the log; an indicative one (half) does not. */
+const OVERRULES_FROM = 0.75;
 
 /** A row of the table judged on the evidence, before suspects are set against each other. */
 export type ScoredRow = {
@@ -15,9 +18,18 @@ export type ScoredRow = {
 	score: number;
 	/** Greatest weight of a clue that discriminates. */
 	discriminator: number;
+	/** A settled field check speaks against it. */
+	overruled: boolean;
 	/** Signals that discriminating clues lack, with the weight they would have had. */
 	missing: Map<string, number>;
 };
+
+/** Signals that a need lacks: none when any of its alternatives is logged, else those of the best. */
+function lackingOf(need: Need, context: Context): string[] {
+	const alternatives: readonly Readable[] = typeof need === 'string' ? [need] : need;
+	const lacking = alternatives.map((trace) => context.reader.lacking(trace));
+	return lacking.some((one) => one.length === 0) ? [] : (lacking[0] ?? []);
+}
 
 function missingClue(rule: ClueRule, weight: number, lacking: readonly string[]): Clue {
 	const names = lacking.map((id) => SIGNALS[id as keyof typeof SIGNALS]?.label ?? id);
@@ -31,7 +43,7 @@ function missingClue(rule: ClueRule, weight: number, lacking: readonly string[])
 function readRule(rule: ClueRule, context: Context, applies: number): { clue: Clue | null; lacking: string[] } {
 	const share = applies * (rule.applies?.(context.nature) ?? 1);
 	if (share === 0) return { clue: null, lacking: [] };
-	const lacking = [...new Set(rule.needs.flatMap((trace) => context.reader.lacking(trace)))];
+	const lacking = [...new Set(rule.needs.flatMap((need) => lackingOf(need, context)))];
 	if (lacking.length > 0) return { clue: missingClue(rule, rule.weight * share, lacking), lacking };
 	const reading = rule.read(context);
 	if (reading === null) return { clue: missingClue(rule, rule.weight * share, []), lacking: [] };
@@ -55,17 +67,19 @@ function readRule(rule: ClueRule, context: Context, applies: number): { clue: Cl
 export function scoreRow(row: SuspectRow, context: Context): ScoredRow | null {
 	const applies = row.applies(context.nature);
 	if (applies === 0) return null;
-	const scored: ScoredRow = { row, clues: [], score: 0, discriminator: 0, missing: new Map() };
+	const scored: ScoredRow = { row, clues: [], score: 0, discriminator: 0, overruled: false, missing: new Map() };
 	for (const rule of row.clues) {
 		const { clue, lacking } = readRule(rule, context, applies);
 		if (!clue) continue;
 		scored.clues.push(clue);
 		if (clue.direction === 'for') scored.score += clue.weight;
 		if (clue.direction === 'against') scored.score -= clue.weight;
+		if (clue.direction === 'against' && rule.overrules && clue.weight >= OVERRULES_FROM) scored.overruled = true;
 		if (clue.direction === 'for' && rule.discriminates)
 			scored.discriminator = Math.max(scored.discriminator, clue.weight);
 		if (rule.discriminates)
 			for (const id of lacking) scored.missing.set(id, Math.max(scored.missing.get(id) ?? 0, clue.weight));
 	}
+	if (scored.overruled) scored.discriminator = 0;
 	return scored;
 }

@@ -1,5 +1,5 @@
 import { cautionsFor } from '../cautions';
-import { besideClue, checkClue, driftClue, figureClue } from '../clue-builders';
+import { besideClue, checkClue, growthClue, figureClue } from '../clue-builders';
 import { always, type ClueRule, SILENT, type SuspectRow } from '../clue-rule';
 import type { Context } from '../context';
 import { restOffset } from '../rest-readings';
@@ -11,6 +11,9 @@ function usualHigh(context: Context): number {
 	return context.limit('evapApproachUsualHigh') ?? (context.nature.evaporator === 'dx' ? 5.6 : 2.3);
 }
 
+/** Where a full-load approach begins to be wide, and where it surely is: 1.35 and 2 times the usual upper end [ours]. */
+const wide = (context: Context): readonly [number, number] => [1.35 * usualHigh(context), 2 * usualHigh(context)];
+
 const approachWide = (weight: number, discriminates: boolean): ClueRule =>
 	figureClue({
 		key: 'evaporator-approach-wide',
@@ -20,8 +23,8 @@ const approachWide = (weight: number, discriminates: boolean): ClueRule =>
 		quantity: 'temperatureDifference',
 		figure: 'evapApproach',
 		needs: ['evapApproach'],
-		of: (context) => context.starts,
-		strength: (value, context) => ramp(value, usualHigh(context) + 0.9, usualHigh(context) + 3),
+		atFullLoad: true,
+		strength: (value, context) => ramp(value, ...wide(context)),
 		show: { signals: ['evapWaterOut', 'evapSaturation', 'evapApproach'], from: 0, to: 3600 }
 	});
 const approachOrdinary = (weight: number): ClueRule =>
@@ -33,8 +36,8 @@ const approachOrdinary = (weight: number): ClueRule =>
 		quantity: 'temperatureDifference',
 		figure: 'evapApproach',
 		needs: ['evapApproach'],
-		of: (context) => context.starts,
-		strength: (value, context) => ramp(value, usualHigh(context) + 0.9, usualHigh(context))
+		atFullLoad: true,
+		strength: (value, context) => ramp(value, wide(context)[0], wide(context)[0] * 0.8)
 	});
 /** A starved shell has hot suction and discharge as well; a fouled one does not. */
 const superheatOrdinary = (weight: number): ClueRule =>
@@ -83,14 +86,16 @@ export const fouledEvaporator: SuspectRow = {
 	clues: [
 		approachWide(0.55, true),
 		superheatOrdinary(0.15),
-		driftClue({
+		growthClue({
 			key: 'evaporator-approach-growing',
-			weight: 0.25,
+			weight: 0.4,
+			discriminates: true,
 			what: 'Settled evaporator approach',
 			quantity: 'temperatureDifference',
 			figure: 'evapApproach',
 			needs: ['evapApproach'],
-			total: [0.5, 1.5]
+			factor: [1.3, 1.7],
+			by: [0.5, 1.2]
 		}),
 		approachOrdinary(0.8),
 		starved,
@@ -102,6 +107,7 @@ export const fouledEvaporator: SuspectRow = {
 		{ key: 'valve-underfeeding', share: 0.3 }
 	],
 	showsWithoutSymptom: true,
+	trips: 'low-side',
 	check: {
 		key: 'evaporator-approach',
 		title: 'Evaporator approach at matched load and flow; oil-logging test; water treatment record.',
@@ -139,11 +145,11 @@ export const oilInEvaporator: SuspectRow = {
 		},
 		checkClue('separator-level-low', 'for', (context) => {
 			const check = latestCheck(context, (one) => (one.kind === 'oil-level' ? one : null));
-			const approach = context.figure('evapApproach', context.starts);
+			const approach = context.atFullLoad('evapApproach', context.starts);
 			if (!check || check.lowMm === null || check.heightMm >= check.lowMm || !approach) return null;
-			const wide = ramp(approach.value, usualHigh(context) + 0.5, usualHigh(context) + 2);
+			const strength = 0.6 * ramp(approach.value, ...wide(context));
 			const sentence = `Separator level low while the evaporator approach is ${context.words.difference(approach.value)}.`;
-			return { at: check.at, half: check.indicative, strength: 0.6 * wide, sentence };
+			return { at: check.at, half: check.indicative, strength, sentence };
 		}),
 		approachOrdinary(0.6),
 		sensorExplains

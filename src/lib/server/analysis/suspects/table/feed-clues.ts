@@ -1,6 +1,7 @@
 import { countWords } from '../../wording/quantity-words';
-import { besideClue, figureClue } from '../clue-builders';
+import { besideClue, figureClue, recent } from '../clue-builders';
 import { type ClueRule, natureIs, SILENT } from '../clue-rule';
+import type { StartRecord } from '$lib/model/start';
 import type { Context } from '../context';
 import { ramp } from '../strength';
 
@@ -10,11 +11,11 @@ export const dx = natureIs('evaporator', 'dx');
 export const valved = natureIs('metering', 'electronic-valve', 'thermostatic-valve', 'level');
 
 /** Superheat of the trip minute: beside held starts, or against its usual upper end. */
-export const superheatHigh = (weight: number): ClueRule =>
+export const superheatHigh = (weight: number, discriminates = true): ClueRule =>
 	besideClue({
 		key: 'superheat-high',
 		weight,
-		discriminates: true,
+		discriminates,
 		what: 'Superheat',
 		quantity: 'temperatureDifference',
 		trace: 'superheat',
@@ -25,11 +26,11 @@ export const superheatHigh = (weight: number): ClueRule =>
 		},
 		shift: [2, 6]
 	});
-export const dischargeSuperheatHigh = (weight: number): ClueRule =>
+export const dischargeSuperheatHigh = (weight: number, discriminates = true): ClueRule =>
 	besideClue({
 		key: 'discharge-superheat-high',
 		weight,
-		discriminates: true,
+		discriminates,
 		what: 'Discharge superheat',
 		quantity: 'temperatureDifference',
 		trace: 'dischargeSuperheat',
@@ -64,7 +65,7 @@ export const subcooling = (
 	discriminates,
 	needs: ['subcooling'],
 	read: (context) => {
-		const settled = context.figure('settledSubcooling', context.starts);
+		const settled = context.figure('settledSubcooling', recent(context, 'settledSubcooling'));
 		const reading = settled ?? context.tripMinute('subcooling');
 		if (!reading) return null;
 		return {
@@ -87,7 +88,6 @@ export const valveWideSettled = (weight: number): ClueRule =>
 		quantity: 'percent',
 		figure: 'meanValvePosition',
 		needs: ['valvePosition'],
-		of: (context) => context.held,
 		strength: (value) => ramp(value, 75, 92)
 	});
 export const superheatInRuns = (weight: number, discriminates = false): ClueRule =>
@@ -99,7 +99,6 @@ export const superheatInRuns = (weight: number, discriminates = false): ClueRule
 		quantity: 'temperatureDifference',
 		figure: 'superheat',
 		needs: ['superheat'],
-		of: (context) => context.held,
 		strength: (value, context) => {
 			const high = context.limit('superheatUsualHigh') ?? (flooded(context) ? 6 : 9);
 			return ramp(value, high, high + 4);
@@ -121,3 +120,52 @@ export const startsAnyTime: ClueRule = {
 		};
 	}
 };
+
+/** Superheat from which an evaporator is starved, whatever starts it is compared with. */
+export const starvedFrom = (context: Context): number =>
+	(context.limit('superheatUsualHigh') ?? (flooded(context) ? 6 : 9)) + 1.5;
+
+/** Highest superheat of the last half minute before a stop: a median over the dive would halve it. */
+function highestSuperheat(context: Context, start: StartRecord, end: number): number | null {
+	const step = Math.max(5, start.spacingSeconds);
+	let highest: number | null = null;
+	for (let at = Math.max(30, end - Math.max(30, 1.2 * step)); at < end; at += step) {
+		const value = context.window('superheat', at, Math.min(end, at + step), [start])?.value ?? null;
+		if (value !== null && (highest === null || value > highest)) highest = value;
+	}
+	return highest;
+}
+
+/** How many starts were starved at the end of their first ten minutes, or when they stopped before. */
+export function starvedShare(context: Context): { starved: number; all: number } | null {
+	const reading = context.gather(context.starts, (start) => {
+		const end = Math.min(600, ((start.endedAt ?? Infinity) - start.startedAt) / 1000);
+		const from = Math.max(30, end - Math.max(60, 2 * start.spacingSeconds));
+		if (end < 45) return null;
+		if (start.outcome === 'tripped') return highestSuperheat(context, start, end);
+		return context.window('superheat', from, end, [start])?.value ?? null;
+	});
+	if (!reading) return null;
+	return { starved: reading.values.filter((value) => value > starvedFrom(context)).length, all: reading.values.length };
+}
+
+/** A valve that sticks starves some starts; a restricted line or a lack of refrigerant starves every one. */
+export const starvedPattern = (pattern: 'every' | 'some', direction: 'for' | 'against', weight: number): ClueRule => ({
+	key: pattern === 'every' ? 'starved-at-every-start' : 'starved-at-some-starts',
+	direction,
+	weight,
+	needs: ['superheat'],
+	read: (context) => {
+		const count = starvedShare(context);
+		if (!count || count.all < 4) return SILENT;
+		const share = count.starved / count.all;
+		return {
+			strength:
+				pattern === 'every' ? ramp(share, 0.8, 0.95) : Math.min(ramp(share, 0.05, 0.15), ramp(share, 0.92, 0.8)),
+			sentence: `${count.starved} of ${countWords(count.all, 'start')} ran starved (superheat over ${context.words.difference(starvedFrom(context))}) at ten minutes or when they stopped.`,
+			figures: { starved: count.starved, starts: count.all },
+			starts: context.starts.slice(-5),
+			show: { signals: ['superheat', 'valvePosition'], from: 0, to: 600 }
+		};
+	}
+});

@@ -27,7 +27,7 @@ const tripsWhenCold: ClueRule = {
 	direction: 'for',
 	weight: 0.6,
 	discriminates: true,
-	needs: ['condWaterIn'],
+	needs: [['condWaterIn', 'outdoorTemp', 'condAirIn']],
 	read: (context) => {
 		const bad = median(coolingOf(context.bad));
 		const held = median(coolingOf(context.held));
@@ -49,7 +49,7 @@ const clustersByCold: ClueRule = {
 	key: 'trips-cluster-by-condenser-water',
 	direction: 'for',
 	weight: 0.25,
-	needs: ['condWaterIn'],
+	needs: [['condWaterIn', 'outdoorTemp', 'condAirIn']],
 	read: (context) => {
 		const edge = coldBelow(context) + 1;
 		const [a, b] = [coolingOf(context.bad), coolingOf(context.held)];
@@ -69,7 +69,7 @@ const tripsWhenWarm: ClueRule = {
 	key: 'trips-with-warm-condenser-too',
 	direction: 'against',
 	weight: 0.8,
-	needs: ['condWaterIn'],
+	needs: [['condWaterIn', 'outdoorTemp', 'condAirIn']],
 	read: (context) => {
 		const values = coolingOf(context.bad);
 		if (values.length === 0) return null;
@@ -122,7 +122,7 @@ export const coldCondenserWater: SuspectRow = {
 			key: 'held-as-cold',
 			direction: 'against',
 			weight: 0.4,
-			needs: ['condWaterIn'],
+			needs: [['condWaterIn', 'outdoorTemp', 'condAirIn']],
 			read: (context) => {
 				const bad = median(coolingOf(context.bad));
 				const held = coolingOf(context.held);

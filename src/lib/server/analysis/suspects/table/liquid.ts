@@ -1,11 +1,13 @@
 import { cautionsFor } from '../cautions';
-import { driftClue, figureClue } from '../clue-builders';
+import { driftClue, figureClue, recent } from '../clue-builders';
 import { always, type SuspectRow } from '../clue-rule';
 import { ramp } from '../strength';
+import { countWords } from '../../wording/quantity-words';
 import {
 	dischargeSuperheatHigh,
 	flooded,
-	startsAnyTime,
+	starvedPattern,
+	starvedShare,
 	subcooling,
 	superheatHigh,
 	superheatInRuns,
@@ -21,8 +23,9 @@ export const lowRefrigerantCharge: SuspectRow = {
 		subcooling('subcooling-low', 'for', 0.65, [3, 1.2], true),
 		valveWideSettled(0.25),
 		superheatInRuns(0.25),
-		superheatHigh(0.25),
-		dischargeSuperheatHigh(0.15),
+		superheatHigh(0.2, false),
+		dischargeSuperheatHigh(0.1, false),
+		starvedPattern('every', 'for', 0.15),
 		figureClue({
 			key: 'approach-wide-in-runs',
 			weight: 0.15,
@@ -30,7 +33,6 @@ export const lowRefrigerantCharge: SuspectRow = {
 			quantity: 'temperatureDifference',
 			figure: 'evapApproach',
 			needs: ['evapApproach'],
-			of: (context) => context.held,
 			strength: (value, context) => (flooded(context) ? ramp(value, 2.8, 5) : ramp(value, 6, 9))
 		}),
 		driftClue({
@@ -48,6 +50,7 @@ export const lowRefrigerantCharge: SuspectRow = {
 	],
 	explainedBy: [{ key: 'evap-saturation-sensor', share: 0.4 }],
 	showsWithoutSymptom: true,
+	trips: 'low-side',
 	check: {
 		key: 'leak-search',
 		title: 'Leak search; subcooling at a steady load; the charge is weighed when it is recovered.',
@@ -63,41 +66,36 @@ export const liquidLineRestriction: SuspectRow = {
 	applies: always,
 	clues: [
 		{
-			key: 'wide-valve-with-good-liquid',
+			key: 'starved-with-good-liquid',
 			direction: 'for',
 			weight: 0.6,
 			discriminates: true,
-			needs: ['valvePosition', 'subcooling'],
+			readAt: 'run',
+			needs: ['superheat', 'subcooling'],
 			read: (context) => {
-				const valve = context.figure('meanValvePosition', context.held);
-				const liquid = context.figure('settledSubcooling', context.held);
-				if (!valve || !liquid) return null;
+				const starved = starvedShare(context);
+				const liquid =
+					context.figure('settledSubcooling', recent(context, 'settledSubcooling')) ??
+					context.window('subcooling', 45, 600, recent(context));
+				if (!starved || !liquid || starved.all < 4) return null;
 				return {
-					strength: Math.min(ramp(valve.value, 75, 92), ramp(liquid.value, 3, 6)),
-					sentence: `Held runs keep the valve at ${context.words.percent(valve.value)} with ${context.words.difference(liquid.value)} of subcooling before the line.`,
-					figures: { valve: valve.value, subcooling: liquid.value },
-					starts: valve.starts.slice(-5),
-					show: { signals: ['valvePosition', 'subcooling'], from: 0, to: 3600 }
+					strength: ramp(starved.starved / starved.all, 0.7, 0.95) * ramp(liquid.value, 2.5, 4.5),
+					sentence: `${starved.starved} of ${countWords(starved.all, 'start')} ran starved with ${context.words.difference(liquid.value)} of subcooling before the line.`,
+					figures: { starved: starved.starved, starts: starved.all, subcooling: liquid.value },
+					starts: liquid.starts.slice(-5),
+					show: { signals: ['superheat', 'subcooling', 'valvePosition'], from: 0, to: 900 }
 				};
 			}
 		},
+		valveWideSettled(0.25),
 		superheatInRuns(0.25),
-		superheatHigh(0.15),
-		startsAnyTime,
+		superheatHigh(0.1, false),
 		subcooling('subcooling-missing', 'against', 0.6, [3, 1.2]),
-		figureClue({
-			key: 'valve-ordinary-in-runs',
-			direction: 'against',
-			weight: 0.5,
-			what: 'Held runs keep an ordinary valve position:',
-			quantity: 'percent',
-			figure: 'meanValvePosition',
-			needs: ['valvePosition'],
-			of: (context) => context.held,
-			strength: (value) => ramp(value, 82, 65)
-		})
+		starvedPattern('some', 'against', 0.3)
 	],
 	explainedBy: [{ key: 'evap-saturation-sensor', share: 0.4 }],
+	showsWithoutSymptom: true,
+	trips: 'low-side',
 	check: {
 		key: 'drier-drop',
 		title: 'Temperature or pressure drop over the drier and every liquid valve; look for frost.',

@@ -3,7 +3,7 @@ import type { StartRecord } from '$lib/model/start';
 import { median } from '../../statistics/median';
 import { countWords } from '../../wording/quantity-words';
 import { cautionsFor } from '../cautions';
-import { checkClue, figureClue, telling } from '../clue-builders';
+import { checkClue, figureClue, recent, telling } from '../clue-builders';
 import { type ClueRule, natureIs, SILENT, type SuspectRow } from '../clue-rule';
 import type { Context } from '../context';
 import { plateau, ramp } from '../strength';
@@ -164,7 +164,7 @@ export const slideNotLoading: SuspectRow = {
 		{
 			key: 'stall',
 			direction: 'for',
-			weight: 0.5,
+			weight: 0.4,
 			discriminates: true,
 			needs: ['capacity'],
 			read: (context) => {
@@ -175,7 +175,7 @@ export const slideNotLoading: SuspectRow = {
 		{
 			key: 'stall-far-from-full',
 			direction: 'for',
-			weight: 0.3,
+			weight: 0.4,
 			discriminates: true,
 			needs: ['capacity'],
 			read: (context) => {
@@ -184,7 +184,7 @@ export const slideNotLoading: SuspectRow = {
 				return {
 					...stall.reading,
 					sentence: `The stall stands at ${context.words.percent(stall.level)}, well short of full.`,
-					strength: stall.sureness * ramp(stall.level, 84, 74)
+					strength: stall.sureness * ramp(stall.level, 83, 77)
 				};
 			}
 		},
@@ -198,7 +198,12 @@ export const slideNotLoading: SuspectRow = {
 				const start = context.figure('startCapacity', context.starts);
 				if (!stall || !start) return SILENT;
 				return {
-					strength: stall.sureness * ramp(stall.share, 0.1, 0.4) * ramp(start.value, 56, 51),
+					strength:
+						stall.sureness *
+						ramp(stall.share, 0.1, 0.4) *
+						ramp(start.value, 56, 51) *
+						ramp(stall.level, 90, 84) *
+						ramp(context.figure('settledMargin', recent(context, 'settledMargin'))?.value ?? 0, 13, 10),
 					sentence: `It stalls although capacity at start is ordinary: ${context.words.percent(start.value)}.`,
 					figures: { startCapacity: start.value },
 					starts: start.starts.slice(-5)

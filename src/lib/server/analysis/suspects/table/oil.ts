@@ -1,6 +1,6 @@
 import type { FieldCheckFact } from '$lib/model/checks';
 import { cautionsFor } from '../cautions';
-import { besideClue, checkClue, driftClue, figureClue, telling } from '../clue-builders';
+import { besideClue, checkClue, driftClue, figureClue, recent, telling } from '../clue-builders';
 import { always, type ClueRule, natureIs, SILENT, type SuspectRow } from '../clue-rule';
 import { plateau, ramp } from '../strength';
 import { countWords } from '../../wording/quantity-words';
@@ -25,8 +25,7 @@ const stallNearFull: ClueRule = {
 		const high = context.limit('stallBandHigh') ?? 93;
 		return {
 			...share.reading,
-			strength:
-				share.sureness * ramp(share.share, 0.1, 0.4) * plateau(share.level, low - 15, low - 3, high + 2, high + 6)
+			strength: share.sureness * ramp(share.share, 0.1, 0.4) * plateau(share.level, low - 4, low, high + 1, high + 5)
 		};
 	}
 };
@@ -62,7 +61,6 @@ export const lowOil: SuspectRow = {
 			quantity: 'temperature',
 			figure: 'settledOilTemp',
 			needs: ['oilTemp'],
-			of: (context) => context.starts,
 			// Usual upper end 130–140 °F (54–60 °C), which overlaps with oil-starved: alone no clue. Common practice.
 			strength: (value, context) => {
 				const high = context.limit('oilTempUsualHigh') ?? 57;
@@ -71,15 +69,16 @@ export const lowOil: SuspectRow = {
 		}),
 		figureClue({
 			key: 'margin-wide',
-			weight: 0.2,
+			weight: 0.3,
+			// Air-cooled and direct-expansion machines run wide margins when sound.
+			applies: (nature) => (nature.evaporator === 'flooded' && nature.condenser === 'water' ? oilMoved(nature) : 0),
 			what: 'Settled margin (oil minus condensing)',
 			quantity: 'temperatureDifference',
 			figure: 'settledMargin',
 			needs: ['margin'],
-			of: (context) => context.starts,
 			strength: (value, context) => {
 				const usual = context.limit('marginUsualAtStart') ?? 4.4;
-				return ramp(value, usual + 4, usual + 12);
+				return ramp(value, usual + 5.5, usual + 9.5);
 			}
 		}),
 		driftClue({
@@ -90,13 +89,36 @@ export const lowOil: SuspectRow = {
 			quantity: 'temperatureDifference',
 			figure: 'settledOilTemp',
 			needs: ['oilTemp'],
+			matched: true,
 			total: [2, 5]
+		}),
+		driftClue({
+			key: 'capacity-at-start-rising',
+			weight: 0.3,
+			discriminates: true,
+			applies: oilMoved,
+			what: 'Capacity at start',
+			quantity: 'percent',
+			figure: 'startCapacity',
+			needs: ['capacity'],
+			total: [4, 9]
+		}),
+		driftClue({
+			key: 'margin-rising',
+			weight: 0.3,
+			discriminates: true,
+			what: 'Settled margin at like lift and load',
+			quantity: 'temperatureDifference',
+			figure: 'settledMargin',
+			needs: ['margin'],
+			matched: true,
+			total: [1.5, 4]
 		}),
 		figureClue({
 			key: 'start-not-over-staged',
 			readAt: 'start',
 			direction: 'against',
-			weight: 0.35,
+			weight: 0.15,
 			applies: oilMoved,
 			what: 'Capacity at start is ordinary:',
 			quantity: 'percent',
@@ -126,8 +148,9 @@ export const lowOil: SuspectRow = {
 			quantity: 'temperature',
 			figure: 'settledOilTemp',
 			needs: ['oilTemp'],
-			of: (context) => context.starts,
-			strength: (value) => ramp(value, 52, 47)
+			// Cool oil only speaks while the margin is ordinary too: cold condenser water cools all oil.
+			strength: (value, context) =>
+				ramp(value, 52, 47) * ramp(context.figure('settledMargin', recent(context, 'settledMargin'))?.value ?? 0, 12, 7)
 		}),
 		{
 			key: 'loads-fully',
@@ -192,7 +215,6 @@ export const oilRestriction: SuspectRow = {
 			quantity: 'temperatureDifference',
 			figure: 'settledMargin',
 			needs: ['margin'],
-			of: (context) => context.starts,
 			// 4 °F (2.2 K) below condensing or more: common practice, no source.
 			strength: (value, context) => {
 				const limit = context.limit('lineRestrictionMargin') ?? -2.2;
@@ -294,7 +316,6 @@ export const oilRestriction: SuspectRow = {
 			quantity: 'temperatureDifference',
 			figure: 'settledMargin',
 			needs: ['margin'],
-			of: (context) => context.starts,
 			strength: (value) => ramp(value, 0.5, 3)
 		}),
 		checkClue('filter-drop-measured', 'for', (context) => {

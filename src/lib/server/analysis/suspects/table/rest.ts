@@ -169,7 +169,8 @@ function equalisingHalfTimes(context: Context): { at: number; seconds: number }[
 	const found: { at: number; seconds: number }[] = [];
 	for (const start of context.starts) {
 		const stop = start.endedAt;
-		if (stop === null) continue;
+		// Only normal stops of long runs: a trip leaves other pressures behind.
+		if (stop === null || start.outcome !== 'held') continue;
 		const first = context.reader.median('systemDelta', stop - 30_000, stop + 10_000);
 		if (first === null || first < 100) continue;
 		for (let after = 20; after <= 3600; after += 20) {
@@ -193,7 +194,7 @@ export const valveLeakingBack: SuspectRow = {
 			key: 'equalises-faster-than-before',
 			readAt: 'rest',
 			direction: 'for',
-			weight: 0.6,
+			weight: 0.4,
 			discriminates: true,
 			needs: ['systemDelta'],
 			read: (context) => {

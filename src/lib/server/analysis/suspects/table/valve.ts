@@ -1,9 +1,14 @@
 import { median } from '../../statistics/median';
 import { cautionsFor } from '../cautions';
-import { checkClue, figureClue, telling } from '../clue-builders';
-import { type ClueRule, SILENT, type SuspectRow } from '../clue-rule';
+import { countWords } from '../../wording/quantity-words';
+import type { FigureKey } from '$lib/model/start';
+import { checkClue, figureClue, recent, telling } from '../clue-builders';
+import type { Context } from '../context';
+import type { Readable } from '../trace-reader';
+import { type ClueRule, natureIs, SILENT, type SuspectRow } from '../clue-rule';
 import { ramp } from '../strength';
 import {
+	starvedPattern,
 	dischargeSuperheatHigh,
 	dx,
 	startsAnyTime,
@@ -25,7 +30,9 @@ const valveWithoutEffect: ClueRule = {
 		const end = context.tripMinute('valvePosition');
 		const saturation = context.tripMinute('evapSaturation');
 		if (!end || !saturation) return null;
-		const wide = ramp(end.value, 80, 95);
+		// Wide in every run is a line or a charge short of liquid, not a valve that does not follow.
+		const usual = context.figure('meanValvePosition', context.held)?.value ?? 0;
+		const wide = ramp(end.value, 80, 95) * ramp(usual, 92, 75);
 		const tight = end.shift === null || end.heldCount < 2 ? 0 : ramp(end.shift, -6, -18);
 		const moved = context.bad.map((start) => {
 			const values = context.reader.values('valvePosition', start.startedAt, (start.endedAt ?? start.startedAt) - 500);
@@ -72,6 +79,8 @@ export const valveUnderfeeding: SuspectRow = {
 		valveWithoutEffect,
 		subcooling('liquid-backed-up', 'for', 0.25, [2.5, 5]),
 		startsAnyTime,
+		starvedPattern('some', 'for', 0.25),
+		starvedPattern('every', 'against', 0.2),
 		superheatLow(0.5),
 		subcooling('no-liquid-before-valve', 'against', 0.5, [2.2, 0.8]),
 		overCapacity(0.45),
@@ -93,8 +102,11 @@ export const valveUnderfeeding: SuspectRow = {
 		{ key: 'cold-condenser-water', share: 0.5 },
 		{ key: 'low-refrigerant-charge', share: 0.4 },
 		{ key: 'liquid-line-restriction', share: 0.3 },
+		{ key: 'low-oil', share: 0.3 },
+		{ key: 'slide-not-unloading', share: 0.3 },
 		{ key: 'evap-saturation-sensor', share: 0.4 }
 	],
+	trips: 'low-side',
 	check: {
 		key: 'valve-travel',
 		title: 'Commanded against actual valve travel; stepper or bulb by its maker’s procedure.',
@@ -104,34 +116,71 @@ export const valveUnderfeeding: SuspectRow = {
 	}
 };
 
+/** Wet running: of the settled stretch, or of the first ten minutes where no run settles. */
+function wetReading(
+	key: string,
+	weight: number,
+	what: string,
+	figure: FigureKey,
+	trace: Readable,
+	ends: (context: Context) => readonly [number, number],
+	applies: ClueRule['applies'] & object
+): ClueRule {
+	return {
+		key,
+		direction: 'for',
+		weight,
+		discriminates: true,
+		readAt: 'run',
+		applies,
+		needs: [trace],
+		read: (context) => {
+			const reading =
+				context.figure(figure, recent(context, figure)) ?? context.window(trace, 60, 600, recent(context));
+			if (!reading) return null;
+			return {
+				strength: ramp(reading.value, ...ends(context)),
+				sentence: `${what} ${context.words.difference(reading.value)}, median of ${countWords(reading.starts.length, 'start')}.`,
+				figures: { value: reading.value },
+				starts: reading.starts.slice(-5),
+				show: { signals: [trace, 'valvePosition'], from: 0, to: 900 }
+			};
+		}
+	};
+}
+
 export const valveOverfeeding: SuspectRow = {
 	key: 'valve-overfeeding',
 	family: 'feed',
 	applies: valved,
 	clues: [
-		figureClue({
-			key: 'superheat-near-zero',
-			weight: 0.4,
-			discriminates: true,
-			applies: dx,
-			what: 'Settled superheat',
-			quantity: 'temperatureDifference',
-			figure: 'superheat',
-			needs: ['superheat'],
-			of: (context) => context.starts,
-			strength: (value) => ramp(value, 3, 1)
-		}),
-		figureClue({
-			key: 'discharge-superheat-low',
-			weight: 0.4,
-			discriminates: true,
-			what: 'Settled discharge superheat',
-			quantity: 'temperatureDifference',
-			figure: 'settledDischargeSuperheat',
-			needs: ['dischargeSuperheat'],
-			of: (context) => context.starts,
-			strength: (value) => ramp(value, 7, 3)
-		}),
+		wetReading('superheat-near-zero', 0.5, 'Superheat', 'superheat', 'superheat', () => [2.6, 0.8], dx),
+		wetReading(
+			'discharge-superheat-low',
+			0.5,
+			'Discharge superheat',
+			'settledDischargeSuperheat',
+			'dischargeSuperheat',
+			(context) => (context.nature.evaporator === 'dx' ? [10, 5] : [6, 2.5]),
+			// A centrifugal's sound discharge superheat is as low as a wet screw's.
+			natureIs('compressor', 'screw', 'scroll', 'reciprocating')
+		),
+		{
+			key: 'wet-gas-trips',
+			direction: 'for',
+			weight: 0.3,
+			needs: [],
+			read: (context) => {
+				const wet = context.bad.filter((start) => /\bwet\b|low discharge superheat/i.test(start.trip?.text ?? ''));
+				if (context.bad.length === 0) return SILENT;
+				return {
+					strength: ramp(wet.length / context.bad.length, 0.2, 0.6),
+					sentence: `${countWords(wet.length, 'trip')} recorded on wet discharge gas.`,
+					figures: { trips: wet.length },
+					starts: wet.slice(-5)
+				};
+			}
+		},
 		{
 			key: 'valve-hunting',
 			direction: 'for',
@@ -155,18 +204,27 @@ export const valveOverfeeding: SuspectRow = {
 				};
 			}
 		},
-		figureClue({
-			key: 'discharge-superheat-ordinary',
+		{
+			key: 'superheat-ordinary',
 			direction: 'against',
 			weight: 0.6,
-			what: 'Settled discharge superheat is not low:',
-			quantity: 'temperatureDifference',
-			figure: 'settledDischargeSuperheat',
-			needs: ['dischargeSuperheat'],
-			of: (context) => context.starts,
-			strength: (value) => ramp(value, 6, 11)
-		})
+			needs: ['superheat'],
+			readAt: 'run',
+			applies: dx,
+			read: (context) => {
+				// Only settled: in the first minutes of a flooding valve the superheat has not gone yet.
+				const reading = context.figure('superheat', recent(context, 'superheat'));
+				if (!reading) return SILENT;
+				return {
+					strength: ramp(reading.value, 2.5, 4),
+					sentence: `Superheat is not low: ${context.words.difference(reading.value)}.`,
+					figures: { value: reading.value },
+					starts: reading.starts.slice(-5)
+				};
+			}
+		}
 	],
+	showsWithoutSymptom: true,
 	check: {
 		key: 'valve-close',
 		title: 'Does the valve close to its command? Bulb fixing, level loop, travel by its maker’s procedure.',

@@ -179,6 +179,7 @@ export const lowWaterFlow: SuspectRow = {
 		flowMeasured('for'),
 		flowMeasured('against')
 	],
+	showsWithoutSymptom: true,
 	explainedBy: [
 		{ key: 'evap-saturation-sensor', share: 0.4 },
 		{ key: 'plant-staging', share: 0.2 }
@@ -227,8 +228,8 @@ export const flowProving: SuspectRow = {
 				const chatter = context.starts.filter((start) => {
 					const from = start.startedAt;
 					const to = start.endedAt ?? from + 3_600_000;
-					const pump = context.reader.values('evapPumpRun', from, to);
-					const proof = context.reader.values('evapFlowProof', from, to - 1000);
+					const pump = context.reader.values('evapPumpRun', from, to - 1000);
+					const proof = context.reader.values('evapFlowProof', from, to + 1000 * Math.min(30, start.spacingSeconds));
 					const drops = proof.filter((value, i) => value === 0 && proof[i - 1] === 1).length;
 					return drops >= 1 && pump.every((value) => value === 1);
 				});
