@@ -72,7 +72,6 @@ module.exports = {
 		doNotFollow: { path: 'node_modules' },
 		tsPreCompilationDeps: true,
 		tsConfig: { fileName: 'tests/layers/tsconfig.json' },
-		extraExtensionsToScan: ['.svelte'],
 		exclude: { path: '(^build|^\\.svelte-kit)' },
 		enhancedResolveOptions: {
 			exportsFields: ['exports'],
