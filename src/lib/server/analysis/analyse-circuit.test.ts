@@ -83,6 +83,10 @@ describe('analyseCircuit on a 5 s log', () => {
 		]);
 	});
 
+	it('labels a restart after a trip', () => {
+		expect(second?.notes).toContain('Restarted 29 min after a trip.');
+	});
+
 	it('reads the figures of the tripped start', () => {
 		const f = first?.figures;
 		expect(f?.startCapacity).toBe(60);

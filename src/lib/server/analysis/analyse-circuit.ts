@@ -3,11 +3,11 @@ import type { Interval } from '$lib/model/series';
 import type { StartRecord } from '$lib/model/start';
 import { limitAt } from '$lib/model/unit';
 import { prepareCircuit, type Circuit } from './circuit';
-import { readFigures } from './figures/read-figures';
+import { readFigures, type FigureSheet } from './figures/read-figures';
 import { markPinnedCurrent } from './figures/pinned-current';
 import type { FigureContext } from './figures/sheet';
 import { stageOf } from './figures/stages';
-import { activationsOf, type Activation } from './outcomes/activations';
+import { activationsOf, namesAnother, type Activation } from './outcomes/activations';
 import type { Verdict } from './outcomes/judge';
 import { proposeShift } from './outcomes/match';
 import { judgeStarts } from './outcomes/verdicts';
@@ -45,7 +45,13 @@ export function analyseCircuit(input: CircuitInput): CircuitAnalysis {
 		const verdict = verdicts[i];
 		const episode = episodes[i];
 		if (verdict === undefined || episode === undefined) throw new RangeError(`no verdict on start ${i}`);
-		return { ...record(context, verdict), ...episode, ...readFigures(context, brackets, stage) };
+		const plain = record(context, verdict);
+		const before = contexts[i - 1];
+		const tripBefore = episode.tryNumber > 1 && verdicts[i - 1]?.outcome === 'tripped' && before !== undefined;
+		if (tripBefore && context.restSeconds !== null) {
+			plain.notes.push(`Restarted ${Math.round(context.restSeconds / 60)} min after a trip.`);
+		}
+		return { ...plain, ...episode, ...readFigures(context, brackets, stage) };
 	});
 	markPinnedCurrent(circuit, starts);
 	return {
@@ -78,7 +84,8 @@ function alignedAlarms(input: CircuitInput, running: RunningReadings) {
 		if (running.on[i] === 1 && running.on[i - 1] === 0) rises.push(running.t[i] ?? NaN);
 	}
 	const startedBetween = (from: number, to: number) => (rises[firstAtOrAfter(rises, from + 1)] ?? Infinity) <= to;
-	const logged = activationsOf(input.texts.alarm, input.series.alarm, input.events, input.tripWords, startedBetween);
+	const all = activationsOf(input.texts.alarm, input.series.alarm, input.events, input.tripWords, startedBetween);
+	const logged = all.filter((a) => !namesAnother(a.text, input.circuit));
 	const given = input.alarmShiftSeconds ?? null;
 	let shift: number | null = null;
 	if (given === null && logged.some((a) => a.source === 'history')) {
@@ -127,7 +134,7 @@ function contextOf(circuit: Circuit, observed: Run): FigureContext {
 	};
 }
 
-type Plain = Omit<StartRecord, 'episode' | 'tryNumber' | 'figures' | 'absent' | 'marks' | 'settled' | 'stall'>;
+type Plain = Omit<StartRecord, 'episode' | 'tryNumber' | 'notes' | keyof FigureSheet> & { notes: string[] };
 
 function record(context: FigureContext, verdict: Verdict): Plain {
 	const { run, circuit } = context;

@@ -20,7 +20,12 @@ function closest(context: FigureContext, watch: Watch): Lowest | Absence {
 	}
 	const value = found.v[best] ?? NaN;
 	const before = found.v[best - 1];
-	const spacing = (spacingWithin(found.series, context.startedAt, context.run.lastOn) ?? context.spacing) * 1000;
+	const spacing =
+		(spacingWithin(
+			found.series,
+			context.startedAt,
+			Math.min(context.run.lastOn, context.startedAt + HEADROOM_TO * 1000)
+		) ?? context.spacing) * 1000;
 	const apart = (found.t[best] ?? NaN) - (found.t[best - 1] ?? NaN);
 	const closing = before === undefined ? 0 : (Math.max(0, watch.side * (before - value)) / apart) * spacing;
 	return { extreme: value, distanceTo: (limit) => watch.side * (value - limit) - closing };

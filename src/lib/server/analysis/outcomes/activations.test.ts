@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { EventRecord } from '$lib/model/series';
-import { activationsOf, latchedAt } from './activations';
+import { activationsOf, latchedAt, namesAnother } from './activations';
 
 const column = (text: string[], spacing = 5) => {
 	return { t: Float64Array.from(text, (_, i) => i * spacing * 1000), text };
@@ -71,5 +71,14 @@ describe('an alarm history', () => {
 		expect(activationsOf(undefined, undefined, [line({ text: 'stopped', code: 'A12' })], own, never)[0]?.kind).toBe(
 			'external-interlock'
 		);
+	});
+});
+
+describe('namesAnother', () => {
+	it('leaves the alarms of a sister circuit to it', () => {
+		const of = (text: string) => [namesAnother(text, '1'), namesAnother(text, '2')];
+		expect(of('Ckt 2 low evap temp')).toEqual([true, false]);
+		expect(of('Low oil pressure circuit A')).toEqual([false, true]);
+		expect(of('Low oil pressure')).toEqual([false, false]);
 	});
 });

@@ -18,6 +18,19 @@ export type Activation = {
 	period: number;
 };
 
+const OF_CIRCUIT = /\b(?:circuit|circ|ckt|cct|crkt)\s*(?:no\s*)?([1-4a-d])\b/;
+
+/**
+ * Does an alarm text name another circuit than this one? A history of the whole unit comes to each of its circuits.
+ * Letters count as numbers: circuit B is 2.
+ */
+export function namesAnother(text: string, circuit: string): boolean {
+	const named = OF_CIRCUIT.exec(plainWords(text))?.[1];
+	if (named === undefined || !/^[1-4]$/.test(circuit)) return false;
+	const number = 'abcd'.indexOf(named) + 1;
+	return (number > 0 ? String(number) : named) !== circuit;
+}
+
 /** Has the compressor started between two instants? Then a text seen at both has risen twice. */
 export type StartedBetween = (from: number, to: number) => boolean;
 

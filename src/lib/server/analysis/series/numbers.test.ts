@@ -1,3 +1,4 @@
+import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { median, medianDeviation, quantile, sampledQuantile, theilSen } from './numbers';
 
@@ -14,6 +15,21 @@ describe('quantile and median', () => {
 				0.5
 			)
 		).toBeCloseTo(50_000, -2);
+	});
+});
+
+describe('selection', () => {
+	it('agrees with a sort', () => {
+		const values = fc.array(fc.integer({ min: -20, max: 20 }), { minLength: 1, maxLength: 60 });
+		fc.assert(
+			fc.property(values, fc.double({ min: 0, max: 1, noNaN: true }), (list, q) => {
+				const sorted = Float64Array.from(list).sort();
+				const place = (sorted.length - 1) * q;
+				const low = sorted[Math.floor(place)] ?? NaN;
+				const high = sorted[Math.ceil(place)] ?? NaN;
+				expect(quantile(list, q)).toBeCloseTo(low + (high - low) * (place - Math.floor(place)), 9);
+			})
+		);
 	});
 });
 
