@@ -25,7 +25,7 @@ function broken(files: Record<string, string>): string[] {
 		cwd: folder,
 		encoding: 'utf8',
 		maxBuffer: 64 * 1024 ** 2,
-		stdio: ['ignore', 'pipe', 'ignore']
+		stdio: 'pipe'
 	} as const;
 	let output: string;
 	try {

@@ -21,6 +21,12 @@ const flowCurveSchema = z.array(z.object({ drop: z.number().positive(), flow: z.
 /** Points of a shell's curve: pressure drop kPa, flow L/s. */
 export type FlowCurve = z.infer<typeof flowCurveSchema>;
 
+/** Water, or ethylene or propylene glycol with its share in %; plain "water" is taken too. */
+const fluidSchema = z.preprocess(
+	(value) => (typeof value === 'string' ? { kind: value, percent: 0 } : value),
+	z.object({ kind: z.enum(['water', 'EG', 'PG']), percent: z.number().min(0).max(60).default(0) })
+);
+
 /** What kind of machine a unit is: decides which figures, clues and defaults apply. Everything may be unknown (null). */
 export const natureSchema = z
 	.object({
@@ -40,7 +46,7 @@ export const natureSchema = z
 		oilCooling: z.enum(['none', 'water', 'refrigerant', 'injection', 'unknown']).nullable(),
 		economiser: z.boolean().nullable(),
 		pumpDownOnStop: z.boolean().nullable(),
-		evapFluid: z.object({ kind: z.enum(['water', 'EG', 'PG']), percent: z.number().min(0).max(60) }).nullable(),
+		evapFluid: fluidSchema.nullable(),
 		/** L/s */
 		designEvapFlow: z.number().positive().nullable(),
 		designCondFlow: z.number().positive().nullable(),

@@ -262,6 +262,11 @@ async function lookAndRead(job: Job, log: LogRow): Promise<string[] | null> {
 		await save(job, { progress: LOOK_SHARE + READ_SHARE * Math.min(1, share), rows: progress.rows });
 	});
 	await sink.flush();
+	if (!result.refused && result.rows === 0 && result.events === 0) {
+		const why = 'No row of this log could be read; the first lines say why.';
+		result.problems.unshift({ file: '', line: null, column: null, kind: 'no-rows', message: why });
+		result.refused = true;
+	}
 	if (result.refused) {
 		await refuse(job, result.problems, several, kept);
 		return null;

@@ -56,4 +56,13 @@ describe('TimeLine', () => {
 	it('takes the offset a stamp carries', () => {
 		expect(utc(line('America/New_York').next(wall('2024-11-03T01:30'), -240))).toBe('11-03T05:30');
 	});
+
+	it('takes a log that lies in the future as a whole, and a jump ahead in mid-log for a lost clock', () => {
+		const ahead = line('UTC');
+		expect(utc(ahead.next(wall('2027-05-01T06:00'), NaN))).toBe('05-01T06:00');
+		expect(utc(ahead.next(wall('2027-05-01T06:05'), NaN))).toBe('05-01T06:05');
+		const jumping = line('UTC');
+		expect(utc(jumping.next(wall('2025-05-01T06:00'), NaN))).toBe('05-01T06:00');
+		expect(utc(jumping.next(wall('2027-05-01T06:05'), NaN))).toBeNull();
+	});
 });

@@ -7,6 +7,8 @@ export type StampFate = 'ok' | 'missing' | 'impossible';
 const EARLIEST = Date.UTC(2000, 0, 1);
 /** A logger's clock may be ahead; two days ahead it is wrong. */
 const LEAD = 2 * 86_400_000;
+const YEAR = 366 * 86_400_000;
+const FARTHEST = Date.UTC(2100, 0, 1);
 
 /**
  * Wall clocks to UTC in row order. The repeated hour is settled by order: an ambiguous clock is the first of its two
@@ -14,13 +16,14 @@ const LEAD = 2 * 86_400_000;
  */
 export class TimeLine {
 	readonly clock: ZoneClock;
-	readonly latest: number;
+	latest: number;
 	readonly descending: boolean;
 	/** Rows in the repeated hour, and how many of them order could not settle (the log begins there). */
 	repeated = 0;
 	unsettled = 0;
 	fate: StampFate = 'ok';
 	#before = NaN;
+	#begun = false;
 
 	constructor(clock: ZoneClock, now: number, descending = false) {
 		this.clock = clock;
@@ -35,6 +38,9 @@ export class TimeLine {
 			this.fate = 'missing';
 			return NaN;
 		}
+		// A log that begins in the future has a clock that is ahead as a whole: its rows still tell each other's time.
+		if (!this.#begun && utc > this.latest && utc < FARTHEST) this.latest = utc + YEAR;
+		this.#begun = true;
 		if (utc < EARLIEST || utc > this.latest) {
 			this.fate = 'impossible';
 			return NaN;
