@@ -93,22 +93,6 @@ export function decodeTimes(coded: Uint8Array): Float64Array {
 	return t;
 }
 
-/** Least places at which every figure is a whole number and comes back exactly, or −1. */
-function placesOf(v: Float64Array, scale: Scale): number {
-	for (let places = 0; places <= MOST_PLACES; places++) {
-		const ten = 10 ** places;
-		let exact = true;
-		for (let i = 0; i < v.length && exact; i++) {
-			const x = v[i] ?? NaN;
-			if (Number.isNaN(x)) continue;
-			const n = Math.round(((x - scale.offset) / scale.factor) * ten);
-			exact = Math.abs(n) < MOST_INTEGER && Object.is((n / ten) * scale.factor + scale.offset, x);
-		}
-		if (exact) return places;
-	}
-	return -1;
-}
-
 function head(mode: number, n: number, places: number, scale: Scale): Buffer {
 	const out = Buffer.allocUnsafe(22);
 	out[0] = mode;
@@ -123,16 +107,16 @@ function head(mode: number, n: number, places: number, scale: Scale): Buffer {
 function writeHoles(bytes: Bytes, v: Float64Array): void {
 	const runs: number[] = [];
 	let open = false;
-	let n = 0;
-	for (const x of v) {
-		if (Number.isNaN(x) !== open) {
-			runs.push(n);
-			n = 0;
-			open = !open;
-		}
-		n++;
+	let from = 0;
+	for (let i = 0; i < v.length; i++) {
+		const x = v[i] as number;
+		// Only NaN differs from itself.
+		if ((x !== x) === open) continue;
+		runs.push(i - from);
+		from = i;
+		open = !open;
 	}
-	runs.push(n);
+	runs.push(v.length - from);
 	bytes.varint(runs.length);
 	for (const run of runs) bytes.varint(run);
 }
@@ -143,18 +127,40 @@ function readHoles(reader: Reader): Uint32Array {
 	return runs;
 }
 
-function encodeIntegers(v: Float64Array, places: number, scale: Scale): Buffer {
-	const bytes = new Bytes(v.length * 2 + 32);
-	writeHoles(bytes, v);
+/** Values as whole numbers of 10^−places in the file's figures, or null when one would not come back exactly. */
+function encodeIntegers(v: Float64Array, places: number, scale: Scale): Buffer | null {
 	const ten = 10 ** places;
+	const { factor, offset } = scale;
+	const scaled = ten / factor;
+	const out = scratch(v.length * 8);
+	let at = 0;
 	let before = 0;
-	for (const x of v) {
-		if (Number.isNaN(x)) continue;
-		const n = Math.round(((x - scale.offset) / scale.factor) * ten);
-		bytes.varint(n - before);
+	for (let i = 0; i < v.length; i++) {
+		const x = v[i] as number;
+		if (x !== x) continue;
+		const n = Math.round((x - offset) * scaled);
+		if ((n / ten) * factor + offset !== x || n > MOST_INTEGER || n < -MOST_INTEGER || (n === 0 && Object.is(x, -0)))
+			return null;
+		const delta = n - before;
 		before = n;
+		let code = delta < 0 ? -2 * delta - 1 : 2 * delta;
+		while (code >= 128) {
+			out[at++] = (code % 128) | 128;
+			code = Math.floor(code / 128);
+		}
+		out[at++] = code;
 	}
-	return Buffer.concat([head(INTEGERS, v.length, places, scale), deflateRawSync(bytes.view, { level: LEVEL })]);
+	const holes = new Bytes(64);
+	writeHoles(holes, v);
+	const packed = deflateRawSync(Buffer.concat([holes.view, out.subarray(0, at)]), { level: LEVEL });
+	return Buffer.concat([head(INTEGERS, v.length, places, scale), packed]);
+}
+
+let shared = Buffer.alloc(0);
+/** A buffer to write into before packing, used again by the next block. */
+function scratch(size: number): Buffer {
+	if (shared.length < size) shared = Buffer.allocUnsafeSlow(size);
+	return shared;
 }
 
 function shuffled(raw: Buffer, width: number): Buffer {
@@ -196,8 +202,10 @@ export function encodeValues(v: Float64Array, scale: Scale = { factor: 1, offset
 	const constant = constantOf(v);
 	if (constant !== null) return head(CONSTANT, v.length, 0, { factor: 1, offset: constant });
 	for (const candidate of [scale, { factor: 1, offset: 0 }]) {
-		const places = placesOf(v, candidate);
-		if (places >= 0) return encodeIntegers(v, places, candidate);
+		for (let places = 0; places <= MOST_PLACES; places++) {
+			const coded = encodeIntegers(v, places, candidate);
+			if (coded) return coded;
+		}
 	}
 	return encodeFloats(v, isFloat32(v) ? 4 : 8);
 }

@@ -21,6 +21,9 @@ export type Guess = {
 	rivals: MeasureKey[];
 };
 
+/** Confidence under which a column is not used without a person. */
+export const SURE = 0.8;
+
 /** Signals that several columns of one circuit may carry. */
 export const MANY: ReadonlySet<SignalKey> = new Set(['phaseCurrents', 'phaseVoltages', 'windingTemp', 'alarm']);
 
@@ -193,5 +196,19 @@ export function guessColumns(
 		}
 		return { ...base, ...best, confidence: Math.min(0.99, best.confidence) };
 	});
+	distrust(guesses, named);
 	return { guesses, system: decided.system, systemSure: decided.sure };
+}
+
+/** Where many names contradict their figures, the header is not this table's: then no name of it is sure. */
+function distrust(guesses: readonly Guess[], named: readonly (readonly NameGuess[])[]): void {
+	const plain = guesses.filter((g, i) => g.sample.shape.filled > 0 && (named[i]?.[0]?.sure ?? 0) >= SURE);
+	const against = guesses.filter(
+		(g, i) => g.sample.shape.filled > 0 && (named[i]?.[0]?.sure ?? 0) >= SURE && g.confidence < 0.6
+	);
+	if (against.length < 3 || against.length < 0.2 * plain.length) return;
+	for (const guess of guesses) {
+		guess.confidence *= 0.75;
+		guess.reasons.push('many names of this log contradict their figures');
+	}
 }

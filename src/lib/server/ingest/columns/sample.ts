@@ -98,7 +98,8 @@ export function sampleColumn(
 		readCell(cell, decimal, out);
 		if (out.bad === null) {
 			shape.numbers++;
-			const suffix = cellUnit(cell);
+			const end = cell.charCodeAt(cell.length - 1);
+			const suffix = end >= 48 && end <= 57 ? '' : cellUnit(cell);
 			if (suffix) suffixes.set(suffix, (suffixes.get(suffix) ?? 0) + 1);
 			return out.value;
 		}

@@ -4,9 +4,6 @@ import type { Problem } from '../types';
 import { MANY, type Guess } from './guess';
 import { pairedValues } from './pairs';
 
-/** Confidence under which a column is not used without a person. */
-export const SURE = 0.8;
-
 function problem(guess: Guess, file: string, kind: string, message: string): Problem {
 	return { file, line: null, column: guess.sample.column, kind, message };
 }

@@ -1,6 +1,5 @@
 import { SIGNALS, type SignalKey } from '$lib/model/signals';
-import { isAnonymous, type Guess } from '../columns/guess';
-import { SURE } from '../columns/settle';
+import { isAnonymous, SURE, type Guess } from '../columns/guess';
 import type { Choice } from '../types';
 
 /** Signals that tell when the compressor runs; one of them at least is needed. */

@@ -1,10 +1,10 @@
 import { isMeasureKey } from '$lib/model/quantities';
 import { SIGNALS } from '$lib/model/signals';
-import { guessColumns, type Guess } from '../columns/guess';
+import { guessColumns, SURE, type Guess } from '../columns/guess';
 import { loggingOf, rowsOnChange, spacingOf } from '../columns/logging';
 import { settlePressures } from '../columns/pressure';
 import type { ColumnSample } from '../columns/sample';
-import { checkRelations, checkRunning, findDead, findDuplicates, settleRivals, SURE } from '../columns/settle';
+import { checkRelations, checkRunning, findDead, findDuplicates, settleRivals } from '../columns/settle';
 import { unpack, type Unpacked } from '../container/unpack';
 import { draftFile, usualStep, type Draft } from '../layout/draft';
 import { look } from '../text/look';

@@ -22,7 +22,10 @@ export type Draft = {
 	choices: Choice[];
 };
 
-const MOST_HEAD_ROWS = 240;
+/** Rows of the head that are looked at one after another; the head's others are seen in runs, as the rest of the file. */
+const MOST_HEAD_ROWS = 200;
+const HEAD_RUNS = 100;
+const RUN = 3;
 /** Rows that decide which kind of layout a table has. */
 const MOST_JUDGED = 600;
 
@@ -32,13 +35,16 @@ function sampleRows(
 	head: TextRow[],
 	dataLine: number
 ): { rows: TextRow[]; headRows: number } {
-	const data = head.filter((row) => row.line >= dataLine).slice(0, MOST_HEAD_ROWS);
-	const rows = [...data];
+	const data = head.filter((row) => row.line >= dataLine);
+	const headRows = Math.min(data.length, MOST_HEAD_ROWS);
+	const rows = data.slice(0, headRows);
+	const every = Math.max(RUN, Math.floor((data.length - headRows) / HEAD_RUNS));
+	for (let at = headRows; at < data.length; at += every) rows.push(...data.slice(at, Math.min(at + RUN, at + every)));
 	for (const run of look.runs) {
 		// A run may begin inside a quoted cell: rows of another width are not believed.
 		for (const row of papaRows(run.lines.join('\n'), delimiter, run.line)) rows.push(row);
 	}
-	return { rows, headRows: data.length };
+	return { rows, headRows };
 }
 
 function stampText(row: TextRow, column: number, clockColumn: number): string {
@@ -69,7 +75,7 @@ export function draftFile(leaf: Leaf, look: Look, ctx: ReadContext): Draft | Pro
 	if (!table) return noTable(leaf, look);
 	const header = findHeader(look.head, table);
 	const width = Math.max(table.width, header.names.length);
-	const { rows, headRows } = sampleRows(look, table.delimiter, table.rows, header.dataLine);
+	const { rows, headRows } = sampleRows(look, table.delimiter, papaRows(look.head, table.delimiter), header.dataLine);
 	const { column, clockColumn, time } = table.place;
 	const skip = [column, clockColumn];
 	const cells = rows.slice(0, 400).flatMap((row) => row.cells.filter((_, i) => !skip.includes(i)));

@@ -110,18 +110,31 @@ export class TargetTally {
 
 	/** Adds readings of a block, times rising, to the stretches covered. */
 	cover(t: Float64Array, v: Float64Array): void {
-		let open: { from: number; to: number } | undefined = this.covered.at(-1);
+		let from = NaN;
+		let to = NaN;
+		let n = 0;
 		for (let i = 0; i < t.length; i++) {
-			if (Number.isNaN(v[i])) continue;
-			const at = t[i] ?? NaN;
-			this.samples++;
-			if (open && at >= open.from && at - open.to <= this.#join) open.to = Math.max(open.to, at);
-			else {
-				open = { from: at, to: at };
-				this.covered.push(open);
+			const x = v[i] as number;
+			if (x !== x) continue;
+			const at = t[i] as number;
+			n++;
+			// A first reading, and one after a hole: `at - NaN` compares false.
+			if (!(at - to <= this.#join)) {
+				this.#stretch(from, to);
+				from = at;
 			}
+			to = at;
 		}
+		this.samples += n;
+		this.#stretch(from, to);
 		if (this.covered.length > MOST_STRETCHES) this.#coarsen();
+	}
+
+	#stretch(from: number, to: number): void {
+		if (Number.isNaN(from)) return;
+		const last = this.covered.at(-1);
+		if (last && from >= last.from && from - last.to <= this.#join) last.to = Math.max(last.to, to);
+		else this.covered.push({ from, to });
 	}
 
 	#coarsen(): void {

@@ -34,6 +34,9 @@ export class WideRows {
 	readonly #file: FilePlan;
 	readonly #fileIndex: number;
 	readonly #columns: Column[];
+	/** Columns of numbers only, and those in which words count. */
+	readonly #plain: Column[];
+	readonly #wordy: Column[];
 	readonly #clock: RowClock;
 	#t = new Float64Array(MOST_ROWS);
 	#lines = new Float64Array(MOST_ROWS);
@@ -71,6 +74,8 @@ export class WideRows {
 			};
 			return column;
 		});
+		this.#plain = this.#columns.filter((column) => column.word < 0);
+		this.#wordy = this.#columns.filter((column) => column.word >= 0);
 		this.dictionaries = words.map(() => new Dictionary());
 		const { column, clockColumn, order, year } = file.time;
 		this.plan = {
@@ -92,7 +97,15 @@ export class WideRows {
 		const n = this.#n++;
 		this.#t[n] = t;
 		this.#lines[n] = view.line;
-		for (const column of this.#columns) {
+		const { numbers, bad } = view;
+		const plain = this.#plain;
+		for (let k = 0; k < plain.length; k++) {
+			const column = plain[k] as Column;
+			const slot = column.number;
+			column.values[n] = numbers[slot] as number;
+			if (bad[slot] !== 0) column.tally.note((bad[slot] as number) - 1, view.line);
+		}
+		for (const column of this.#wordy) {
 			if (column.texts) column.texts[n] = view.words[column.word] ?? -1;
 			else column.values[n] = this.#figure(column, view);
 		}
@@ -101,10 +114,6 @@ export class WideRows {
 	#figure(column: Column, view: RowView): number {
 		const x = view.numbers[column.number] ?? NaN;
 		const bad = view.bad[column.number] ?? 0;
-		if (column.word < 0) {
-			if (bad > 0) column.tally.note(bad - 1, view.line);
-			return x;
-		}
 		if (bad === 0) return x;
 		const code = view.words[column.word] ?? -1;
 		const state = code < 0 ? NaN : this.#state(column, code);

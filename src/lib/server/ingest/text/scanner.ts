@@ -3,7 +3,7 @@ import { LogRefusal } from '../types';
 import { MOST_LINE } from './look';
 import { BLANK, type Dictionary, SlowCells, type RowHandler, type RowPlan, type RowView } from './row-plan';
 
-const POW10 = Array.from({ length: 17 }, (_, i) => 10 ** i);
+const POW10 = Float64Array.from({ length: 17 }, (_, i) => 10 ** i);
 const SKIP = 0;
 const NUMBER = 1;
 const WORD = 2;
@@ -99,20 +99,17 @@ export class RowScanner {
 
 	/** Reads the record at `at`; the place after it, or −1 or −2 (see {@link feed}). */
 	#record(b: Buffer, at: number, end: number): number {
-		const { view, plan } = this;
-		view.numbers.fill(NaN);
-		view.bad.fill(BLANK);
-		view.words.fill(-1);
+		const jobs = this.#jobs;
+		const [delimiter, width] = [this.#delimiter, this.plan.width];
 		this.#dateFrom = this.#dateTo = 0;
 		this.#clockFrom = -1;
 		this.#surplus = false;
-		const [delimiter, width] = [this.#delimiter, plan.width];
 		let i = at;
 		let column = 0;
 		let lines = 1;
 		for (;;) {
-			const job = column < width ? (this.#jobs[column] ?? SKIP) : SKIP;
-			let stop: number;
+			const job = column < width ? (jobs[column] as number) : SKIP;
+			let stop = i;
 			if (b[i] === QUOTE) {
 				const close = b.indexOf(QUOTE, i + 1);
 				if (close < 0 || close >= end) return -1;
@@ -123,12 +120,14 @@ export class RowScanner {
 				this.#take(b, i + 1, close, job, column);
 			} else if (job === NUMBER) stop = this.#number(b, i, column);
 			else {
-				stop = i;
 				while (b[stop] !== delimiter && b[stop] !== LF) stop++;
-				this.#take(b, i, b[stop] === LF && b[stop - 1] === CR && stop > i ? stop - 1 : stop, job, column);
+				if (job !== SKIP || column >= width) {
+					this.#take(b, i, b[stop] === LF && b[stop - 1] === CR && stop > i ? stop - 1 : stop, job, column);
+				}
 			}
 			column++;
 			if (b[stop] === LF) {
+				if (column < width) this.#blankFrom(column);
 				this.#cells = column;
 				this.#finish(b, at, stop);
 				this.line += lines;
@@ -138,45 +137,70 @@ export class RowScanner {
 		}
 	}
 
-	/** A number cell from `from`; the place of the delimiter or line feed after it. */
+	/** A row that ends early: the cells it lacks are blank. */
+	#blankFrom(column: number): void {
+		for (let c = column; c < this.plan.width; c++) {
+			const slot = this.#slots[c] as number;
+			if (this.#jobs[c] === NUMBER) this.#blank(slot, c);
+			else if (this.#jobs[c] === WORD) this.view.words[slot] = -1;
+		}
+	}
+
+	#blank(slot: number, column: number): void {
+		this.view.numbers[slot] = NaN;
+		this.view.bad[slot] = BLANK;
+		const word = this.#mixed[column] as number;
+		if (word >= 0) this.view.words[word] = -1;
+	}
+
+	/**
+	 * A number cell from `from`; the place of the delimiter or line feed after it. The buffer's part that is read ends
+	 * with a line feed, so no place beyond it is looked at.
+	 */
 	#number(b: Buffer, from: number, column: number): number {
 		const delimiter = this.#delimiter;
-		const slot = this.#slots[column] ?? 0;
+		const slot = this.#slots[column] as number;
 		let i = from;
-		let c = b[i] ?? LF;
-		while (c === SPACE) c = b[++i] ?? LF;
+		let c = b[i] as number;
+		while (c === SPACE) c = b[++i] as number;
 		const first = i;
 		const negative = c === MINUS;
-		if (negative || c === PLUS) c = b[++i] ?? LF;
+		if (negative || c === PLUS) c = b[++i] as number;
 		let mantissa = 0;
-		let digits = 0;
-		let places = 0;
+		const whole = i;
 		while (c >= ZERO && c <= NINE) {
 			mantissa = mantissa * 10 + (c - ZERO);
-			digits++;
-			c = b[++i] ?? LF;
+			c = b[++i] as number;
 		}
+		let digits = i - whole;
+		let places = 0;
 		if (c === this.#decimal && digits > 0) {
-			c = b[++i] ?? LF;
+			const point = ++i;
+			c = b[i] as number;
 			while (c >= ZERO && c <= NINE) {
 				mantissa = mantissa * 10 + (c - ZERO);
-				digits++;
-				places++;
-				c = b[++i] ?? LF;
+				c = b[++i] as number;
 			}
+			places = i - point;
+			digits += places;
 		}
 		const afterDigits = i;
-		while (c === SPACE) c = b[++i] ?? LF;
-		if (c === CR && b[i + 1] === LF) c = b[++i] ?? LF;
+		while (c === SPACE) c = b[++i] as number;
+		if (c === CR && b[i + 1] === LF) c = b[++i] as number;
 		if (c === delimiter || c === LF) {
 			// Up to 15 digits both parts are exact, so one division rounds as a full parser would.
 			if (digits > 0 && digits <= 15) {
-				const value = places > 0 ? mantissa / (POW10[places] ?? 1) : mantissa;
+				const value = places > 0 ? mantissa / (POW10[places] as number) : mantissa;
 				this.view.numbers[slot] = negative ? -value : value;
 				this.view.bad[slot] = 0;
+				const word = this.#mixed[column] as number;
+				if (word >= 0) this.view.words[word] = -1;
 				return i;
 			}
-			if (digits === 0 && afterDigits === first) return i;
+			if (digits === 0 && afterDigits === first) {
+				this.#blank(slot, column);
+				return i;
+			}
 		}
 		while (b[i] !== delimiter && b[i] !== LF) i++;
 		this.#slowNumber(b, from, i, column);
@@ -190,7 +214,7 @@ export class RowScanner {
 		this.view.numbers[slot] = cell.value;
 		this.view.bad[slot] = cell.bad;
 		const word = this.#mixed[column] ?? -1;
-		if (word >= 0 && cell.bad !== 0) this.view.words[word] = this.dictionaries[word]?.code(text) ?? -1;
+		if (word >= 0) this.view.words[word] = cell.bad === 0 ? -1 : (this.dictionaries[word]?.code(text) ?? -1);
 	}
 
 	#take(b: Buffer, from: number, to: number, job: number, column: number): void {
