@@ -1,5 +1,17 @@
 /** The worker process: takes jobs from the queue and gives them to threads, so that its own event loop stays free. */
-import { JOBS, closeQueue, enqueueReading, queue, type AnalyseUnitJob, type ReadLogJob } from '$lib/server/jobs/queue';
+import {
+	JOBS,
+	closeQueue,
+	enqueueReading,
+	queue,
+	scheduleJobs,
+	type AnalyseUnitJob,
+	type ReadLogJob,
+	type SendMailJob
+} from '$lib/server/jobs/queue';
+import { tellLateLogs } from '$lib/server/services/deliveries';
+import { sendDigests } from '$lib/server/services/digest';
+import { sendMail, sweepMails } from '$lib/server/services/mails';
 import { unfinished } from '$lib/server/services/recovery';
 import { closeDatabase } from '$lib/server/repositories/transaction';
 import { fileURLToPath } from 'node:url';
@@ -21,9 +33,16 @@ async function main(): Promise<void> {
 			if (job) await pool.run({ kind: JOBS.analyseUnit, data: job.data });
 		});
 	}
+	await boss.work<SendMailJob>(JOBS.sendMail, options, async ([job]) => {
+		if (job) await sendMail(job.data);
+	});
+	await boss.work(JOBS.digest, async () => sendDigests());
+	await boss.work(JOBS.deliveries, async () => tellLateLogs());
+	await scheduleJobs();
 	// What a killed worker left half done is taken up again; a log that another worker holds is left alone.
 	const sweep = async (): Promise<void> => {
 		for (const log of await unfinished()) await enqueueReading(log);
+		await sweepMails();
 	};
 	await sweepSafely(sweep);
 	setInterval(() => void sweepSafely(sweep), SWEEP_MS).unref();

@@ -39,7 +39,9 @@ describe('startPicture', () => {
 		day: 'Mon 2 Mar',
 		outcome: 'tripped',
 		text: 'tripped',
-		traces: [{ signal: 'evapSaturation', label: 'saturation', family: 'low', t: [-30, 0, 60, 120], v: [10, 10, null, 0] }],
+		traces: [
+			{ signal: 'evapSaturation', label: 'saturation', family: 'low', t: [-30, 0, 60, 120], v: [10, 10, null, 0] }
+		],
 		tripAt: 90,
 		cutout: 5
 	};

@@ -41,7 +41,8 @@ function clockWindow(days: readonly DayStrip[]): { from: number; to: number } {
 export function daysPicture(days: readonly DayStrip[], width: number, row = 13): DaysPicture {
 	const { from, to } = clockWindow(days);
 	const height = TOP + days.length * row + 2;
-	const x = (minute: number): number => LEFT + ((Math.min(Math.max(minute, from), to) - from) / (to - from)) * (width - LEFT - 3);
+	const x = (minute: number): number =>
+		LEFT + ((Math.min(Math.max(minute, from), to) - from) / (to - from)) * (width - LEFT - 3);
 	const step = to - from > 12 * HOUR ? 4 * HOUR : 2 * HOUR;
 	const marks = Array.from({ length: Math.floor((to - from) / step) + 1 }, (_, i) => from + i * step);
 	const shapes: StrokeShape[] = [];
@@ -105,7 +106,12 @@ function traceLabel(
 	const at = readings[Math.floor(readings.length * (k === 0 ? 0.3 : 0.62))];
 	if (!at) return null;
 	const over = y(at.v) - 6;
-	return { x: x(at.t), y: over > box.top + 10 ? over : Math.min(box.bottom - 4, y(at.v) + 14), text: start.label, anchor: 'start' };
+	return {
+		x: x(at.t),
+		y: over > box.top + 10 ? over : Math.min(box.bottom - 4, y(at.v) + 14),
+		text: start.label,
+		anchor: 'start'
+	};
 }
 
 /** One start of a brief on the brief's common axis; `named` puts the traces' names into it. */
@@ -118,7 +124,8 @@ export function startPicture(
 	const { width, height } = size;
 	const [top, bottom] = [4, height - FOOT];
 	const window = { from: -30, to: axis.toSeconds };
-	const x = (seconds: number): number => LEFT + ((seconds - window.from) / (window.to - window.from)) * (width - LEFT - 1);
+	const x = (seconds: number): number =>
+		LEFT + ((seconds - window.from) / (window.to - window.from)) * (width - LEFT - 1);
 	const y = (value: number): number => bottom - ((value - axis.low) / (axis.high - axis.low)) * (bottom - top);
 	const { ticks } = valueTicks([axis.low, axis.high], 3, 1);
 	const inside = ticks.filter((tick) => tick >= axis.low && tick <= axis.high);

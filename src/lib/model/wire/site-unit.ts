@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { LIMIT_KEYS, natureSchema, provenanceSchema, refrigerantSchema } from '../unit';
+import { contactSchema, LIMIT_KEYS, namePlateSchema, natureSchema, provenanceSchema, refrigerantSchema } from '../unit';
 import { idSchema, instantSchema } from './common';
 
 /** Is `zone` an IANA time zone this machine knows? */
@@ -17,7 +17,10 @@ export const siteInputSchema = z
 		name: z.string().trim().min(1).max(120),
 		timeZone: timeZoneSchema,
 		address: z.string().trim().max(300).nullable().optional(),
-		altitude: z.number().min(-500).max(9000).nullable().optional().meta({ description: 'm above sea level' })
+		altitude: z.number().min(-500).max(9000).nullable().optional().meta({ description: 'm above sea level' }),
+		contacts: z.array(contactSchema).max(30).optional(),
+		accessNotes: z.string().trim().max(1000).nullable().optional(),
+		onCallId: idSchema.nullable().optional().meta({ description: 'the member who is told at once' })
 	})
 	.meta({ id: 'SiteInput' });
 export const siteSchema = z
@@ -26,7 +29,10 @@ export const siteSchema = z
 		name: z.string(),
 		timeZone: z.string(),
 		address: z.string().nullable(),
-		altitude: z.number().nullable()
+		altitude: z.number().nullable(),
+		contacts: z.array(contactSchema).optional(),
+		accessNotes: z.string().nullable().optional(),
+		onCallId: idSchema.nullable().optional()
 	})
 	.meta({ id: 'Site' });
 export type Site = z.infer<typeof siteSchema>;
@@ -50,7 +56,15 @@ export const unitInputSchema = z
 		refrigerant: refrigerantSchema,
 		circuits: z.number().int().min(1).max(4).default(1),
 		nature: natureSchema.default({}),
-		limits: limitsInputSchema.default({})
+		limits: limitsInputSchema.default({}),
+		namePlate: namePlateSchema.optional(),
+		deliveryHours: z
+			.number()
+			.positive()
+			.max(2400)
+			.nullable()
+			.optional()
+			.meta({ description: 'a log is expected at least this often, h' })
 	})
 	.meta({ id: 'UnitInput' });
 export const unitPatchSchema = unitInputSchema
@@ -71,6 +85,8 @@ export const unitSchema = z
 		refrigerant: refrigerantSchema,
 		circuits: z.number().int(),
 		nature: natureSchema,
+		namePlate: namePlateSchema.optional(),
+		deliveryHours: z.number().nullable().optional(),
 		limits: z.partialRecord(
 			z.enum(LIMIT_KEYS),
 			z.array(

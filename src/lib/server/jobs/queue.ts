@@ -4,11 +4,17 @@ import PgBoss from 'pg-boss';
 /** Names and payloads of the jobs, and how they are put into the queue. */
 export const JOBS = {
 	readLog: 'read-log',
-	analyseUnit: 'analyse-unit'
+	analyseUnit: 'analyse-unit',
+	sendMail: 'send-mail',
+	/** once a week */
+	digest: 'weekly-digest',
+	/** every quarter of an hour */
+	deliveries: 'late-deliveries'
 } as const;
 
 export type ReadLogJob = { organisationId: string; logId: string };
 export type AnalyseUnitJob = { organisationId: string; unitId: string };
+export type SendMailJob = { organisationId: string; mailId: string };
 
 let opened: Promise<PgBoss> | undefined;
 
@@ -25,12 +31,17 @@ async function open(): Promise<PgBoss> {
 	await boss.createQueue(JOBS.readLog);
 	// Only this policy makes a singleton key hold without a time slot: one waiting recomputation a unit, however many logs.
 	await boss.createQueue(JOBS.analyseUnit, { name: JOBS.analyseUnit, policy: 'short' });
+	for (const name of [JOBS.sendMail, JOBS.digest, JOBS.deliveries]) await boss.createQueue(name);
 	return boss;
 }
 
 /** The process's connection to the queue. */
 export function queue(): Promise<PgBoss> {
-	opened ??= open();
+	opened ??= open().catch((error: unknown) => {
+		// Two processes that make the queues at the same instant may disturb each other: the next call tries again.
+		opened = undefined;
+		throw error;
+	});
 	return opened;
 }
 
@@ -46,6 +57,21 @@ export async function enqueueAnalysis(job: AnalyseUnitJob, afterSeconds = 0): Pr
 	await (await queue()).send(JOBS.analyseUnit, job, { ...RETRY, singletonKey: job.unitId, startAfter: afterSeconds });
 }
 
+// A mail server that is down for a night is tried until it is back: 8 tries over about 17 h.
+const MAIL_RETRY = { retryLimit: 8, retryDelay: 30, retryBackoff: true, expireInSeconds: 120 };
+
+/** Sends a message of the outbox. */
+export async function enqueueMail(job: SendMailJob): Promise<void> {
+	await (await queue()).send(JOBS.sendMail, job, MAIL_RETRY);
+}
+
+/** Puts the jobs that come round by the clock into the queue's own calendar. */
+export async function scheduleJobs(): Promise<void> {
+	const boss = await queue();
+	await boss.schedule(JOBS.digest, '0 5 * * 1', {}, { tz: 'UTC' });
+	await boss.schedule(JOBS.deliveries, '*/15 * * * *', {}, { tz: 'UTC' });
+}
+
 /** Lets go of the queue. */
 export async function closeQueue(): Promise<void> {
 	const boss = await opened;
@@ -58,7 +84,8 @@ export async function queueAnswers(): Promise<boolean> {
 	try {
 		await (await queue()).getQueueSize(JOBS.readLog);
 		return true;
-	} catch {
+	} catch (error) {
+		console.error('queue', error instanceof Error ? error.message : error);
 		return false;
 	}
 }

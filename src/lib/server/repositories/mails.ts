@@ -44,6 +44,8 @@ export async function listForgotten(tx: Tx, before: Date): Promise<string[]> {
 	const rows = await tx
 		.select({ id: mails.id })
 		.from(mails)
-		.where(and(eq(mails.state, 'queued'), lt(mails.createdAt, before), or(isNull(mails.triedAt), lt(mails.triedAt, before))));
+		.where(
+			and(eq(mails.state, 'queued'), lt(mails.createdAt, before), or(isNull(mails.triedAt), lt(mails.triedAt, before)))
+		);
 	return rows.map((row) => row.id);
 }

@@ -52,9 +52,16 @@ export async function insertUnit(tx: Tx, row: typeof units.$inferInsert): Promis
 export async function updateUnit(
 	tx: Tx,
 	id: string,
-	change: Partial<{ tag: string; refrigerant: UnitRow['refrigerant']; circuits: number; nature: UnitNature }>
+	change: Partial<
+		Pick<UnitRow, 'tag' | 'refrigerant' | 'circuits' | 'namePlate' | 'deliveryHours'> & { nature: UnitNature }
+	>
 ): Promise<void> {
 	if (Object.keys(change).length > 0) await tx.update(units).set(change).where(eq(units.id, id));
+}
+
+/** Notes that a late delivery was told. */
+export async function markLateTold(tx: Tx, unitId: string, at: Date): Promise<void> {
+	await tx.update(units).set({ lateToldAt: at }).where(eq(units.id, unitId));
 }
 
 /** Marks everything computed for a unit as stale. */

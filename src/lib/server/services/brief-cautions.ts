@@ -30,7 +30,12 @@ export function briefCautions(
 		...(has(ELECTRICAL) ? [{ text: CAUTIONS.electricalStop, strong: true }] : []),
 		...(kinds.has('oil-flow') ? [{ text: CAUTIONS.oilStop, strong: true }] : []),
 		...(has(UNTIL_FOUND)
-			? [{ text: 'No restart after an emergency stop or a refrigerant detector until the reason is found.', strong: true }]
+			? [
+					{
+						text: 'No restart after an emergency stop or a refrigerant detector until the reason is found.',
+						strong: true
+					}
+				]
 			: []),
 		plain(safetyWords(refrigerant)),
 		plain(CAUTIONS.trappedLiquid),

@@ -44,7 +44,8 @@ function textOf(row: StartRow): string {
 	return OUTCOME_WORDS[row.outcome];
 }
 
-const labelOf = (key: TraceKey) => (key in SIGNALS ? SIGNALS[key as keyof typeof SIGNALS] : DERIVED[key as keyof typeof DERIVED]);
+const labelOf = (key: TraceKey) =>
+	key in SIGNALS ? SIGNALS[key as keyof typeof SIGNALS] : DERIVED[key as keyof typeof DERIVED];
 
 /** Pictures of some starts with a common axis; none when their signals are not logged. */
 export async function briefStarts(

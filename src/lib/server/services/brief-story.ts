@@ -45,12 +45,15 @@ function logLine({ records, days }: Material): Line {
 	if (m === 0) return { label: 'What the log says.', text: 'No first try in the logs given.' };
 	const trips = records.filter((record) => record.startupTrip && record.trip);
 	const kinds = new Map<string, number>();
-	for (const { trip } of trips) if (trip) kinds.set(TRIP_KIND_WORDS[trip.kind], (kinds.get(TRIP_KIND_WORDS[trip.kind]) ?? 0) + 1);
+	for (const { trip } of trips)
+		if (trip) kinds.set(TRIP_KIND_WORDS[trip.kind], (kinds.get(TRIP_KIND_WORDS[trip.kind]) ?? 0) + 1);
 	const [kind] = [...kinds].sort((a, b) => b[1] - a[1]);
 	const seconds = trips.map((record) => ((record.trip?.at ?? 0) - record.startedAt) / 1000).sort((a, b) => a - b);
 	const middle = seconds[Math.floor(seconds.length / 2)];
 	const when =
-		middle === undefined ? '' : `, half of them within ${middle < 120 ? `${Math.round(middle)} s` : `${Math.round(middle / 60)} min`}`;
+		middle === undefined
+			? ''
+			: `, half of them within ${middle < 120 ? `${Math.round(middle)} s` : `${Math.round(middle / 60)} min`}`;
 	const what = kind ? ` on ${kind[0]}${when}` : '';
 	return {
 		label: 'What the log says.',
@@ -79,7 +82,9 @@ function readLine({ checks, air, timeZone }: Material, system: UnitSystem): Line
 function doneLine({ changes, visits, timeZone }: Material): Line[] {
 	const done = [
 		...changes.map((row) => ({ at: row.at.getTime(), text: row.text })),
-		...visits.flatMap((row) => (row.leftAt && row.result ? [{ at: row.leftAt.getTime(), text: `visit: ${row.result}` }] : []))
+		...visits.flatMap((row) =>
+			row.leftAt && row.result ? [{ at: row.leftAt.getTime(), text: `visit: ${row.result}` }] : []
+		)
 	].sort((a, b) => a.at - b.at);
 	if (done.length === 0) return [{ label: 'Already done.', text: 'Nothing on record.' }];
 	const words = done.slice(-3).map(({ at, text }) => `${shortDate(siteDate(at, timeZone))}: ${sentence(text)}`);

@@ -40,7 +40,8 @@ function checksOfBrief(suspects: Suspects['suspects']): Brief['checks'] {
 		if (standing !== 'points-to' && standing !== 'fits') continue;
 		const known = checks.get(decisiveCheck.key);
 		if (known) known.decides = `${known.decides}, ${name.toLowerCase()}`;
-		else if (checks.size < MOST_CHECKS) checks.set(decisiveCheck.key, { ...decisiveCheck, decides: name.toLowerCase() });
+		else if (checks.size < MOST_CHECKS)
+			checks.set(decisiveCheck.key, { ...decisiveCheck, decides: name.toLowerCase() });
 	}
 	return [...checks.values()];
 }
@@ -109,10 +110,20 @@ export async function briefOf(actor: Actor, visitId: string, system: UnitSystem)
 		beThereReason: reasonWords(ground),
 		cautions: briefCautions(unit.refrigerant, kinds),
 		story: briefStory(
-			{ ...ground, records, days, suspects: named, verdict: found.verdict, timeZone: site.timeZone, air: airPressure(site.altitude ?? 0) },
+			{
+				...ground,
+				records,
+				days,
+				suspects: named,
+				verdict: found.verdict,
+				timeZone: site.timeZone,
+				air: airPressure(site.altitude ?? 0)
+			},
 			system
 		),
-		days: lastDay ? dayStrips(rows, covered, addDays(lastDay, 1 - STRIP_DAYS), lastDay, site.timeZone, lastAt ?? 0) : [],
+		days: lastDay
+			? dayStrips(rows, covered, addDays(lastDay, 1 - STRIP_DAYS), lastDay, site.timeZone, lastAt ?? 0)
+			: [],
 		...pictures,
 		suspects: named.map(({ name, standing, clues }) => ({
 			name,

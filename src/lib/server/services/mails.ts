@@ -6,8 +6,23 @@ import { hashToken, randomToken } from '$lib/server/auth/tokens';
 import { config, now } from '$lib/server/config';
 import { enqueueMail } from '$lib/server/jobs/queue';
 import { mailer } from '$lib/server/mail';
-import { findPerson, findToken, insertToken, listMembers, listOrganisations, updatePerson } from '$lib/server/repositories/identity';
-import { findMail, insertMail, listForgotten, listMails, markTried, updateMail, type MailRow } from '$lib/server/repositories/mails';
+import {
+	findPerson,
+	findToken,
+	insertToken,
+	listMembers,
+	listOrganisations,
+	updatePerson
+} from '$lib/server/repositories/identity';
+import {
+	findMail,
+	insertMail,
+	listForgotten,
+	listMails,
+	markTried,
+	updateMail,
+	type MailRow
+} from '$lib/server/repositories/mails';
 import { withOrganisation } from '$lib/server/repositories/transaction';
 import { objectStore, readObject } from '$lib/server/store';
 import { randomUUID } from 'node:crypto';
@@ -60,7 +75,7 @@ export async function queueLetter(organisationId: string, letter: Letter): Promi
 	const unsubscribe = await unsubscribeLink(organisationId, letter);
 	const because = unsubscribe ? `${letter.body.because} Stop these messages: ${unsubscribe}` : letter.body.because;
 	const body = { ...letter.body, because };
-	const attachments = [];
+	const attachments: MailRow['attachments'] = [];
 	for (const [i, { name, type, bytes }] of (letter.attachments ?? []).entries()) {
 		const key = `mails/${organisationId}/${id}/${i}`;
 		await objectStore().keep(key, bytes);
@@ -84,6 +99,10 @@ export async function queueLetter(organisationId: string, letter: Letter): Promi
 	return stored;
 }
 
+/** A link that signs in or lets in is for its receiver alone, not for who reads the outbox. */
+const SECRET: ReadonlySet<string> = new Set(['invitation', 'reset', 'email-change']);
+const withoutToken = (text: string): string => text.replaceAll(/([?&]token=)[\w-]+/g, '$1…');
+
 const LINK = /Stop these messages: (\S+)/;
 
 /** Sends one message of the outbox. A failure is noted there and thrown, so that the queue tries again. */
@@ -99,7 +118,12 @@ export async function sendMail(job: { organisationId: string; mailId: string }):
 	} catch (error) {
 		failure = error instanceof Error ? error.message : String(error);
 	}
-	await withOrganisation(job.organisationId, (tx) => markTried(tx, row.id, now(), failure));
+	await withOrganisation(job.organisationId, async (tx) => {
+		await markTried(tx, row.id, now(), failure);
+		// The receiver has the link now; the outbox needs it no longer.
+		if (failure === null && SECRET.has(row.kind))
+			await updateMail(tx, row.id, { text: withoutToken(row.text), html: withoutToken(row.html ?? '') });
+	});
 	if (failure !== null) throw new Error(failure);
 }
 
@@ -128,10 +152,7 @@ const mailShape = (row: MailRow) => ({
 });
 export type Mail = ReturnType<typeof mailShape>;
 
-/** A link that signs in or lets in is for its receiver alone, not for who reads the outbox. */
-const SECRET: ReadonlySet<string> = new Set(['invitation', 'reset', 'email-change']);
-const hideSecrets = (mail: Mail): Mail =>
-	SECRET.has(mail.kind) ? { ...mail, text: mail.text.replaceAll(/([?&]token=)[\w-]+/g, '$1…') } : mail;
+const hideSecrets = (mail: Mail): Mail => (SECRET.has(mail.kind) ? { ...mail, text: withoutToken(mail.text) } : mail);
 
 /** The outbox, newest first. */
 export async function mailsOf(actor: Actor): Promise<Mail[]> {
@@ -157,7 +178,9 @@ export async function unsubscribeOf(token: string): Promise<{ kind: MailKind; em
 	const found = await findToken(hashToken(token), 'unsubscribe', now());
 	const person = found?.personId ? await findPerson(found.personId) : null;
 	const kind = found?.data['kind'];
-	return person && typeof kind === 'string' && kind in MAIL_KINDS ? { kind: kind as MailKind, email: person.email } : null;
+	return person && typeof kind === 'string' && kind in MAIL_KINDS
+		? { kind: kind as MailKind, email: person.email }
+		: null;
 }
 
 /** Takes a person off one kind of message. The address may be used again; it does the same. */

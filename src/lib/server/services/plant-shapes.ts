@@ -4,12 +4,15 @@ import type { LimitRow, SiteRow, UnitRow } from '$lib/server/repositories/plant'
 
 /** Rows of the store as the API and the analysis know them. */
 
-export const siteShape = ({ id, name, timeZone, address, altitude }: SiteRow): Site => ({
-	id,
-	name,
-	timeZone,
-	address,
-	altitude
+export const siteShape = (row: SiteRow): Site => ({
+	id: row.id,
+	name: row.name,
+	timeZone: row.timeZone,
+	address: row.address,
+	altitude: row.altitude,
+	contacts: row.contacts,
+	accessNotes: row.accessNotes,
+	onCallId: row.onCallId
 });
 
 export function unitShape(unit: UnitRow, limits: readonly LimitRow[]): Unit {
@@ -23,8 +26,8 @@ export function unitShape(unit: UnitRow, limits: readonly LimitRow[]): Unit {
 			...(row.note ? { note: row.note } : {})
 		});
 	}
-	const { id, siteId, tag, refrigerant, circuits, nature } = unit;
-	return { id, siteId, tag, refrigerant, circuits, nature, limits: shaped };
+	const { id, siteId, tag, refrigerant, circuits, nature, namePlate, deliveryHours } = unit;
+	return { id, siteId, tag, refrigerant, circuits, nature, namePlate, deliveryHours, limits: shaped };
 }
 
 /** The limits of one unit for the analysis: this product's own choices where the unit has none. */
