@@ -57,8 +57,8 @@ export async function enqueueAnalysis(job: AnalyseUnitJob, afterSeconds = 0): Pr
 	await (await queue()).send(JOBS.analyseUnit, job, { ...RETRY, singletonKey: job.unitId, startAfter: afterSeconds });
 }
 
-// A mail server that is down for a night is tried until it is back: 8 tries over about 17 h.
-const MAIL_RETRY = { retryLimit: 8, retryDelay: 30, retryBackoff: true, expireInSeconds: 120 };
+// A mail server that is down for a night is tried until it is back: 10 tries over about half a day.
+const MAIL_RETRY = { retryLimit: 10, retryDelay: 30, retryBackoff: true, expireInSeconds: 120 };
 
 /** Sends a message of the outbox. */
 export async function enqueueMail(job: SendMailJob): Promise<void> {

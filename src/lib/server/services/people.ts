@@ -1,5 +1,6 @@
 import { AppError } from '$lib/model/errors';
 import type { Actor, Preferences, Role } from '$lib/model/people';
+import { demand } from '$lib/server/auth/guard';
 import { hashPassword, LEAST_PASSWORD, passwordFits } from '$lib/server/auth/passwords';
 import { countSignIn, forgiveSignIn } from '$lib/server/auth/rate-limits';
 import { beginSession } from '$lib/server/auth/sessions';
@@ -10,6 +11,7 @@ import {
 	insertMember,
 	insertOrganisation,
 	insertPerson,
+	listMembers,
 	membershipsOf,
 	savePreferences
 } from '$lib/server/repositories/identity';
@@ -106,4 +108,12 @@ export async function actorFor(email: string): Promise<Actor> {
 		via: 'session',
 		scopes: null
 	};
+}
+
+/** Present members who may be given work, by name. */
+export async function colleaguesOf(actor: Actor): Promise<{ id: string; name: string; role: Role }[]> {
+	demand(actor, 'readSuspects');
+	return (await listMembers(actor.organisationId))
+		.filter(({ leftAt, role }) => leftAt === null && role !== 'client')
+		.map(({ personId, name, role }) => ({ id: personId, name, role }));
 }

@@ -15,7 +15,15 @@ import {
 	checkSchema,
 	photoSchema
 } from '$lib/model/wire/field';
-import { planRowSchema, visitInputSchema, visitPatchSchema, visitSchema } from '$lib/model/wire/visit';
+import {
+	briefSchema,
+	planRowSchema,
+	reportInputSchema,
+	reportSchema,
+	visitInputSchema,
+	visitPatchSchema,
+	visitSchema
+} from '$lib/model/wire/visit';
 import { z } from 'zod';
 import { operation } from '../operation';
 
@@ -217,4 +225,54 @@ export const visitCalendar = operation({
 	summary: 'The visit as a calendar file',
 	right: 'read',
 	responseTypes: ['text/calendar']
+});
+export const getBrief = operation({
+	method: 'get',
+	path: '/api/visits/{visit}/brief',
+	summary: 'The brief of a visit; Accept: application/pdf gives it as PDF',
+	right: 'readSuspects',
+	query: z.object({ units }),
+	response: briefSchema,
+	responseTypes: ['application/pdf']
+});
+export const sendBrief = operation({
+	method: 'post',
+	path: '/api/visits/{visit}/brief',
+	summary: 'Mails the brief with its PDF and a calendar file to who goes there',
+	right: 'plan',
+	response: z.object({ to: z.string() })
+});
+export const getReport = operation({
+	method: 'get',
+	path: '/api/visits/{visit}/report',
+	summary: 'The report of a visit, drafted from the record until a person words it; a client sees it once it was sent',
+	right: 'read',
+	query: z.object({ units }),
+	response: reportSchema,
+	responseTypes: ['application/pdf']
+});
+export const saveReport = operation({
+	method: 'put',
+	path: '/api/visits/{visit}/report',
+	summary: 'Words a report; approve makes it ready to be sent',
+	right: 'field',
+	query: z.object({ units }),
+	body: reportInputSchema,
+	response: reportSchema
+});
+export const sendReport = operation({
+	method: 'post',
+	path: '/api/visits/{visit}/report',
+	summary: 'Mails an approved report with its PDF to contacts of the site',
+	right: 'plan',
+	query: z.object({ units }),
+	body: z.object({ to: z.array(z.email()).min(1).max(20) }),
+	response: reportSchema
+});
+export const listColleagues = operation({
+	method: 'get',
+	path: '/api/colleagues',
+	summary: 'Members who may be given work, by name',
+	right: 'readSuspects',
+	response: z.object({ colleagues: z.array(z.object({ id: z.uuid(), name: z.string(), role: z.string() })) })
 });
