@@ -54,6 +54,10 @@ export function visitsQuery(fetcher: typeof fetch) {
 	});
 }
 
+export function visitQuery(fetcher: typeof fetch, id: string) {
+	return queryOptions({ queryKey: ['visits', id], queryFn: () => getJson<Visit>(fetcher, `/api/visits/${id}`) });
+}
+
 export function planQuery(fetcher: typeof fetch, from: string, to: string) {
 	return queryOptions({
 		queryKey: ['visit-plan', from, to],

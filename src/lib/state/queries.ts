@@ -43,6 +43,14 @@ export function summaryQuery(fetcher: typeof fetch, system: UnitSystem) {
 	});
 }
 
+/** Every unit as it is set up, without its starts. */
+export function plainUnitsQuery(fetcher: typeof fetch) {
+	return queryOptions({
+		queryKey: ['units', 'plain'],
+		queryFn: () => getJson<{ units: Unit[] }>(fetcher, '/api/units?limit=5000')
+	});
+}
+
 export function sitesQuery(fetcher: typeof fetch) {
 	return queryOptions({
 		queryKey: ['sites'],
