@@ -16,7 +16,7 @@ module.exports = {
 			name: 'not-to-unresolvable',
 			severity: 'error',
 			from: { path: '^src/' },
-			to: { couldNotResolve: true, pathNot: '^(\\$app|\\$env|\\$types|\\./\\$types|virtual:)' }
+			to: { couldNotResolve: true, pathNot: '^(\\$app|\\$service-worker|\\$env|\\$types|\\./\\$types|virtual:)' }
 		},
 		layer('model imports nothing of ours', '^src/lib/model/', ['^src/lib/model/']),
 		layer('utils import the model only', '^src/lib/utils/', BASE),

@@ -91,27 +91,30 @@ export type StartPicture = {
 
 const FOOT = 17;
 
-/** Where a trace's name finds room: over its middle, or under it when the trace is high. */
+/** A trace's name near its beginning: over the upper trace, under the lower one, left of the trip. */
 function traceLabel(
-	start: BriefStart['traces'][number],
+	trace: BriefStart['traces'][number],
+	upper: boolean,
 	x: (s: number) => number,
 	y: (v: number) => number,
-	box: { top: number; bottom: number },
-	k: number
+	box: { top: number; bottom: number }
 ): PlacedText | null {
-	const readings = start.t.flatMap((t, i) => {
-		const v = start.v[i];
-		return typeof v === 'number' && t > 0 ? [{ t, v }] : [];
-	});
-	const at = readings[Math.floor(readings.length * (k === 0 ? 0.3 : 0.62))];
-	if (!at) return null;
-	const over = y(at.v) - 6;
+	const at = trace.t.findIndex((t, i) => t >= (upper ? 12 : 4) && typeof trace.v[i] === 'number');
+	const value = trace.v[at];
+	if (typeof value !== 'number') return null;
+	const wanted = upper ? y(value) - 6 : y(value) + 20;
 	return {
-		x: x(at.t),
-		y: over > box.top + 10 ? over : Math.min(box.bottom - 4, y(at.v) + 14),
-		text: start.label,
+		x: x(trace.t[at] ?? 0) + 2,
+		y: Math.min(Math.max(wanted, box.top + 9), box.bottom - 4),
+		text: trace.label,
 		anchor: 'start'
 	};
+}
+
+/** The middle of a trace's readings, to tell the upper from the lower one. */
+function middleOf({ v }: BriefStart['traces'][number]): number {
+	const values = v.filter((value) => value !== null);
+	return values.reduce((sum, value) => sum + value, 0) / Math.max(1, values.length);
 }
 
 /** One start of a brief on the brief's common axis; `named` puts the traces' names into it. */
@@ -133,6 +136,7 @@ export function startPicture(
 	const step = [1, 2, 5, 10].find((size) => minutes / size <= 4) ?? 15;
 	const times = Array.from({ length: Math.floor(minutes / step) + 1 }, (_, i) => i * step);
 	const plane = { x, y };
+	const highest = Math.max(...start.traces.map(middleOf));
 	return {
 		width,
 		height,
@@ -141,14 +145,14 @@ export function startPicture(
 			inside.map((value) => `M${LEFT} ${n(y(value))}H${n(width - 1)}`).join('') +
 			times.map((minute) => `M${n(x(minute * 60))} ${top}V${n(bottom)}`).join(''),
 		zero: `M${n(x(0))} ${top}V${n(bottom)}`,
-		traces: start.traces.map((trace, k) => ({
+		traces: start.traces.map((trace) => ({
 			path: tracePath(
 				{ t: trace.t.filter((t) => t <= axis.toSeconds), v: trace.v.map((value) => value ?? Number.NaN) },
 				plane,
 				window
 			),
 			family: trace.family,
-			label: named ? traceLabel(trace, x, y, { top, bottom }, k) : null
+			label: named ? traceLabel(trace, middleOf(trace) === highest, x, y, { top, bottom }) : null
 		})),
 		level:
 			start.cutout === null

@@ -4,7 +4,7 @@ import { DERIVED, SIGNALS, type TraceKey } from '$lib/model/signals';
 import type { TripKind } from '$lib/model/start';
 import { limitAt, type LimitHistory, type LimitKey } from '$lib/model/unit';
 import type { Brief, BriefStart } from '$lib/model/wire/visit';
-import { OUTCOME_WORDS, TRIP_KIND_WORDS } from '$lib/model/words';
+import { OUTCOME_WORDS } from '$lib/model/words';
 import type { StartRow } from '$lib/server/repositories/starts';
 import { valueTicks } from '$lib/utils/axis-ticks';
 import { shortDate, siteClock, siteDate } from './site-clock';
@@ -38,12 +38,6 @@ export function tellingStarts(rows: readonly StartRow[]): StartRow[] {
 	return [trip, ...(next ? [next] : []), ...(first ? [first] : [])];
 }
 
-function textOf(row: StartRow): string {
-	const { record } = row;
-	if (record.trip) return `tripped, ${TRIP_KIND_WORDS[record.trip.kind]}`;
-	return OUTCOME_WORDS[row.outcome];
-}
-
 const labelOf = (key: TraceKey) =>
 	key in SIGNALS ? SIGNALS[key as keyof typeof SIGNALS] : DERIVED[key as keyof typeof DERIVED];
 
@@ -73,7 +67,7 @@ export async function briefStarts(
 			clock: siteClock(row.startedAt, timeZone),
 			day: shortDate(siteDate(row.startedAt, timeZone)),
 			outcome: row.outcome,
-			text: textOf(row),
+			text: OUTCOME_WORDS[row.outcome],
 			traces: traces.map((trace) => ({
 				signal: trace.signal,
 				label: trace.label,

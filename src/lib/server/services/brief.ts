@@ -131,7 +131,12 @@ export async function briefOf(actor: Actor, visitId: string, system: UnitSystem)
 			clue: clues.find((clue) => clue.direction === 'for')?.sentence ?? ''
 		})),
 		checks: checksOfBrief(found.suspects),
-		logNext: tonight ? [tonight.sentence] : [],
+		logNext: tonight
+			? [
+					tonight.sentence,
+					...tonight.points.map(({ label, spacingSeconds, when }) => `${label}: every ${spacingSeconds} s, ${when}`)
+				]
+			: [],
 		coverage: words,
 		methodVersion: METHOD_VERSION,
 		units: system
