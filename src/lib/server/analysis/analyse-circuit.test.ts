@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { CircuitInput } from '$lib/model/circuit-input';
-import type { EventRecord, SeriesMap } from '$lib/model/series';
+import type { EventRecord, SeriesMap, TextSeries } from '$lib/model/series';
 import { DEFAULT_LIMITS } from '$lib/model/unit';
 import { analyseCircuit } from './analyse-circuit';
 import { inventedInput, inventedLog, MIDNIGHT, type Shape } from './testing/synthetic-log';
@@ -41,6 +41,8 @@ function log(spacing: number, more: Partial<CircuitInput> = {}, change: (map: Se
 	change(series);
 	return analyseCircuit(inventedInput(series, more));
 }
+
+let unitMode: TextSeries = { t: new Float64Array(), text: [] };
 
 const trip: EventRecord = {
 	at: at(10 * HOUR + 91),
@@ -172,6 +174,41 @@ describe('limits and the cut-out', () => {
 		expect(stopped.starts[0]?.outcome).toBe('called-off');
 		const blind = log(5, { limits }, (map) => delete map.evapSaturation);
 		expect(blind.starts[0]?.outcome).toBe('unclear');
+	});
+});
+
+describe('alarms without an alarm column', () => {
+	it('are read from a mode column that names them', () => {
+		const { starts } = log(5, {}, (map) => {
+			const t = map.running?.t ?? new Float64Array();
+			unitMode = {
+				t,
+				text: Array.from(t, (x) => (x >= at(10 * HOUR + 90) && x < at(10.4 * HOUR) ? 'Fault shutdown' : 'Auto'))
+			};
+		});
+		expect(starts[0]?.trip?.basis).toBe('inferred');
+		const read = log(5, { texts: { unitMode } }).starts;
+		expect(read[0]?.trip).toMatchObject({ kind: 'unknown', basis: 'recorded', text: 'Fault shutdown' });
+		expect(read[1]?.outcome).toBe('held');
+	});
+});
+
+describe('a flow alarm after a normal stop', () => {
+	it('is the pump that stops, not a trip', () => {
+		const flow = { ...trip, at: at(13.5 * HOUR + 60), text: 'Evaporator water flow lost' };
+		const early = log(5, { events: [flow] }, (map) => {
+			const command = map.startCommand;
+			if (command !== undefined) {
+				map.startCommand = {
+					...command,
+					v: command.t.map((t) => (t >= at(10 * HOUR) && t < at(13.5 * HOUR - 30) ? 1 : 0))
+				};
+			}
+		});
+		expect(early.starts[1]).toMatchObject({ outcome: 'held', trip: null });
+		// At the stop itself it is a trip.
+		const during = log(5, { events: [{ ...flow, at: at(13.5 * HOUR) }] });
+		expect(during.starts[1]?.outcome).toBe('tripped');
 	});
 });
 

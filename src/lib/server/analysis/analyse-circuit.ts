@@ -1,5 +1,5 @@
 import { METHOD_VERSION, type CircuitAnalysis, type CircuitInput } from '$lib/model/circuit-input';
-import type { Interval } from '$lib/model/series';
+import type { Interval, TextSeries } from '$lib/model/series';
 import type { StartRecord } from '$lib/model/start';
 import { limitAt } from '$lib/model/unit';
 import { prepareCircuit, type Circuit } from './circuit';
@@ -11,6 +11,7 @@ import { activationsOf, namesAnother, type Activation } from './outcomes/activat
 import type { Verdict } from './outcomes/judge';
 import { proposeShift } from './outcomes/match';
 import { judgeStarts } from './outcomes/verdicts';
+import { speaksOfProtection } from './outcomes/words';
 import { median } from './series/numbers';
 import { firstAtOrAfter } from './series/search';
 import { isGapBefore, spacingWithin } from './series/spacing';
@@ -84,7 +85,13 @@ function alignedAlarms(input: CircuitInput, running: RunningReadings) {
 		if (running.on[i] === 1 && running.on[i - 1] === 0) rises.push(running.t[i] ?? NaN);
 	}
 	const startedBetween = (from: number, to: number) => (rises[firstAtOrAfter(rises, from + 1)] ?? Infinity) <= to;
-	const all = activationsOf(input.texts.alarm, input.series.alarm, input.events, input.tripWords, startedBetween);
+	const all = activationsOf(
+		input.texts.alarm ?? alarmsOfMode(input),
+		input.series.alarm,
+		input.events,
+		input.tripWords,
+		startedBetween
+	);
 	const logged = all.filter((a) => !namesAnother(a.text, input.circuit));
 	const given = input.alarmShiftSeconds ?? null;
 	let shift: number | null = null;
@@ -102,6 +109,14 @@ function alignedAlarms(input: CircuitInput, running: RunningReadings) {
 			? []
 			: [`The alarm history's clock seems ${-shift} s ahead of the log's; a person has to confirm it.`];
 	return { activations, shift, notes };
+}
+
+/** Where nothing else records alarms, a mode column that says "fault" or "alarm shutdown" does. */
+function alarmsOfMode(input: CircuitInput): TextSeries | undefined {
+	const mode = input.texts.unitMode;
+	if (mode === undefined || input.series.alarm !== undefined || input.events.length > 0) return undefined;
+	const text = mode.text.map((words) => (speaksOfProtection(words) ? words : ''));
+	return text.some((words) => words !== '') ? { t: mode.t, text } : undefined;
 }
 
 /** The signals whose spacing tells how finely a start can be read. */

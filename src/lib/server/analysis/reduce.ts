@@ -22,7 +22,7 @@ export function reduceTrace(t: Float64Array, v: Float64Array, columns: number): 
 	const kept = new Int32Array(columns * 5 + 5);
 	let count = 0;
 	let column = 0;
-	for (let from = 0; from < t.length; ) {
+	for (let from = 0; from < t.length;) {
 		// The stretch this reading lies in; empty ones are passed over.
 		while (column < columns - 1 && (t[from] ?? 0) >= first + (column + 1) * width) column++;
 		const end = column === columns - 1 ? Infinity : first + (column + 1) * width;

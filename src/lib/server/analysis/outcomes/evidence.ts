@@ -32,9 +32,11 @@ export function readStop(
 	commandTells: boolean
 ): StopEvidence {
 	const unloading = readUnloading(circuit, run, stop, spacing);
+	// A command that repeats the status falls in the stop's own row; one that falls before it stopped the machine.
+	const fell = commandFall(circuit.input.series.startCommand, run, stop);
 	const water = readWater(circuit, run.lastOn);
 	return {
-		commandFellAt: commandTells ? commandFall(circuit.input.series.startCommand, run, stop) : null,
+		commandFellAt: fell !== null && (commandTells || fell <= run.lastOn) ? fell : null,
 		unloaded: unloading.unloaded,
 		valveClosed: valveClosed(circuit, run),
 		setpointMet: water === null ? null : water <= 0.05,

@@ -40,7 +40,7 @@ export function judge(one: Case): Verdict {
 	if (supplyWent(one) && (alarm === null || SUPPLY_KINDS.has(alarm.kind))) {
 		return powerFailed('All that ran stopped at the same moment.');
 	}
-	if (alarm !== null) return recorded(alarm, run);
+	if (alarm !== null && !pumpFollowed(one, alarm)) return recorded(alarm, run);
 	const lasted = ((run.endedAt ?? one.logTo) - run.startedAt) / 1000;
 	const seen = run.end === 'gap-off' || run.end === 'gap-on' ? (run.lastOn - run.startedAt) / 1000 : lasted;
 	if (run.end === 'log-end') {
@@ -69,6 +69,16 @@ function told(outcome: Outcome, reason: string): Verdict {
 
 function powerFailed(reason: string): Verdict {
 	return told('lost', `Power failed. ${reason}`);
+}
+
+/**
+ * A flow alarm well after a stop that was commanded before it: the pump followed the compressor off, which stops nothing.
+ */
+function pumpFollowed({ run, evidence }: Case, alarm: Activation): boolean {
+	if (alarm.kind !== 'loss-of-water-flow' || run.endedAt === null) return false;
+	const commanded = evidence?.commandFellAt ?? null;
+	const after = alarm.at - run.endedAt > 1000 * Math.max(15, run.endUncertainty, alarm.period);
+	return after && commanded !== null && commanded <= run.lastOn;
 }
 
 /**

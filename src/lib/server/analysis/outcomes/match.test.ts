@@ -41,6 +41,17 @@ describe('proposeShift', () => {
 		expect(proposeShift(stops, [alarm(400), alarm(8400)])).toBeNull();
 	});
 
+	it('takes the smaller of two shifts that fit alike', () => {
+		// Stops in pairs 25 min apart; every alarm lies 5 min after the first of a pair, so −300 s and +1200 s both fit.
+		const pairs = [0, 20_000, 40_000, 60_000].flatMap((s) => [stop(s), stop(s + 1500)]);
+		expect(
+			proposeShift(
+				pairs,
+				[300, 20_300, 40_300, 60_300].map((s) => alarm(s))
+			)
+		).toBe(-300);
+	});
+
 	it('proposes none where the clocks agree or the shift exceeds two hours', () => {
 		expect(proposeShift(stops, [alarm(1001), alarm(9001), alarm(20_001)])).toBeNull();
 		expect(

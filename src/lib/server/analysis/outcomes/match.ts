@@ -78,7 +78,9 @@ function widestCluster(pairs: readonly { shift: number; activation: number }[], 
 			inside.add(pairs[i]?.activation ?? -1);
 			shifts.push(pairs[i]?.shift ?? NaN);
 		}
-		if (inside.size > best.count) best = { count: inside.size, shifts };
+		// Regular restarts make several shifts fit alike: the clocks that are nearest together are the likelier.
+		const nearer = inside.size === best.count && Math.abs(shifts[0] ?? 0) < Math.abs(best.shifts[0] ?? 0);
+		if (inside.size > best.count || nearer) best = { count: inside.size, shifts };
 	}
 	return best;
 }

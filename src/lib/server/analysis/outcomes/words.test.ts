@@ -59,7 +59,9 @@ describe('readAlarm', () => {
 		['Low oil pressure acknowledged', 'acknowledgement'],
 		['Power failure', 'power'],
 		['Unit stopped by schedule', 'note'],
-		['Remote stop', 'note']
+		['Remote stop', 'note'],
+		['Cooling', 'note'],
+		['Setpoint satisfied', 'note']
 	])('%s is %s', (text, is) => {
 		expect(readAlarm(text).is).toBe(is);
 	});

@@ -121,7 +121,12 @@ const CLEARED =
 	/\b(cleared|clear|returned? to normal|return to normal|rtn|restored|resolved|reset (by|ok|done|complete)|alarm reset|fault reset|reset$)/;
 const RESET_KIND = /\b(manual|man|auto|automatic|hand|requires?|required|needs?)\b.*\breset\b|\breset required\b/;
 const STATUS =
-	/\b(run(ning)?|start(ed|ing|up)?|stop(ped|ping)?|schedule|standby|enabled?|disabled?|auto|ready|recycl(e|ing)|operator|setpoint|mode|log(ged)? ?(in|on|out)|user|demand|load(ed|ing)?|normal|command(ed)?)\b/;
+	/\b(run(ning)?|start(ed|ing|up)?|stop(ped|ping)?|schedule|standby|enabled?|disabled?|auto|ready|recycl(e|ing)|operator|setpoint|mode|log(ged)? ?(in|on|out)|user|demand|load(ed|ing)?|normal|command(ed)?|cooling|idle|wait(ing)?|delay(ed)?|timer|online|(un)?occupied|local|satisfied)\b/;
+
+/** Does a text speak of a protection: trip, alarm, fault, failure, shutdown, cut-out, lock-out? */
+export function speaksOfProtection(text: string): boolean {
+	return PROTECTIVE.test(plainWords(text));
+}
 
 /** Text in lower case, camel case and joining marks opened to spaces. */
 export function plainWords(text: string): string {
