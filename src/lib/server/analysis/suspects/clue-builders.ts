@@ -5,7 +5,7 @@ import { median } from '../statistics/median';
 import { theilSen } from '../statistics/theil-sen';
 import { countWords } from '../wording/quantity-words';
 import { type ClueReading, type ClueRule, type Need, SILENT } from './clue-rule';
-import type { Beside, Context } from './context';
+import type { Beside, Context, Reading } from './context';
 import { ramp } from './strength';
 import type { Readable } from './trace-reader';
 
@@ -175,6 +175,24 @@ export function driftClue(
 	};
 }
 
+/** A settled figure in the first and in the last third of the runs at like load and lift; null under six such runs. */
+export function growthOf(context: Context, figure: FigureKey): { before: Reading; now: Reading } | null {
+	const starts = likeConditions(context.starts.filter((start) => start.figures[figure] !== null));
+	const third = Math.floor(starts.length / 3);
+	if (third < 2) return null;
+	const before = context.figure(figure, starts.slice(0, third));
+	const now = context.figure(figure, starts.slice(-third));
+	return before && now && before.value > 0 ? { before, now } : null;
+}
+
+/** A figure that grew by a third or more is not called ordinary. */
+export function grew(context: Context, figure: FigureKey): boolean {
+	const growth = growthOf(context, figure);
+	return (
+		growth !== null && growth.now.value > 1.35 * growth.before.value && growth.now.value - growth.before.value > 0.4
+	);
+}
+
 /**
  * A clue from the growth of a settled figure at like load and lift: the last third of the runs beside the first. A fault
  * that grows inside the log is small in its median.
@@ -190,12 +208,9 @@ export function growthClue(
 		needs: spec.needs,
 		readAt: 'run',
 		read: (context) => {
-			const starts = likeConditions(context.starts.filter((start) => start.figures[spec.figure] !== null));
-			const third = Math.floor(starts.length / 3);
-			if (third < 2) return SILENT;
-			const before = context.figure(spec.figure, starts.slice(0, third));
-			const now = context.figure(spec.figure, starts.slice(-third));
-			if (!before || !now || before.value <= 0) return SILENT;
+			const growth = growthOf(context, spec.figure);
+			if (!growth) return SILENT;
+			const { before, now } = growth;
 			const say = (value: number) => context.words.of(value, spec.quantity);
 			return {
 				strength: Math.min(ramp(now.value / before.value, ...spec.factor), ramp(now.value - before.value, ...spec.by)),

@@ -2,7 +2,7 @@ import type { StartRecord } from '$lib/model/start';
 import { median } from '../../statistics/median';
 import { countWords } from '../../wording/quantity-words';
 import { cautionsFor } from '../cautions';
-import { besideClue, growthClue, figureClue, recent, telling } from '../clue-builders';
+import { besideClue, grew, growthClue, figureClue, recent, telling } from '../clue-builders';
 import { always, type ClueRule, natureIs, SILENT, type SuspectRow } from '../clue-rule';
 import type { Context, Reading } from '../context';
 import { ramp } from '../strength';
@@ -151,7 +151,8 @@ export const fouledCondenser: SuspectRow = {
 			figure: 'condApproach',
 			needs: ['condApproach'],
 			atFullLoad: true,
-			strength: (value, context) => ramp(value, wide(context)[0], wide(context)[0] - 0.6)
+			strength: (value, context) =>
+				grew(context, 'condApproach') ? 0 : ramp(value, wide(context)[0], wide(context)[0] - 0.6)
 		})
 	],
 	explainedBy: [{ key: 'non-condensables', share: 0.6 }],

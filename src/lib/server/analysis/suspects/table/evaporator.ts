@@ -1,5 +1,5 @@
 import { cautionsFor } from '../cautions';
-import { besideClue, checkClue, growthClue, figureClue } from '../clue-builders';
+import { besideClue, checkClue, grew, growthClue, figureClue } from '../clue-builders';
 import { always, type ClueRule, SILENT, type SuspectRow } from '../clue-rule';
 import type { Context } from '../context';
 import { restOffset } from '../rest-readings';
@@ -37,7 +37,8 @@ const approachOrdinary = (weight: number): ClueRule =>
 		figure: 'evapApproach',
 		needs: ['evapApproach'],
 		atFullLoad: true,
-		strength: (value, context) => ramp(value, wide(context)[0], wide(context)[0] * 0.8)
+		strength: (value, context) =>
+			grew(context, 'evapApproach') ? 0 : ramp(value, wide(context)[0], wide(context)[0] * 0.8)
 	});
 /** A starved shell has hot suction and discharge as well; a fouled one does not. */
 const superheatOrdinary = (weight: number): ClueRule =>

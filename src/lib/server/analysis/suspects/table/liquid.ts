@@ -5,6 +5,7 @@ import { ramp } from '../strength';
 import { countWords } from '../../wording/quantity-words';
 import {
 	dischargeSuperheatHigh,
+	dx,
 	flooded,
 	starvedPattern,
 	starvedShare,
@@ -46,7 +47,18 @@ export const lowRefrigerantCharge: SuspectRow = {
 			total: [-1, -3]
 		}),
 		subcooling('subcooling-healthy', 'against', 0.8, [2.5, 4.5]),
-		superheatLow(0.3)
+		superheatLow(0.3),
+		figureClue({
+			key: 'superheat-low-in-runs',
+			direction: 'against',
+			weight: 0.5,
+			applies: dx,
+			what: 'Settled superheat is low, so the liquid is in the evaporator, not missing:',
+			quantity: 'temperatureDifference',
+			figure: 'superheat',
+			needs: ['superheat'],
+			strength: (value) => ramp(value, 2.5, 1)
+		})
 	],
 	explainedBy: [{ key: 'evap-saturation-sensor', share: 0.4 }],
 	showsWithoutSymptom: true,

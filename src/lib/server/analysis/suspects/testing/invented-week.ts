@@ -33,6 +33,13 @@ export type Picture = {
 	flow: number;
 	/** Oil over the evaporator after a night, K. */
 	oilLift: number;
+	/** What the alarm history says of each trip. */
+	tripText: string;
+	/** Shapes put over the drawn ones, or beside them. */
+	shapes: Partial<Record<SeriesId, Shape>>;
+	/** Changes of the unit's nature and of the input, for suspects of other machines. */
+	nature: Partial<UnitNature>;
+	input: Partial<CircuitInput>;
 };
 
 export const SOUND: Picture = {
@@ -50,7 +57,11 @@ export const SOUND: Picture = {
 	condApproach: 1.8,
 	sensorOffset: 0,
 	flow: 1,
-	oilLift: 22
+	oilLift: 22,
+	tripText: 'low evaporator saturation trip',
+	shapes: {},
+	nature: {},
+	input: {}
 };
 
 const NATURE: UnitNature = {
@@ -92,16 +103,8 @@ function runsOf(picture: Picture): Run[] {
 
 const NOISE: Partial<Record<SeriesId, number>> = { evapFlow: 0.3, valvePosition: 0.4, capacity: 0.4 };
 
-/**
- * The evidence of an invented week, analysed. `without` leaves signals out of the log.
- * @param spacing seconds between rows
- */
-export function inventedWeek(
-	change: Partial<Picture>,
-	{ spacing = 5, without = [], seed = 3 }: { spacing?: number; without?: readonly SeriesId[]; seed?: number } = {}
-): SuspectEvidence {
-	const picture = { ...SOUND, ...change };
-	const runs = runsOf(picture);
+/** Every signal of the week as a function of time; not one step of physics, only the signature. */
+function drawnShapes(picture: Picture, runs: readonly Run[]): Partial<Record<SeriesId, Shape>> {
 	const runAt = (t: number) => runs.find((run) => t >= run.start && t < run.stop);
 	const lastStop = (t: number) => Math.max(-Infinity, ...runs.map((run) => run.stop).filter((stop) => stop <= t));
 	const on = (since: number) => !Number.isNaN(since);
@@ -136,7 +139,7 @@ export function inventedWeek(
 			: floor + (cond(t, NaN) + picture.margin - floor) * Math.exp(-rest / 9000);
 	};
 	const trips = (t: number) => runAt(t)?.trips === true;
-	const shapes: Partial<Record<SeriesId, Shape>> = {
+	return {
 		capacity,
 		demand: (_, since) => (on(since) ? 100 : 0),
 		evapWaterOut: water,
@@ -160,8 +163,20 @@ export function inventedWeek(
 		oilTemp: oil,
 		valvePosition: (t, since) => (on(since) ? picture.valve(since, trips(t)) : 0)
 	};
+}
+
+/**
+ * The evidence of an invented week, analysed. `without` leaves signals out of the log.
+ * @param spacing seconds between rows
+ */
+export function inventedWeek(
+	change: Partial<Picture>,
+	{ spacing = 5, without = [], seed = 3 }: { spacing?: number; without?: readonly SeriesId[]; seed?: number } = {}
+): SuspectEvidence {
+	const picture = { ...SOUND, ...change };
+	const runs = runsOf(picture);
 	const random = seededRandom(seed);
-	const noisy = Object.entries(shapes)
+	const noisy = Object.entries({ ...drawnShapes(picture, runs), ...picture.shapes })
 		.filter(([id]) => !without.includes(id as SeriesId))
 		.map(([id, shape]) => {
 			const size = id.endsWith('Run') || id.startsWith('demand') ? 0 : (NOISE[id as SeriesId] ?? 0.08);
@@ -169,7 +184,7 @@ export function inventedWeek(
 		});
 	const series = inventedLog(runs, spacing, 0, DAYS * DAY - 3600, Object.fromEntries(noisy));
 	const input: CircuitInput = inventedInput(series, {
-		nature: NATURE,
+		nature: { ...NATURE, ...picture.nature },
 		limits: {
 			...DEFAULT_LIMITS,
 			evapSaturationCutout: [{ value: CUT_OUT, provenance: 'given', validFrom: -Infinity }],
@@ -179,11 +194,12 @@ export function inventedWeek(
 			.filter((run) => run.trips)
 			.map((run) => ({
 				at: MIDNIGHT + run.stop * 1000,
-				text: 'low evaporator saturation trip',
+				text: picture.tripText,
 				severity: 'trip' as const,
 				what: 'activation' as const,
 				source: 'history' as const
-			}))
+			})),
+		...picture.input
 	});
 	return { input, starts: analyseCircuit(input).starts };
 }
