@@ -47,6 +47,12 @@ const NOT_CIRCUIT = new Set([
 	'no'
 ]);
 
+/** May the last word name a circuit, after the word before it? A letter behind "alarm" does, a number there counts alarms. */
+function mayName(last: string | undefined, before: string | undefined): boolean {
+	if (before === undefined || !NOT_CIRCUIT.has(before)) return true;
+	return before === 'alarm' && /^[a-d]$/.test(last ?? '');
+}
+
 function circuitOf(word: string | undefined): string | null {
 	if (word === undefined) return null;
 	if (/^0?[1-4]$/.test(word)) return word.replace(/^0/, '');
@@ -90,7 +96,7 @@ export class OwnerFinder {
 		const stems = new Map<string, Set<string>>();
 		for (const words of names) {
 			const circuit = circuitOf(words.at(-1));
-			if (!circuit || NOT_CIRCUIT.has(words.at(-2) ?? '')) continue;
+			if (!circuit || !mayName(words.at(-1), words.at(-2))) continue;
 			const stem = words.slice(0, -1).join(' ');
 			stems.set(stem, (stems.get(stem) ?? new Set()).add(circuit));
 		}
@@ -168,7 +174,7 @@ export class OwnerFinder {
 
 	#bare(words: string[]): string | null {
 		const last = circuitOf(words.at(-1));
-		if (last && !NOT_CIRCUIT.has(words.at(-2) ?? '')) {
+		if (last && mayName(words.at(-1), words.at(-2))) {
 			words.pop();
 			return last;
 		}

@@ -1,7 +1,7 @@
 import { toStored } from '$lib/model/quantities';
 import { SIGNALS, type SignalKey } from '$lib/model/signals';
 import type { Problem } from '../types';
-import { MANY, type Guess } from './guess';
+import { MANY, SURE, type Guess } from './guess';
 import { pairedValues } from './pairs';
 
 function problem(guess: Guess, file: string, kind: string, message: string): Problem {
@@ -171,6 +171,30 @@ export function checkRelations(guesses: readonly Guess[], fileOf: (file: number)
 	return problems;
 }
 
+/**
+ * "Evaporator temperature" and "condenser temperature" may be the water's or the refrigerant's: one that is colder than
+ * the leaving chilled water (warmer than the leaving condenser water) in nearly every running row is the refrigerant's.
+ */
+export function confirmSaturations(guesses: readonly Guess[]): void {
+	for (const [signal, water] of [
+		['evapSaturation', 'evapWaterOut'],
+		['condSaturation', 'condWaterOut']
+	] as const) {
+		for (const guess of guesses.filter((g) => g.signal === signal && g.confidence > 0.5 && g.confidence < SURE)) {
+			const witness = guesses.find(
+				(g) => g.signal === water && g.unitId === guess.unitId && g.sample.t === guess.sample.t
+			);
+			const running = runs(guesses, guess);
+			if (!witness || !running || witness.confidence < 0.6) continue;
+			const [cold, warm] = signal === 'evapSaturation' ? [guess, witness] : [witness, guess];
+			const share = colderShare(cold, warm, -0.3, running);
+			if (!share || share.yes < 0.85) continue;
+			guess.confidence = 0.86;
+			guess.reasons.push(`while it runs, on the refrigerant's side of ${witness.sample.column}`);
+		}
+	}
+}
+
 /** Run status and motor current that contradict each other are neither of them sure. */
 export function checkRunning(guesses: readonly Guess[]): void {
 	for (const running of guesses.filter((g) => g.signal === 'running')) {
@@ -188,6 +212,10 @@ export function checkRunning(guesses: readonly Guess[]): void {
 			const loaded = off.filter(([, x]) => x > 0.3 * most).length / off.length;
 			// A slide may stay where it was while the machine rests; current and power cannot.
 			const parked = signal === 'capacity' || signal === 'speed';
+			if (idle < 0.1 && loaded < 0.1 && running.confidence > 0.5) {
+				running.confidence = Math.max(running.confidence, 0.88);
+				running.reasons.push(`moves with ${load.sample.column}`);
+			}
 			if (idle < 0.4 && (loaded < 0.4 || parked)) continue;
 			load.confidence *= 0.75;
 			if (idle > 0.6 && loaded > 0.6) running.confidence *= 0.75;

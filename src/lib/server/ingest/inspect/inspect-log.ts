@@ -4,7 +4,14 @@ import { guessColumns, SURE, type Guess } from '../columns/guess';
 import { loggingOf, rowsOnChange, spacingOf } from '../columns/logging';
 import { settlePressures } from '../columns/pressure';
 import type { ColumnSample } from '../columns/sample';
-import { checkRelations, checkRunning, findDead, findDuplicates, settleRivals } from '../columns/settle';
+import {
+	checkRelations,
+	checkRunning,
+	confirmSaturations,
+	findDead,
+	findDuplicates,
+	settleRivals
+} from '../columns/settle';
 import { unpack, type Unpacked } from '../container/unpack';
 import { draftFile, usualStep, type Draft } from '../layout/draft';
 import { look } from '../text/look';
@@ -180,6 +187,7 @@ function judgeColumns(samples: readonly ColumnSample[], fileOf: (i: number) => s
 	const problems = findDuplicates(guesses, fileOf);
 	problems.push(...checkRelations(guesses, fileOf), ...findDead(guesses, fileOf));
 	checkRunning(guesses);
+	confirmSaturations(guesses);
 	const choices = settlePressures(guesses, ctx);
 	const answer = ctx.answers?.['temperature-unit'];
 	const open = guesses.filter((g) => g.signal && SIGNALS[g.signal].quantity === 'temperature' && !g.sample.unit);

@@ -136,6 +136,9 @@ function noTable(leaf: Leaf, look: Look): Problem {
 	const first = look.head.split('\n').findIndex((line) => line.trim() !== '');
 	const base = { file: leaf.file, column: null };
 	if (first < 0) return { ...base, line: null, kind: 'empty', message: `${leaf.file} holds no rows.` };
+	if (look.lines - first <= 1) {
+		return { ...base, line: first + 1, kind: 'no-rows', message: `${leaf.file} has a header but no rows.` };
+	}
 	return {
 		...base,
 		line: first + 1,
