@@ -69,6 +69,10 @@ describe('mappingTitle and mappingBody', () => {
 			'2 columns wait for your word before starts are found'
 		);
 		expect(mappingTitle({ state: 'needs-mapping', name: 'a' }, 0)).toBe('Every column has its word: find the starts');
+		expect(mappingTitle({ state: 'ready', name: 'a' }, 0, { all: 3, tripped: 1 })).toBe(
+			'a is read: 3 starts, 1 tripped'
+		);
+		expect(mappingTitle({ state: 'ready', name: 'a' }, 0, { all: 0, tripped: 0 })).toBe('a is read: no start in it');
 		expect(mappingTitle({ state: 'refused', name: 'a.csv' }, 0)).toBe('a.csv could not be read');
 	});
 	it('sends every column but time, confirmed', () => {
@@ -76,5 +80,7 @@ describe('mappingTitle and mappingBody', () => {
 		expect(body.mapping).toHaveLength(1);
 		expect(body.mapping[0]?.confirmed).toBe(true);
 		expect(body.choices).toEqual({ order: 'day' });
+		expect(body.timeZone).toBe('UTC');
+		expect(mappingBody([], null, {})).toEqual({ mapping: [], choices: {} });
 	});
 });

@@ -79,19 +79,29 @@ export function hindrances(rows: readonly Row[]): string[] {
 }
 
 /** The finding as the sheet's heading. */
-export function mappingTitle(log: Pick<Log, 'state' | 'name'>, asking: number, starts?: number): string {
+export function mappingTitle(
+	log: Pick<Log, 'state' | 'name'>,
+	asking: number,
+	starts?: { all: number; tripped: number }
+): string {
 	if (log.state === 'refused') return `${log.name} could not be read`;
 	if (log.state === 'needs-mapping')
 		return asking === 0
 			? 'Every column has its word: find the starts'
 			: `${asking === 1 ? 'One column waits' : `${asking} columns wait`} for your word before starts are found`;
-	if (log.state === 'ready')
-		return starts === undefined ? `${log.name} is read` : `${log.name} is read: ${starts} starts`;
+	if (log.state === 'ready') {
+		if (starts === undefined) return `${log.name} is read`;
+		const found = starts.all === 0 ? 'no start in it' : starts.all === 1 ? 'one start' : `${starts.all} starts`;
+		return `${log.name} is read: ${found}${starts.tripped > 0 ? `, ${starts.tripped} tripped` : ''}`;
+	}
 	return `${log.name} is being read`;
 }
 
-/** What PUT …/mapping takes: every column with a choice, confirmed. */
-export function mappingBody(rows: readonly Row[], timeZone: string, choices: Readonly<Record<string, string>>) {
+/**
+ * What PUT …/mapping takes: every column with a choice, confirmed. A zone goes along only when a person named one,
+ * since it overrules what the reader found in the file.
+ */
+export function mappingBody(rows: readonly Row[], timeZone: string | null, choices: Readonly<Record<string, string>>) {
 	return {
 		mapping: rows
 			.filter((row) => row.column.role !== 'time')
@@ -104,7 +114,7 @@ export function mappingBody(rows: readonly Row[], timeZone: string, choices: Rea
 				unitOfMeasure: entry.unitOfMeasure,
 				confirmed: true
 			})),
-		timeZone,
+		...(timeZone ? { timeZone } : {}),
 		choices
 	};
 }

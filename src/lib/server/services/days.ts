@@ -93,6 +93,7 @@ function titleOf(rows: readonly StartRow[], cluster: Days['cluster']): string {
 	if (cluster)
 		return `${cluster.inside} of ${cluster.trips} start-up trips lie between ${clock(cluster.from)} and ${clock(cluster.to)}`;
 	const first = trips.filter((row) => row.record.firstStart).length;
+	if (first === 1 && trips.length === 1) return 'The one start-up trip was a first start';
 	if (first === trips.length) return `Every one of ${trips.length} start-up trips was a first start`;
 	return `${trips.length} of ${rows.length} starts tripped inside the start-up window`;
 }
