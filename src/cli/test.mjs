@@ -56,6 +56,8 @@ const playwrightCounts = ({ stats }) => ({ passed: stats.expected + stats.flaky,
 async function main() {
 	await installPackages();
 	if (wanted('browser') && !existsSync('/usr/bin/chromium')) await installDebian(['chromium'], 'Chromium');
+	if (wanted('database') && !existsSync('/usr/bin/pdftotext'))
+		await installDebian(['poppler-utils'], 'pdftotext, which reads the printed briefs back,');
 	await run('npx', ['svelte-kit', 'sync'], { cwd: root });
 	await check('lint', 'npx', ['eslint', '.']);
 	await check('format', 'npx', ['prettier', '--check', '--log-level', 'warn', '.']);

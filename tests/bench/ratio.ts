@@ -1,7 +1,6 @@
-/** Timings only count against a peer in the same run: the machine is shared and noisy. */
+import { median } from 'simple-statistics';
 
-export const median = (values: readonly number[]): number =>
-	[...values].sort((a, b) => a - b)[Math.floor(values.length / 2)] ?? NaN;
+/** Timings only count against a peer in the same run: the machine is shared and noisy. */
 
 async function seconds(work: () => unknown): Promise<number> {
 	const begun = performance.now();
