@@ -1,4 +1,5 @@
 import type { StartSheet } from '$lib/model/wire/start-sheet';
+import { snapTo } from '$lib/utils/nearest-sample';
 import { fetchTraces, type StartTraces, type TraceLevel } from './start-traces';
 import type { SheetState } from './sheet-state.svelte';
 
@@ -58,6 +59,7 @@ export class SheetLoader {
 			if (!current()) return;
 			sheet.main = traces;
 			sheet.problem = null;
+			sheet.view.settleCursor((s) => (snapTo(traces.stops, traces.startMs + s * 1000) - traces.startMs) / 1000);
 		});
 	}
 

@@ -1,5 +1,5 @@
 import { airPressure, type UnitSystem } from '$lib/model/quantities';
-import { DERIVED, isSignalKey, SIGNALS, type TraceKey } from '$lib/model/signals';
+import type { TraceKey } from '$lib/model/signals';
 import { TRIP_KIND_WORDS } from '$lib/model/words';
 import type { StartSheet } from '$lib/model/wire/start-sheet';
 import type { Preferences } from '$lib/state/preferences.svelte';
@@ -8,7 +8,7 @@ import { limitsInForce } from './limits-in-force';
 import type { SheetView } from './sheet-view.svelte';
 import type { StartTraces } from './start-traces';
 import type { SheetFacts } from './strip-layout';
-import { stripsFor, type StripSpec, tracesOf } from './strips';
+import { stripsOfStart, type StripSpec, tracesOf } from './strips';
 
 /** One start sheet: what the server said of the start, the traces that have arrived, and the view of them. */
 export class SheetState implements SheetFacts {
@@ -46,12 +46,8 @@ export class SheetState implements SheetFacts {
 	readonly air = $derived(airPressure(this.data.site.altitude ?? 0));
 	readonly limits = $derived(limitsInForce(this.data.unit.limits, this.startMs));
 	readonly firstMover = $derived(this.data.firstMover ?? null);
-	readonly strips: StripSpec[] = $derived(
-		stripsFor(this.data.unit.nature).filter(
-			({ wouldShow, traces }) => wouldShow !== null || traces.some(({ key }) => this.main?.traces.has(key))
-		)
-	);
-	readonly traceKeys: TraceKey[] = $derived(tracesOf(stripsFor(this.data.unit.nature)));
+	readonly strips: StripSpec[] = $derived(stripsOfStart(this.data.unit.nature, this.data.start.absentReasons));
+	readonly traceKeys: TraceKey[] = $derived(tracesOf(this.strips));
 	readonly tripSeconds = $derived(
 		this.data.start.trip ? (Date.parse(this.data.start.trip.at) - this.startMs) / 1000 : null
 	);
@@ -87,16 +83,5 @@ export class SheetState implements SheetFacts {
 	startWords(at: number | string): string {
 		const zone = this.data.site.timeZone;
 		return `${formatDate(at, zone).replace(/^\S+\s/, '')} ${formatClock(at, zone)}`;
-	}
-
-	/** Why a strip is empty, as a sentence. */
-	missingWords(spec: StripSpec): string {
-		const key = spec.traces.find(({ faint }) => !faint)?.key;
-		if (!key) return 'Nothing to draw.';
-		const words = isSignalKey(key) ? SIGNALS[key].label : DERIVED[key].label;
-		const name = words.charAt(0).toUpperCase() + words.slice(1);
-		return isSignalKey(key)
-			? `${name} is not in this log.`
-			: `${name} cannot be worked out: a signal it needs is not in this log.`;
 	}
 }

@@ -90,6 +90,11 @@ export class SheetView {
 		with: this.with
 	});
 
+	/** Puts a cursor that nobody has moved on a stored reading. */
+	settleCursor(place: (seconds: number) => number): void {
+		if (!this.#cursorChosen) this.cursor = place(this.firstCursor);
+	}
+
 	moveCursor(seconds: number): void {
 		this.#cursorChosen = true;
 		this.cursor = seconds;

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { DERIVED, isSignalKey, SIGNALS } from '$lib/model/signals';
-import { stripsFor, tracesOf } from './strips';
+import { missingWords, stripsFor, stripsOfStart, tracesOf } from './strips';
 
 describe('stripsFor', () => {
 	it('keeps one quantity an axis', () => {
@@ -25,10 +25,33 @@ describe('stripsFor', () => {
 	});
 });
 
+describe('stripsOfStart', () => {
+	it('shows flow and pressures only where the log could give them, the others always', () => {
+		const keys = (reasons: Record<string, string>) => stripsOfStart({}, reasons).map(({ key }) => key);
+		expect(keys({})).toContain('flow');
+		const missing = { flow: 'signal-missing', systemDeltaAt60s: 'signal-missing', minOilNet: 'run-too-short' };
+		expect(keys(missing)).not.toContain('flow');
+		expect(keys(missing)).toContain('pressures');
+		expect(keys(missing)).toContain('oil');
+	});
+});
+
 describe('tracesOf', () => {
 	it('names each once', () => {
 		const keys = tracesOf(stripsFor({}));
 		expect(new Set(keys).size).toBe(keys.length);
 		expect(keys).toContain('evapApproach');
+	});
+});
+
+describe('missingWords', () => {
+	const said = (key: string) => {
+		const spec = stripsFor({ condenser: 'air' }).find((strip) => strip.key === key);
+		return spec && missingWords(spec);
+	};
+	it('names what would be drawn', () => {
+		expect(said('oil')).toBe('Oil temperature is not in this log.');
+		expect(said('loading')).toBe('Demand and capacity are not in this log.');
+		expect(said('lift')).toMatch(/^Lift cannot be worked out/);
 	});
 });

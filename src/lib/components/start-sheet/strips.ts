@@ -1,5 +1,6 @@
 import type { Quantity } from '$lib/model/quantities';
-import type { TraceKey } from '$lib/model/signals';
+import { DERIVED, isSignalKey, SIGNALS, type TraceKey } from '$lib/model/signals';
+import type { FigureKey } from '$lib/model/start';
 import type { LimitKey, UnitNature } from '$lib/model/unit';
 
 /** A limit line of a strip. `edge` marks the side that is out of bounds; `trip` limits are inked as such. */
@@ -39,8 +40,10 @@ export type StripSpec = {
 	fixed?: { low: number; high: number };
 	/** The least span worth drawing, stored units. */
 	least: number;
-	/** Kept without any of its signals, saying what it would show; the others leave when they have nothing. */
-	wouldShow: string | null;
+	/** What the strip says when none of its signals is in the log. */
+	wouldShow: string;
+	/** Shown only where the log could give one of these figures; the other strips keep their place without a signal. */
+	onlyWith?: readonly FigureKey[];
 };
 
 const trace = (key: TraceKey, label: string, faint = false): StripTrace =>
@@ -195,7 +198,8 @@ export function stripsFor(nature: UnitNature): StripSpec[] {
 			readOnly: [],
 			limits: [lower('oilNetCutout', 'oil pressure cut-out'), lower('systemDeltaCutout', 'least difference')],
 			least: 50,
-			wouldShow: null
+			wouldShow: 'whether the pressure that moves the oil was built in time',
+			onlyWith: ['systemDeltaAt60s', 'minOilNet']
 		},
 		{
 			key: 'flow',
@@ -207,7 +211,8 @@ export function stripsFor(nature: UnitNature): StripSpec[] {
 			readOnly: [],
 			limits: [],
 			least: 5,
-			wouldShow: null
+			wouldShow: 'how much water flowed',
+			onlyWith: ['flow']
 		},
 		{
 			key: 'current',
@@ -224,7 +229,27 @@ export function stripsFor(nature: UnitNature): StripSpec[] {
 	];
 }
 
+/**
+ * The strips worth their place for one start, known before its traces arrive, so that nothing moves when they do.
+ * @param absentReasons why figures of the start are null; `signal-missing` means that the log has no such signal
+ */
+export function stripsOfStart(nature: UnitNature, absentReasons: Readonly<Record<string, string>>): StripSpec[] {
+	const could = (figure: FigureKey) => absentReasons[figure] !== 'signal-missing';
+	return stripsFor(nature).filter(({ onlyWith }) => onlyWith === undefined || onlyWith.some(could));
+}
+
 /** Every signal and derived quantity that the strips ask for, once each. */
 export function tracesOf(strips: readonly StripSpec[]): TraceKey[] {
 	return [...new Set(strips.flatMap((strip) => [...strip.traces, ...strip.readOnly].map(({ key }) => key)))];
+}
+
+/** Why a strip is empty, as a sentence that names every signal it would draw. */
+export function missingWords(spec: StripSpec): string {
+	const keys = spec.traces.filter(({ faint }) => !faint).map(({ key }) => key);
+	const names = keys.map((key) => (isSignalKey(key) ? SIGNALS[key].label : DERIVED[key].label));
+	const list = [names.slice(0, -1).join(', '), names.at(-1) ?? ''].filter((part) => part !== '').join(' and ');
+	const said = list.charAt(0).toUpperCase() + list.slice(1);
+	const logged = keys.every(isSignalKey);
+	if (logged) return `${said} ${names.length === 1 ? 'is' : 'are'} not in this log.`;
+	return `${said} cannot be worked out: a signal that is needed is not in this log.`;
 }
