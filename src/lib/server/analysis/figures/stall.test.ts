@@ -99,7 +99,8 @@ describe('findStall', () => {
 	});
 
 	it('takes a met setpoint for what holds it, whatever the demand says', () => {
-		expect(stall({ evapWaterOut: () => 6.8 })).toMatchObject({ verdict: 'limited', limiting: 'met setpoint' });
+		expect(stall({ evapWaterOut: () => 6.4 })).toMatchObject({ verdict: 'limited', limiting: 'met setpoint' });
+		expect(stall({ evapWaterOut: () => 6.8 })?.verdict).toBe('stall');
 		expect(stall({ evapWaterOut: () => 6.8, capacity: upTo(50) }, rated, 5, 25)).toBeNull();
 	});
 

@@ -92,7 +92,7 @@ function moreWanted(view: View, stretch: Interval, level: number): boolean {
 	if (demand !== null) {
 		if (demand.mean >= level + view.short) return !(view.stepped && setpointMet(waterOver(view, stretch)));
 		// On a stepped machine demand stands between two stages by nature.
-		if (demand.mean >= level + SHORT_OF_DEMAND) return false;
+		if (view.stepped) return false;
 		const before = view.demand?.mostBefore(stretch.from) ?? -Infinity;
 		if (before < level + 10 || view.load.mostBefore(stretch.from) > level + 4) return false;
 	}
@@ -108,7 +108,7 @@ function waterOver(view: View, stretch: Interval): number | null {
 	return Number.isNaN(setpoint) ? null : water.mean - setpoint;
 }
 
-/** Water within its dead band asks for no more, whatever a demand figure says. */
+/** Water within its dead band asks a stepped machine for no more, whatever a demand figure says. */
 const setpointMet = (above: number | null) => above !== null && above <= DEAD_BAND;
 
 function demandOver(context: FigureContext, stretch: Interval): number | null {
@@ -130,7 +130,7 @@ function describe(context: FigureContext, load: Series, stretch: Interval, water
 	const demand = demandOver(context, stretch);
 	const byWater = demand === null || demand < level + SHORT_OF_DEMAND;
 	const limiting = limitingOver(context.circuit, stretch, level);
-	if (!byWater && limiting.verdict === 'stall' && setpointMet(water)) {
+	if (!byWater && limiting.verdict === 'stall' && water !== null && water <= 0) {
 		limiting.verdict = 'limited';
 		limiting.limiting = 'met setpoint';
 	}
