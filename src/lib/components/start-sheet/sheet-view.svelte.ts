@@ -10,9 +10,6 @@ import type { SheetAddress } from '$lib/utils/sheet-address';
 import { dragWindow, FAST_WINDOW, panBy, zoomAbout } from '$lib/utils/zoom-window';
 import type { TraceLevel } from './start-traces';
 
-/** Below this a sheet is a phone's: read-outs above the strips, one paper speed. */
-export const NARROW = 700;
-
 const DAY = 86_400;
 
 /** What is fetched for a view: the home stretch first, then wider ones as the zoom goes out. */

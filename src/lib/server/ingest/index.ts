@@ -1,7 +1,7 @@
 export type * from './types';
 export { LogRefusal } from './types';
-export { sniff, MOST_BYTES, type Container, type Sniffed } from './container/sniff';
+export { sniff } from './container/sniff';
 export { inspectLog } from './inspect/inspect-log';
 export { readLog } from './read/read-log';
 export { decodeTimes, decodeValues, encodeTimes, encodeValues } from './block-codec';
-export { mergeBlocks, type DecodedBlock, type Merged } from './merge-blocks';
+export { mergeBlocks, type DecodedBlock } from './merge-blocks';

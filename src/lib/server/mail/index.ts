@@ -2,7 +2,7 @@ import { config } from '$lib/server/config';
 import { smtpMailer } from './smtp';
 import type { Mailer } from './types';
 
-export type { Mailer, Message } from './types';
+export type { Mailer } from './types';
 
 let opened: Mailer | undefined;
 

@@ -89,11 +89,6 @@ export async function insertChange(
 	return { row: first, repeated: true };
 }
 
-export async function findChange(tx: Tx, id: string): Promise<ChangeRow | null> {
-	const [row] = await tx.select().from(changes).where(eq(changes.id, id));
-	return row ?? null;
-}
-
 export async function findCase(tx: Tx, id: string): Promise<CaseRow | null> {
 	const [row] = await tx.select().from(cases).where(eq(cases.id, id));
 	return row ?? null;

@@ -86,15 +86,6 @@ export function listLimits(tx: Tx, unitIds: readonly string[]): Promise<LimitRow
 		.orderBy(sql`${unitLimits.validFrom} asc nulls first`, asc(unitLimits.setAt));
 }
 
-/** Every value a unit's limits ever had, newest first. */
-export function limitHistory(tx: Tx, unitId: string): Promise<LimitRow[]> {
-	return tx
-		.select()
-		.from(unitLimits)
-		.where(eq(unitLimits.unitId, unitId))
-		.orderBy(sql`${unitLimits.setAt} desc`);
-}
-
 export async function retireLimit(tx: Tx, unitId: string, key: LimitKey, at: Date): Promise<void> {
 	await tx
 		.update(unitLimits)

@@ -249,6 +249,3 @@ export async function weekPlan(actor: Actor, from: string, to: string): Promise<
 		return wanted.sort((a, b) => b.trippedInARow - a.trippedInARow || b.k - a.k || (a.unitTag < b.unitTag ? -1 : 1));
 	});
 }
-
-/** Today's date at a site. */
-export const todayAt = (site: { timeZone: string }): string => siteDate(now().getTime(), site.timeZone);

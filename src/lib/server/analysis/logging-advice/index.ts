@@ -1,1 +1,1 @@
-export { tonightsLog, type AdviceInput, type LogPoint, type TonightsLog } from './tonights-log';
+export { tonightsLog } from './tonights-log';

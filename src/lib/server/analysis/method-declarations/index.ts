@@ -4,7 +4,7 @@ import { PROOF_SECTION, STATISTICS_SECTION } from './statistics-declared';
 import { STARTS_SECTION } from './starts-declared';
 import type { MethodSection } from './types';
 
-export type { MethodEntry, MethodSection } from './types';
+export type { MethodSection } from './types';
 export { readingOf } from './figures-declared';
 
 /** The method as data, in the order it is read: from a log to a verdict. */

@@ -1,4 +1,3 @@
-export { BE_THERE, beThereBy, weekdayKind, type WeekdayKind } from './be-there-by';
-export { eThreshold, eValue } from './e-value';
-export { prove, type Proof, type ProofInput } from './prove';
-export { repeaters, type Repeater, type RepeaterInput } from './repeaters';
+export { beThereBy, weekdayKind } from './be-there-by';
+export { prove, type Proof } from './prove';
+export { repeaters, type Repeater } from './repeaters';

@@ -3,9 +3,6 @@ export type Container = 'text' | 'gzip' | 'zip' | 'haystack-json';
 
 export type Sniffed = { container: Container } | { refuse: 413 | 415; kind: string; message: string };
 
-/** At most this many bytes of one uploaded file are accepted at all. */
-export const MOST_BYTES = 4 * 1024 ** 3;
-
 const MAGIC: readonly [bytes: readonly number[], what: string, advice: string][] = [
 	[
 		[0xd0, 0xcf, 0x11, 0xe0],
