@@ -14,7 +14,8 @@ const OF_QUANTITY: Partial<Record<Quantity, Idea>> = {
 	current: 'current',
 	voltage: 'voltage',
 	frequency: 'speed',
-	hours: 'hours'
+	hours: 'hours',
+	state: 'run'
 };
 
 function scoreOf(rule: NameRule, ideas: ReadonlySet<Idea>, fromUnit: Idea | null, unknown: number): number {

@@ -4,7 +4,8 @@ import { SIGNAL_KEYS, SIGNALS } from '$lib/model/signals';
 import { unitRef } from '../testing/harness';
 import { unitOf } from '../values/units';
 import { guessByName } from './by-name';
-import { HEADER_STYLES, type HeaderStyle } from './header-styles.fixture';
+import type { HeaderStyle } from './header-styles.fixture';
+import { HEADER_STYLES } from './more-header-styles.fixture';
 import { OwnerFinder } from './owner';
 import { nameParts } from './tokens';
 

@@ -1,6 +1,7 @@
 import { MEASURES, toStored, type MeasureKey, type Quantity } from '$lib/model/quantities';
 import { SIGNALS, type SignalKey } from '$lib/model/signals';
 import { measuresFor } from '../values/units';
+import { isSentinel } from '../values/words';
 import { rangeOf } from './ranges';
 import type { ColumnSample } from './sample';
 
@@ -58,6 +59,7 @@ export function fitOf(sample: ColumnSample, signal: SignalKey, measure: MeasureK
 		n++;
 		const stored = toStored(x, measure, air);
 		if (stored >= wide[0] && stored <= wide[1]) within++;
+		else if (isSentinel(x)) n--;
 	}
 	if (n === 0) return 0.5;
 	if (sample.unit?.length === 1) return within / n;

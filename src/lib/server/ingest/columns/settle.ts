@@ -207,7 +207,7 @@ export function checkRunning(guesses: readonly Guess[]): void {
 			const most = load.sample.shape.most;
 			const on = pairs.filter(([r]) => r === 1);
 			const off = pairs.filter(([r]) => r === 0);
-			if (on.length < 10 || off.length < 10 || !(most > 0)) continue;
+			if (on.length < 4 || off.length < 4 || !(most > 0)) continue;
 			const idle = on.filter(([, x]) => x < 0.05 * most).length / on.length;
 			const loaded = off.filter(([, x]) => x > 0.3 * most).length / off.length;
 			// A slide may stay where it was while the machine rests; current and power cannot.
@@ -216,7 +216,7 @@ export function checkRunning(guesses: readonly Guess[]): void {
 				running.confidence = Math.max(running.confidence, 0.88);
 				running.reasons.push(`moves with ${load.sample.column}`);
 			}
-			if (idle < 0.4 && (loaded < 0.4 || parked)) continue;
+			if (on.length < 10 || off.length < 10 || (idle < 0.4 && (loaded < 0.4 || parked))) continue;
 			load.confidence *= 0.75;
 			if (idle > 0.6 && loaded > 0.6) running.confidence *= 0.75;
 			load.reasons.push(`does not move with ${running.sample.column}`);
