@@ -26,7 +26,7 @@ import { noteOnCase } from './case-timeline';
 import { memberFits } from './cases';
 import { memberNames } from './checks';
 import { countFirstTries, trippedInARow } from './first-tries';
-import { shortDate, siteDate } from './site-clock';
+import { shortDate } from './site-clock';
 import { visibleUnit } from './units';
 import { visitShape, type VisitAround } from './visit-shapes';
 
