@@ -40,6 +40,10 @@ describe('startCapacity', () => {
 		expect(read(3600, 300).figures.startCapacity).toBeCloseTo(40, 9);
 		expect(read(3600, 300).marks.startCapacity).toBe('coarse');
 		expect(read(80, 60).marks.startCapacity).toBe('coarse');
+		// Rows at 0 and 40 s, the first off row at 80 s: the one at 40 s is early; a run of one row has only that.
+		expect(read(70, 40).figures.startCapacity).toBeCloseTo(44, 9);
+		expect(read(70, 40).marks.startCapacity).toBe('early');
+		expect(read(55, 60).marks.startCapacity).toBe('coarse');
 	});
 
 	it('says what is missing', () => {

@@ -8,7 +8,7 @@ const WINDOW_TO = 120;
 
 /**
  * startCapacity (%), startAmps (A or % of rated): the median of 45–120 s after the start, two samples at least. A run
- * shorter than that: 10 s to its stop, two samples, marked `early`. Where the spacing is too coarse for two samples: the
+ * shorter than that: 10 s to its stop, marked `early`. Where the spacing is too coarse for two samples: the
  * first row, marked `coarse`. Amps never count before the starter's transition + 10 s (unknown: 45 s).
  */
 export function readStartLoading(context: FigureContext, sheet: Figures): void {
@@ -23,7 +23,7 @@ function readAtStart(context: FigureContext, sheet: Figures, key: FigureKey, id:
 	if (series === undefined) return put(sheet, key, missing(context, id));
 	const short = context.stopped && context.seconds < WINDOW_TO;
 	const from = Math.max(earliest, short ? 10 : WINDOW_FROM);
-	const found = during(context, id, from, short ? context.seconds : Math.max(WINDOW_TO, from), 2);
+	const found = during(context, id, from, short ? context.seconds : Math.max(WINDOW_TO, from), short ? 1 : 2);
 	if ('v' in found) {
 		put(sheet, key, median(found.v) ?? NaN);
 		if (short) sheet.marks[key] = 'early';
