@@ -31,6 +31,8 @@ test('a log is dropped, its mapping confirmed, and its tripped start read', asyn
 	const unitId = await addUnit(owner.page, 'Known 1');
 	const known = knownCases()[0];
 	await page.goto(`${origin()}/units/${unitId}/logs`);
+	// The page listens to the file input once its script runs.
+	await page.waitForLoadState('networkidle');
 	await page
 		.locator('input[type=file]')
 		.first()
