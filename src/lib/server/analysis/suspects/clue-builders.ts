@@ -222,6 +222,37 @@ export function growthClue(
 	};
 }
 
+/** A fouled surface grows dirty slowly: an approach that jumps between two runs is another thing, often a sensor. */
+export function jumpClue(spec: Common & { figure: FigureKey; needs: readonly Need[] }): ClueRule {
+	return {
+		key: spec.key,
+		direction: 'against',
+		weight: spec.weight,
+		needs: spec.needs,
+		readAt: 'run',
+		read: (context) => {
+			const runs = likeConditions(context.starts.filter((start) => start.figures[spec.figure] !== null));
+			const values = runs.map((start) => start.figures[spec.figure] ?? 0);
+			let step = 0;
+			let at = 0;
+			// Two runs on either side, so that one odd run is no jump.
+			for (let i = 2; i + 1 < values.length; i++) {
+				const before = Math.max(values[i - 2] ?? 0, values[i - 1] ?? 0);
+				const after = Math.min(values[i] ?? 0, values[i + 1] ?? 0);
+				if (after - before > step) [step, at] = [after - before, i];
+			}
+			const whole = Math.max(...values) - Math.min(...values);
+			if (values.length < 4 || whole <= 0) return SILENT;
+			return {
+				strength: ramp(step, 1.5, 3) * ramp(step / whole, 0.4, 0.65),
+				sentence: `${spec.what} jumped by ${context.words.of(step, spec.quantity)} from one run to the next.`,
+				figures: { step },
+				starts: runs.slice(at - 1, at + 1)
+			};
+		}
+	};
+}
+
 /** A clue from a field check or a person's finding. */
 export function checkClue(
 	key: string,

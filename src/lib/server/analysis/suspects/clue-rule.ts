@@ -46,8 +46,8 @@ export type SuspectRow = {
 	clues: readonly ClueRule[];
 	/** Suspects that bring this one's signature with them: when one of them stands, this share of its score weighs against. */
 	explainedBy?: readonly { key: SuspectKey; share: number }[];
-	/** Which trips its clues are read from: `low-side` leaves out flow, electrical, oil and high-side trips. */
-	trips?: 'low-side';
+	/** Which trips its clues are read from: `low-side` leaves out flow, electrical, oil and high-side trips; `head` takes oil and difference trips too. */
+	trips?: 'low-side' | 'head';
 	/** May be named on a unit without a trip or a stall (a slow fault that shows in settled runs). */
 	showsWithoutSymptom?: boolean;
 	check: DecisiveCheck;

@@ -8,7 +8,7 @@ import { median } from '../statistics/median';
 import { medianAbsoluteDeviation } from '../statistics/median-absolute-deviation';
 import { type Words, wordsFor } from '../wording/quantity-words';
 import { FIGURE_SIGNALS, stuckFinder } from './stuck-signals';
-import { isLowSideTrip, isTellingTrip, presentStarts, type SuspectEvidence } from './evidence';
+import { speaksAbout, isTellingTrip, presentStarts, type SuspectEvidence } from './evidence';
 import { type Readable, traceReader, type TraceReader } from './trace-reader';
 
 /** A value read from several starts. */
@@ -177,9 +177,9 @@ export function contextOf(
 	};
 }
 
-/** The same context with only the trips that speak about the low side. */
-export function lowSideContext(evidence: SuspectEvidence, context: Context): Context {
-	const bad = context.bad.filter(isLowSideTrip);
+/** The same context with only the trips that speak about one side of the machine. */
+export function sideContext(evidence: SuspectEvidence, context: Context, side: 'low-side' | 'head'): Context {
+	const bad = context.bad.filter((start) => speaksAbout(start, side));
 	return bad.length === context.bad.length ? context : contextOf(evidence, context.starts, bad, context.held);
 }
 

@@ -2,7 +2,7 @@ import { SUSPECT_WORDS } from '$lib/model/words';
 import type { Clue, Standing, SuspectResult, SuspectsResult, SuspectKey, Verdict } from '$lib/model/suspect';
 import type { StartRecord } from '$lib/model/start';
 import { median } from '../statistics/median';
-import { type Context, contextOf, lowSideContext, periodContext } from './context';
+import { type Context, contextOf, periodContext, sideContext } from './context';
 import { eligibleStarts, type SuspectEvidence } from './evidence';
 import { scoreRow, type ScoredRow } from './score-row';
 import { SUSPECT_TABLE } from './table';
@@ -14,7 +14,7 @@ export const STANDING_LIMITS = {
 	pointsTo: { score: 0.55, discriminator: 0.28 },
 	fits: { score: 0.25, discriminator: 0.14 },
 	/** A slow fault on a unit that neither trips nor stalls must speak louder. */
-	withoutSymptom: { score: 0.5, discriminator: 0.4 }
+	withoutSymptom: { score: 0.5, discriminator: 0.4, alone: 0.55 }
 } as const;
 
 /** Clues of one start are kept from this weight on. */
@@ -94,14 +94,23 @@ function seesEnough(context: Context): boolean {
 	return low && load && context.starts.length > 0;
 }
 
+/** Loud enough to be named on a unit that neither trips nor stalls: two clues at least, or one that is loud alone. */
+function isLoud(one: ScoredRow): boolean {
+	const { score, discriminator, alone } = STANDING_LIMITS.withoutSymptom;
+	const witnesses = one.clues.filter((clue) => clue.direction === 'for' && clue.weight >= 0.1).length;
+	return (
+		one.row.showsWithoutSymptom === true &&
+		one.score >= score &&
+		one.discriminator >= discriminator &&
+		(witnesses > 1 || one.discriminator >= alone)
+	);
+}
+
 function verdictOf(context: Context, rows: readonly ScoredRow[]): Verdict {
 	const symptom = hasSymptom(context);
-	const need = symptom ? STANDING_LIMITS.fits : STANDING_LIMITS.withoutSymptom;
-	const named = rows.some(
-		(one) =>
-			(symptom || one.row.showsWithoutSymptom === true) &&
-			one.score >= need.score &&
-			one.discriminator >= need.discriminator
+	const { fits } = STANDING_LIMITS;
+	const named = rows.some((one) =>
+		symptom ? one.score >= fits.score && one.discriminator >= fits.discriminator : isLoud(one)
 	);
 	if (named) return 'fault-pattern';
 	return symptom || !seesEnough(context) ? 'cannot-tell' : 'no-fault-pattern';
@@ -117,16 +126,7 @@ function missingSignals(rows: readonly ScoredRow[]): string[] {
 /** Without a symptom only slow faults that speak loudly keep their standing. */
 function quieten(context: Context, suspects: SuspectResult[], rows: readonly ScoredRow[]): SuspectResult[] {
 	if (hasSymptom(context)) return suspects;
-	const loud = new Set(
-		rows
-			.filter(
-				(one) =>
-					one.row.showsWithoutSymptom === true &&
-					one.score >= STANDING_LIMITS.withoutSymptom.score &&
-					one.discriminator >= STANDING_LIMITS.withoutSymptom.discriminator
-			)
-			.map((one) => one.row.key)
-	);
+	const loud = new Set(rows.filter(isLoud).map((one) => one.row.key));
 	return suspects
 		.map((suspect) => {
 			const stands = suspect.standing === 'points-to' || suspect.standing === 'fits';
@@ -136,6 +136,17 @@ function quieten(context: Context, suspects: SuspectResult[], rows: readonly Sco
 		.map((suspect, i) => ({ ...suspect, rank: i + 1 }));
 }
 
+/** Every row that applies, each read from the trips that speak about its side. */
+function scoreRows(evidence: SuspectEvidence, context: Context): ScoredRow[] {
+	const sides = {
+		'low-side': sideContext(evidence, context, 'low-side'),
+		head: sideContext(evidence, context, 'head')
+	};
+	return SUSPECT_TABLE.map((row) => scoreRow(row, row.trips ? sides[row.trips] : context)).filter(
+		(one) => one !== null
+	);
+}
+
 /**
  * Judges every suspect on the evidence of one circuit: clues for, against and missing, standing and rank, and the
  * verdict over all. Pure; the same evidence gives the same answer. Needs the circuit's series, so that windows the
@@ -143,10 +154,7 @@ function quieten(context: Context, suspects: SuspectResult[], rows: readonly Sco
  */
 export function evaluateSuspects(evidence: SuspectEvidence): SuspectsResult {
 	const context = periodContext(evidence);
-	const lowSide = lowSideContext(evidence, context);
-	const rows = SUSPECT_TABLE.map((row) => scoreRow(row, row.trips === 'low-side' ? lowSide : context)).filter(
-		(one) => one !== null
-	);
+	const rows = scoreRows(evidence, context);
 	explain(rows);
 	const verdict = verdictOf(context, rows);
 	const suspects = quieten(context, ranked(rows, isCoarse(context.bad)), rows);
@@ -167,11 +175,12 @@ export function cluesOfStart(evidence: SuspectEvidence, startedAt: number): Star
 	const held = eligibleStarts(evidence.starts).filter((one) => one.outcome === 'held' && one !== start);
 	const bad = start.outcome === 'tripped' ? [start] : [];
 	const context = contextOf({ ...evidence, checks: [], changes: [] }, [start], bad, held);
-	const lowSide = lowSideContext(evidence, context);
-	return SUSPECT_TABLE.flatMap((row) =>
-		(scoreRow(row, row.trips === 'low-side' ? lowSide : context)?.clues ?? [])
-			.filter((clue) => clue.direction !== 'missing' && clue.weight >= START_CLUE_WEIGHT)
-			.filter((clue) => clue.starts.includes(startedAt))
-			.map((clue) => ({ ...clue, suspect: row.key }))
-	).sort((a, b) => directionOrder(a) - directionOrder(b) || b.weight - a.weight);
+	return scoreRows(evidence, context)
+		.flatMap(({ row, clues }) =>
+			clues
+				.filter((clue) => clue.direction !== 'missing' && clue.weight >= START_CLUE_WEIGHT)
+				.filter((clue) => clue.starts.includes(startedAt))
+				.map((clue) => ({ ...clue, suspect: row.key }))
+		)
+		.sort((a, b) => directionOrder(a) - directionOrder(b) || b.weight - a.weight);
 }

@@ -1,7 +1,8 @@
 import { expect, it } from 'vitest';
 import { DAY, MONDAY, startRecord, trippedRecord } from '../../../../../fixtures/inference/start-record';
+import type { TripKind } from '$lib/model/start';
 import { inventedInput } from '../testing/synthetic-log';
-import { eligibleStarts, isLowSideTrip, isTellingTrip, presentStarts } from './evidence';
+import { eligibleStarts, isTellingTrip, presentStarts, speaksAbout } from './evidence';
 
 const starts = Array.from({ length: 6 }, (_, day) => startRecord(MONDAY + day * DAY));
 const change = (day: number, newHistory = false) => ({
@@ -33,6 +34,8 @@ it('leaves out attended starts, lay-ups and lost ones, and stops from outside', 
 		])
 	).toEqual([]);
 	expect(isTellingTrip(trippedRecord(MONDAY, {}, 'emergency-stop'))).toBe(false);
-	expect(isLowSideTrip(trippedRecord(MONDAY, {}, 'loss-of-water-flow'))).toBe(false);
-	expect(isLowSideTrip(trippedRecord(MONDAY, {}, 'unknown'))).toBe(true);
+	const speaks = (kind: TripKind, side: 'low-side' | 'head') => speaksAbout(trippedRecord(MONDAY, {}, kind), side);
+	expect(speaks('loss-of-water-flow', 'low-side')).toBe(false);
+	expect(speaks('unknown', 'low-side')).toBe(true);
+	expect([speaks('oil-flow', 'low-side'), speaks('oil-flow', 'head')]).toEqual([false, true]);
 });

@@ -22,22 +22,24 @@ export function isTellingTrip(start: StartRecord): boolean {
 	return start.outcome === 'tripped' && !(start.trip && OUTSIDE.has(start.trip.kind));
 }
 
-/** Trips that another side of the machine explains: no witness for what happens in the evaporator. */
-const NOT_LOW_SIDE: ReadonlySet<TripKind> = new Set([
+/** Trips that say nothing of the refrigerant: water, supply, a failed sensor, or a condenser too hot. */
+const OTHER_SIDE: readonly TripKind[] = [
 	'loss-of-water-flow',
 	'starter-fault',
 	'phase-or-supply',
 	'motor-temperature',
 	'high-condensing',
 	'high-oil-temperature',
-	'oil-flow',
-	'low-pressure-difference',
 	'sensor-or-communication'
-]);
+];
+/** Trips that come of too little pressure difference, with or without a low evaporator. */
+const HEAD: readonly TripKind[] = ['oil-flow', 'low-pressure-difference'];
 
-/** Does the trip speak about the low side (or not say what it was)? */
-export function isLowSideTrip(start: StartRecord): boolean {
-	return !(start.trip && NOT_LOW_SIDE.has(start.trip.kind));
+/** Does the trip speak about the low side, or (for the head) about the pressure difference? Trips of no known kind do. */
+export function speaksAbout(start: StartRecord, side: 'low-side' | 'head'): boolean {
+	const kind = start.trip?.kind;
+	if (kind === undefined || OTHER_SIDE.includes(kind)) return kind === undefined;
+	return side === 'head' || !HEAD.includes(kind);
 }
 
 /** Starts that count: nobody was at the unit and it was no lay-up. */

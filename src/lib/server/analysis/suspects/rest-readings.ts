@@ -76,6 +76,18 @@ function restingSaturation(context: Context, source: 'logged' | 'pressure', from
 	return pressure === null ? null : saturationTemperature(context.input.refrigerant, pressure);
 }
 
+/** Suction minus evaporator saturation before starts after 20 min of rest or more; null under three such rests. */
+export function suctionOffset(context: Context): { value: number; spread: number } | null {
+	const values: number[] = [];
+	for (const start of context.starts) {
+		if ((start.restSeconds ?? 0) < REST_SECONDS) continue;
+		const value = context.reader.median('superheat', start.startedAt - 2 * MINUTE, start.startedAt - 1);
+		if (value !== null) values.push(value);
+	}
+	const value = median(values);
+	return value === null || values.length < 3 ? null : { value, spread: medianAbsoluteDeviation(values) ?? 0 };
+}
+
 /** Oil temperature over the ambient (outdoor, else the resting evaporator) at the end of rests of 6 h or more. */
 export function oilOverAmbient(context: Context): { value: number; rests: StartRecord[] } | null {
 	const found: { start: StartRecord; value: number }[] = [];

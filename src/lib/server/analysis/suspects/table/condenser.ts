@@ -2,7 +2,7 @@ import type { StartRecord } from '$lib/model/start';
 import { median } from '../../statistics/median';
 import { countWords } from '../../wording/quantity-words';
 import { cautionsFor } from '../cautions';
-import { besideClue, grew, growthClue, figureClue, recent, telling } from '../clue-builders';
+import { besideClue, grew, growthClue, jumpClue, figureClue, recent, telling } from '../clue-builders';
 import { always, type ClueRule, natureIs, SILENT, type SuspectRow } from '../clue-rule';
 import type { Context, Reading } from '../context';
 import { ramp } from '../strength';
@@ -128,6 +128,14 @@ export const fouledCondenser: SuspectRow = {
 			read: (context) => (kindShare(context, 'high-condensing') > 0.2 ? approachAtTrip.read(context) : SILENT)
 		},
 		highCondensing,
+		jumpClue({
+			key: 'condenser-approach-jumped',
+			weight: 0.6,
+			what: 'Settled condenser approach',
+			quantity: 'temperatureDifference',
+			figure: 'condApproach',
+			needs: ['condApproach']
+		}),
 		growthClue({
 			key: 'condenser-approach-growing',
 			weight: 0.45,
@@ -152,7 +160,9 @@ export const fouledCondenser: SuspectRow = {
 			needs: ['condApproach'],
 			atFullLoad: true,
 			strength: (value, context) =>
-				grew(context, 'condApproach') ? 0 : ramp(value, wide(context)[0], wide(context)[0] - 0.6)
+				grew(context, 'condApproach')
+					? 0
+					: (1 - kindShare(context, 'high-condensing')) * ramp(value, wide(context)[0], wide(context)[0] - 0.6)
 		})
 	],
 	explainedBy: [{ key: 'non-condensables', share: 0.6 }],

@@ -1,5 +1,5 @@
 import { cautionsFor } from '../cautions';
-import { besideClue, checkClue, grew, growthClue, figureClue } from '../clue-builders';
+import { besideClue, checkClue, grew, growthClue, jumpClue, figureClue } from '../clue-builders';
 import { always, type ClueRule, SILENT, type SuspectRow } from '../clue-rule';
 import type { Context } from '../context';
 import { restOffset } from '../rest-readings';
@@ -87,6 +87,14 @@ export const fouledEvaporator: SuspectRow = {
 	clues: [
 		approachWide(0.55, true),
 		superheatOrdinary(0.15),
+		jumpClue({
+			key: 'evaporator-approach-jumped',
+			weight: 0.6,
+			what: 'Settled evaporator approach',
+			quantity: 'temperatureDifference',
+			figure: 'evapApproach',
+			needs: ['evapApproach']
+		}),
 		growthClue({
 			key: 'evaporator-approach-growing',
 			weight: 0.4,

@@ -3,6 +3,7 @@ import { besideClue, figureClue, recent } from '../clue-builders';
 import { type ClueRule, natureIs, SILENT } from '../clue-rule';
 import type { StartRecord } from '$lib/model/start';
 import type { Context } from '../context';
+import { type Band, loadBands } from '../load-bands';
 import { ramp } from '../strength';
 
 export const flooded = (context: Context) =>
@@ -51,6 +52,10 @@ export const superheatLow = (weight: number): ClueRule =>
 		shift: [-4, -8]
 	});
 
+/** A light load subcools little on a sound machine: runs under 45 % capacity say nothing of the charge [ours]. */
+const loaded = (starts: readonly StartRecord[]): StartRecord[] =>
+	starts.filter((start) => start.figures.settledCapacity === null || start.figures.settledCapacity >= 45);
+
 /** Subcooling says on which side of the valve the liquid is missing. */
 export const subcooling = (
 	key: string,
@@ -65,7 +70,7 @@ export const subcooling = (
 	discriminates,
 	needs: ['subcooling'],
 	read: (context) => {
-		const settled = context.figure('settledSubcooling', recent(context, 'settledSubcooling'));
+		const settled = context.figure('settledSubcooling', loaded(recent(context, 'settledSubcooling')));
 		const reading = settled ?? context.tripMinute('subcooling');
 		if (!reading) return null;
 		return {
@@ -149,6 +154,49 @@ export function starvedShare(context: Context): { starved: number; all: number }
 	return { starved: reading.values.filter((value) => value > starvedFrom(context)).length, all: reading.values.length };
 }
 
+/**
+ * How clearly the evaporator starves only as the mass flow rises, 0…1: ordinary superheat at light load, high at heavy
+ * load with the valve wide open. A line or a charge that is short does this; a valve that sticks starves at light load too.
+ */
+export function starvesWithLoad(context: Context): { strength: number; low: Band; high: Band } | null {
+	const bands = loadBands(context);
+	if (!bands) return null;
+	const { low, high } = bands;
+	const from = starvedFrom(context);
+	const valve = high.valve === null ? 1 : ramp(high.valve, 75, 92);
+	const strength =
+		ramp(high.superheat, from - 3, from + 0.5) *
+		ramp(high.superheat - low.superheat, 1.5, 4) *
+		ramp(low.superheat, from + 2, from) *
+		valve;
+	return { strength, low, high };
+}
+
+export const starvesWithLoadClue = (
+	direction: 'for' | 'against',
+	weight: number,
+	liquidMatters: boolean
+): ClueRule => ({
+	key: 'starves-as-it-loads',
+	direction,
+	weight,
+	discriminates: direction === 'for',
+	readAt: 'run',
+	needs: liquidMatters ? ['superheat', 'capacity', 'subcooling'] : ['superheat', 'capacity'],
+	read: (context) => {
+		const found = starvesWithLoad(context);
+		if (!found) return SILENT;
+		const liquid = found.high.subcooling ?? found.low.subcooling;
+		return {
+			strength: found.strength * (liquidMatters ? ramp(liquid ?? 0, 2, 4) : 1),
+			sentence: `Superheat ${context.words.difference(found.low.superheat)} at light and ${context.words.difference(found.high.superheat)} at heavy load${found.high.valve === null ? '' : ` with the valve at ${context.words.percent(found.high.valve)}`}: it starves as the mass flow rises.`,
+			figures: { light: found.low.superheat, heavy: found.high.superheat },
+			starts: context.starts.slice(-5),
+			show: { signals: ['superheat', 'valvePosition', 'capacity', 'subcooling'], from: 0, to: 1200 }
+		};
+	}
+});
+
 /** A valve that sticks starves some starts; a restricted line or a lack of refrigerant starves every one. */
 export const starvedPattern = (pattern: 'every' | 'some', direction: 'for' | 'against', weight: number): ClueRule => ({
 	key: pattern === 'every' ? 'starved-at-every-start' : 'starved-at-some-starts',
@@ -161,7 +209,9 @@ export const starvedPattern = (pattern: 'every' | 'some', direction: 'for' | 'ag
 		const share = count.starved / count.all;
 		return {
 			strength:
-				pattern === 'every' ? ramp(share, 0.8, 0.95) : Math.min(ramp(share, 0.05, 0.15), ramp(share, 0.92, 0.8)),
+				pattern === 'every'
+					? ramp(share, 0.8, 0.95)
+					: Math.min(ramp(share, 0.05, 0.15), ramp(share, 0.92, 0.8)) * (1 - (starvesWithLoad(context)?.strength ?? 0)),
 			sentence: `${count.starved} of ${countWords(count.all, 'start')} ran starved (superheat over ${context.words.difference(starvedFrom(context))}) at ten minutes or when they stopped.`,
 			figures: { starved: count.starved, starts: count.all },
 			starts: context.starts.slice(-5),

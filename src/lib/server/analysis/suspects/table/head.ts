@@ -137,6 +137,7 @@ export const coldCondenserWater: SuspectRow = {
 			}
 		}
 	],
+	trips: 'head',
 	check: {
 		key: 'condenser-water-control',
 		title:

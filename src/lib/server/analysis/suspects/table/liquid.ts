@@ -9,6 +9,7 @@ import {
 	flooded,
 	starvedPattern,
 	starvedShare,
+	starvesWithLoadClue,
 	subcooling,
 	superheatHigh,
 	superheatInRuns,
@@ -103,7 +104,8 @@ export const liquidLineRestriction: SuspectRow = {
 		superheatInRuns(0.25),
 		superheatHigh(0.1, false),
 		subcooling('subcooling-missing', 'against', 0.6, [3, 1.2]),
-		starvedPattern('some', 'against', 0.3)
+		starvedPattern('some', 'against', 0.25),
+		starvesWithLoadClue('for', 0.55, true)
 	],
 	explainedBy: [{ key: 'evap-saturation-sensor', share: 0.4 }],
 	showsWithoutSymptom: true,

@@ -247,8 +247,10 @@ export const starterOrSupply: SuspectRow = {
 			read: (context) => {
 				const run = median(context.bad.map(runSeconds));
 				if (run === null || kindShare(context, ...electrical) > 0.3) return SILENT;
+				// Unequal phases are the supply's whatever the pressures did meanwhile.
+				const unequal = median(context.bad.map((start) => imbalance(context, start) ?? NaN)) ?? 0;
 				return {
-					strength: ramp(run, 30, 60),
+					strength: ramp(run, 30, 60) * ramp(unequal, 9, 4),
 					sentence: `It ran for ${context.words.seconds(run)} before the trip: the motor was up and the pressures moved.`,
 					figures: { seconds: run },
 					starts: context.bad.slice(-5)

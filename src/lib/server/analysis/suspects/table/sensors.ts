@@ -1,10 +1,10 @@
 import type { FieldCheckFact } from '$lib/model/checks';
 import { countWords } from '../../wording/quantity-words';
 import { cautionsFor } from '../cautions';
-import { checkClue } from '../clue-builders';
+import { checkClue, recent } from '../clue-builders';
 import { always, type ClueRule, SILENT, type SuspectRow } from '../clue-rule';
 import type { Context } from '../context';
-import { restOffset } from '../rest-readings';
+import { restOffset, suctionOffset } from '../rest-readings';
 import { ramp } from '../strength';
 import { latestCheck } from './shared';
 
@@ -133,11 +133,50 @@ export const evapSaturationSensor: SuspectRow = {
 	}
 };
 
+/** Superheat an evaporator usually settles at, K: the middle of what the trade sets (practice), by kind. */
+const usualSuperheat = (context: Context): number => {
+	const low = context.limit('superheatUsualLow');
+	const high = context.limit('superheatUsualHigh');
+	if (low !== null && high !== null) return (low + high) / 2;
+	return context.nature.evaporator === 'dx' ? 5 : 1.5;
+};
+
+/**
+ * Suction minus saturation at rest is no witness by itself (a pipe takes the room's temperature); it is one when every
+ * settled run is off by the same amount to the same side, and the approach does not follow.
+ */
+const suctionOffAtRestToo: ClueRule = {
+	key: 'off-at-rest-and-in-runs',
+	direction: 'for',
+	weight: 0.65,
+	discriminates: true,
+	readAt: 'rest',
+	needs: ['superheat', 'evapApproach'],
+	read: (context) => {
+		const rest = suctionOffset(context);
+		const runs = context.figure('superheat', recent(context, 'superheat'));
+		const approach = context.atFullLoad('evapApproach', recent(context, 'evapApproach'));
+		if (!rest || !runs) return null;
+		const off = runs.value - usualSuperheat(context);
+		const together = Math.sign(off) === Math.sign(rest.value) ? Math.min(Math.abs(off), Math.abs(rest.value)) : 0;
+		const wide = context.nature.evaporator === 'dx' ? 9 : 4;
+		return {
+			strength:
+				ramp(together, 1.4, 2.2) * ramp(rest.spread, 1, 0.5) * (approach ? ramp(approach.value, wide * 1.2, wide) : 1),
+			sentence: `Suction stands ${context.words.difference(rest.value)} off saturation at rest, and settled superheat is ${context.words.difference(runs.value)}, off the usual to the same side.`,
+			figures: { atRest: rest.value, superheat: runs.value },
+			starts: runs.starts.slice(-5),
+			show: { signals: ['suctionTemp', 'evapSaturation'], from: -1200, to: 1800 }
+		};
+	}
+};
+
 export const suctionTemperatureSensor: SuspectRow = {
 	key: 'suction-temperature-sensor',
 	family: 'real',
 	applies: always,
 	clues: [
+		suctionOffAtRestToo,
 		{
 			key: 'superheat-alone-high',
 			direction: 'for',
@@ -167,6 +206,7 @@ export const suctionTemperatureSensor: SuspectRow = {
 		sensorFound(['suctionTemp'], 'for', 'suction'),
 		sensorFound(['suctionTemp'], 'against', 'suction')
 	],
+	showsWithoutSymptom: true,
 	check: {
 		key: 'suction-sensor',
 		title:

@@ -9,6 +9,7 @@ import { type ClueRule, natureIs, SILENT, type SuspectRow } from '../clue-rule';
 import { ramp } from '../strength';
 import {
 	starvedPattern,
+	starvesWithLoadClue,
 	dischargeSuperheatHigh,
 	dx,
 	startsAnyTime,
@@ -81,6 +82,7 @@ export const valveUnderfeeding: SuspectRow = {
 		startsAnyTime,
 		starvedPattern('some', 'for', 0.25),
 		starvedPattern('every', 'against', 0.2),
+		starvesWithLoadClue('against', 0.4, false),
 		superheatLow(0.5),
 		subcooling('no-liquid-before-valve', 'against', 0.5, [2.2, 0.8]),
 		overCapacity(0.45),

@@ -51,7 +51,7 @@ const flowLow: ClueRule = {
 		const share = flowShare(context);
 		if (!share) return null;
 		return {
-			strength: ramp(share.value, 0.82, 0.66),
+			strength: ramp(share.value, 0.78, 0.6),
 			sentence: `Evaporator flow ${context.words.flow(share.flow)}, ${Math.round(100 * share.value)} % of ${share.from}, median of ${countWords(share.count, 'start')}.`,
 			figures: { flow: share.flow, share: share.value },
 			starts: telling(context).slice(-5),
@@ -71,7 +71,7 @@ const deltaWide: ClueRule = {
 		if (!ratio) return null;
 		return {
 			// Over 1.3 times design at the load reached: common practice, no source.
-			strength: ramp(ratio.value, 1.2, 1.5) * (ratio.designKnown ? 1 : 0.6),
+			strength: ramp(ratio.value, 1.3, 1.6) * (ratio.designKnown ? 1 : 0.6),
 			sentence: `Entering minus leaving water is ${ratio.value.toFixed(1)} times ${ratio.designKnown ? 'design' : 'a usual design'} at the load reached, median of ${countWords(ratio.count, 'start')}.`,
 			figures: { ratio: ratio.value },
 			starts: telling(context).slice(-5),
