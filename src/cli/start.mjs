@@ -8,7 +8,7 @@ import { buildWhenStale } from './lib/build.mjs';
 import { migrate } from './lib/migrate.mjs';
 import { installPackages } from './lib/packages.mjs';
 import { dataFolder, databaseFolder, root } from './lib/paths.mjs';
-import { freePort, startPostgres } from './lib/postgres.mjs';
+import { freePort, portIsFree, startPostgres } from './lib/postgres.mjs';
 import { pause, say } from './lib/run.mjs';
 import { writeState } from './lib/state.mjs';
 
@@ -49,28 +49,31 @@ async function answers(url) {
 	throw new Error(`${url} does not answer.`);
 }
 
-async function stop(postgres) {
+async function stop(postgres, code = 0) {
 	if (stopping) return;
 	stopping = true;
-	say('Stopping …');
+	if (code === 0) say('Stopping …');
 	const ended = [...children.values()].map((child) => new Promise((done) => child.once('exit', done)));
 	for (const child of children.values()) child.kill('SIGTERM');
 	await Promise.race([Promise.all(ended), pause(15_000)]);
 	for (const child of children.values()) child.kill('SIGKILL');
 	await postgres?.stop();
-	process.exit(0);
+	process.exit(code);
 }
 
+let own = null;
+
 async function main() {
+	const host = process.env.HOST || '127.0.0.1';
+	const port = Number(process.env.PORT || 3000);
+	await portIsFree(host, port);
 	await installPackages();
 	const data = dataFolder();
-	const own = process.env.DATABASE_URL ? null : await startPostgres(databaseFolder(data));
+	own = process.env.DATABASE_URL ? null : await startPostgres(databaseFolder(data));
 	for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.on(signal, () => void stop(own));
 	const databaseUrl = process.env.DATABASE_URL ?? own.url;
 	await migrate(databaseUrl);
 	await buildWhenStale();
-	const host = process.env.HOST || '127.0.0.1';
-	const port = Number(process.env.PORT || 3000);
 	const local = `http://${host === '0.0.0.0' ? '127.0.0.1' : host}:${port}`;
 	const env = {
 		...process.env,
@@ -94,10 +97,8 @@ async function main() {
 	launch('demo', 'build/worker/demo.js', { ...env, FIRSTPULL_LOCAL: local });
 }
 
-main().catch((error) => {
+main().catch(async (error) => {
 	console.error(error.message);
 	if (process.env.DEBUG) console.error(error);
-	process.exitCode = 1;
-	stopping = true;
-	for (const child of children.values()) child.kill('SIGTERM');
+	await stop(own, 1);
 });

@@ -51,6 +51,21 @@ export function freePort(host = '127.0.0.1') {
 	});
 }
 
+/**
+ * Is the address free to listen on?
+ * @throws Error that says what to change when it is not
+ */
+export function portIsFree(host, port) {
+	return new Promise((done, fail) => {
+		const probe = createServer();
+		probe.once('error', (error) => {
+			const why = error.code === 'EADDRINUSE' ? 'something listens there already' : error.message;
+			fail(new Error(`Cannot listen on ${host}:${port}: ${why}. Set PORT (and HOST) to a free address.`));
+		});
+		probe.listen(port, host, () => probe.close(() => done()));
+	});
+}
+
 function giveTo(account, path, mode) {
 	chmodSync(path, mode);
 	if (account) chownSync(path, account.uid, account.gid);

@@ -1,4 +1,5 @@
 import { config } from '$lib/server/config';
+import { Client } from 'pg';
 import PgBoss from 'pg-boss';
 
 /** Names and payloads of the jobs, and how they are put into the queue. */
@@ -27,18 +28,35 @@ async function open(): Promise<PgBoss> {
 		application_name: 'firstpull-queue'
 	});
 	boss.on('error', (error) => console.error('queue', error.message));
-	await boss.start();
-	await boss.createQueue(JOBS.readLog);
-	// Only this policy makes a singleton key hold without a time slot: one waiting recomputation a unit, however many logs.
-	await boss.createQueue(JOBS.analyseUnit, { name: JOBS.analyseUnit, policy: 'short' });
-	for (const name of [JOBS.sendMail, JOBS.digest, JOBS.deliveries]) await boss.createQueue(name);
+	await alone(async () => {
+		await boss.start();
+		await boss.createQueue(JOBS.readLog);
+		// Only this policy makes a singleton key hold without a time slot: one waiting recomputation a unit, however many logs.
+		await boss.createQueue(JOBS.analyseUnit, { name: JOBS.analyseUnit, policy: 'short' });
+		for (const name of [JOBS.sendMail, JOBS.digest, JOBS.deliveries]) await boss.createQueue(name);
+	});
 	return boss;
+}
+
+// Any number, as long as every process that makes the queues asks for the same one.
+const QUEUE_LOCK = 7_236_942;
+
+/** Runs `work` while no other process makes the queues: each queue is a table, and two makers at once deadlock. */
+async function alone(work: () => Promise<void>): Promise<void> {
+	const client = new Client({ connectionString: config().DATABASE_URL, application_name: 'firstpull-queue' });
+	await client.connect();
+	try {
+		await client.query('select pg_advisory_lock($1)', [QUEUE_LOCK]);
+		await work();
+	} finally {
+		await client.end();
+	}
 }
 
 /** The process's connection to the queue. */
 export function queue(): Promise<PgBoss> {
 	opened ??= open().catch((error: unknown) => {
-		// Two processes that make the queues at the same instant may disturb each other: the next call tries again.
+		// The database may be on its way up: the next call tries again.
 		opened = undefined;
 		throw error;
 	});
