@@ -1,6 +1,9 @@
 import type { LayoutServerLoad } from './$types';
 
-/** Guesses a phone from the request, so that the first paint has the phone's rows and nothing moves. */
-export const load: LayoutServerLoad = ({ request }) => ({
-	phone: /\bMobile\b|Android.+Mobile|iPhone/.test(request.headers.get('user-agent') ?? '')
-});
+/** Tells a phone from the width kept at the last page, or guesses it, so that the first paint has its rows and nothing moves. */
+export const load: LayoutServerLoad = ({ request, cookies }) => {
+	const kept = cookies.get('paper-width');
+	return {
+		phone: kept ? kept === 'phone' : /\bMobile\b|Android.+Mobile|iPhone/.test(request.headers.get('user-agent') ?? '')
+	};
+};
