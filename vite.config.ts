@@ -41,6 +41,7 @@ const web: ViteUserConfig = {
 	build: { assetsInlineLimit: (path) => (path.endsWith('.woff2') ? false : undefined) },
 	test: {
 		testTimeout: 30_000,
+		hookTimeout: 60_000,
 		projects: [
 			{
 				extends: true,

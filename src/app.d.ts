@@ -7,6 +7,8 @@ declare global {
 			actor: Actor | null;
 			preferences: { units: 'ip' | 'si'; paper: 'day' | 'night' | 'system' };
 			requestId: string;
+			/** an owner who must set up two-step sign-in before anything else */
+			twoStepDue: boolean;
 		}
 		interface Error {
 			message: string;

@@ -4,6 +4,7 @@ import { readApiKey } from '$lib/server/auth/api-keys';
 import { readSession, SESSION_COOKIE } from '$lib/server/auth/sessions';
 import { now } from '$lib/server/config';
 import { sessionCookie } from '$lib/server/web/cookies';
+import { bearerOf, isForeign } from '$lib/server/web/foreign';
 import { errorResponse } from '$lib/server/web/problem';
 import { redirect, type Handle, type HandleServerError } from '@sveltejs/kit';
 import { sequence } from '@sveltejs/kit/hooks';
@@ -19,53 +20,60 @@ const OPEN = [
 	/^\/readyz$/
 ];
 const OPEN_API = [/^\/api\/openapi\.json$/, /^\/api\/?$/];
-const SAFE = new Set(['GET', 'HEAD', 'OPTIONS']);
+/** Where an owner may go who has to set up two-step sign-in first. */
+const WHILE_DUE = /^\/(account|sign-out|api\/(me|account))(\/|$)/;
+
+/** Refuses what another site's page sends in our person's name. */
+const refuseForeign: Handle = ({ event, resolve }) => {
+	if (building || !isForeign(event.request, event.url)) return resolve(event);
+	return errorResponse(new AppError('forbidden', 'This call came from another site.'));
+};
 
 /** Finds who asks, from the bearer key or the session cookie. */
 const identify: Handle = async ({ event, resolve }) => {
 	event.locals.actor = null;
 	event.locals.preferences = { units: 'ip', paper: 'system' };
 	event.locals.requestId = crypto.randomUUID();
+	event.locals.twoStepDue = false;
 	if (building) return resolve(event);
-	const bearer = /^Bearer (\S+)$/i.exec(event.request.headers.get('authorization') ?? '')?.[1];
+	const bearer = bearerOf(event.request.headers);
+	if (bearer) {
+		const found = await readApiKey(bearer, now());
+		event.locals.actor = found?.actor ?? null;
+		event.locals.preferences = found?.preferences ?? event.locals.preferences;
+		return resolve(event);
+	}
 	const token = event.cookies.get(SESSION_COOKIE);
-	const found = bearer ? await readApiKey(bearer, now()) : token ? await readSession(token, now()) : null;
-	if (found) {
+	const found = token ? await readSession(token, now()) : null;
+	if (token && found) {
 		event.locals.actor = found.actor;
 		event.locals.preferences = found.preferences;
-		if ('renewed' in found && found.renewed && token) {
-			event.cookies.set(SESSION_COOKIE, token, sessionCookie(event.url, found.renewed as Date));
-		}
+		event.locals.twoStepDue = found.twoStepDue;
+		if (found.renewed) event.cookies.set(SESSION_COOKIE, token, sessionCookie(event.url, found.renewed));
 	}
 	return resolve(event);
 };
 
-/** Pages and calls that need a person; unsafe calls by cookie must come from our own pages. */
+/** Pages and calls that need a person, and an owner's second step where the office asks for it. */
 const guard: Handle = async ({ event, resolve }) => {
 	const { pathname } = event.url;
+	const { actor } = event.locals;
+	const due = event.locals.twoStepDue && !WHILE_DUE.test(pathname);
 	if (pathname.startsWith('/api')) {
 		const open = OPEN_API.some((pattern) => pattern.test(pathname));
-		const actor = event.locals.actor;
 		if (!actor && !open)
 			return errorResponse(new AppError('unauthenticated', 'Sign in, or send an API key as a bearer token.'));
-		const foreign = actor?.via === 'session' && !SAFE.has(event.request.method) && !fromHere(event.request, event.url);
-		if (foreign) return errorResponse(new AppError('forbidden', 'This call came from another site.'));
+		if (due)
+			return errorResponse(new AppError('forbidden', 'Owners of this office need two-step sign-in: set it up first.'));
 		return resolve(event);
 	}
+	if (due && event.route.id !== null) redirect(303, '/account?due=two-step');
 	const open = pathname === '/metrics' || OPEN.some((pattern) => pattern.test(pathname));
-	if (!event.locals.actor && !open && event.route.id !== null) {
+	if (!actor && !open && event.route.id !== null) {
 		redirect(303, pathname === '/' ? '/sign-in' : `/sign-in?next=${encodeURIComponent(pathname + event.url.search)}`);
 	}
 	return resolve(event);
 };
-
-function fromHere(request: Request, url: URL): boolean {
-	const origin = request.headers.get('origin');
-	if (origin) return origin === url.origin;
-	// A server load's own fetch carries neither header; a browser always sends one of them with an unsafe call.
-	const site = request.headers.get('sec-fetch-site');
-	return site === null || site === 'same-origin';
-}
 
 /** Headers that every answer carries, and the chosen paper before the first paint. */
 const dress: Handle = async ({ event, resolve }) => {
@@ -87,7 +95,7 @@ const dress: Handle = async ({ event, resolve }) => {
 	return response;
 };
 
-export const handle = sequence(identify, guard, dress);
+export const handle = sequence(refuseForeign, identify, guard, dress);
 
 export const handleError: HandleServerError = ({ error, event, status }) => {
 	if (error instanceof AppError) return { message: error.message };

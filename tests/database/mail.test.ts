@@ -9,6 +9,7 @@ import { changeInputSchema } from '$lib/model/wire/field';
 import { visitInputSchema } from '$lib/model/wire/visit';
 import { startRecord, trippedRecord } from '../../fixtures/inference/start-record';
 import { useFreshDatabase } from './support/fresh';
+import { deliver } from './support/letters';
 import { invitedOffice, type Office } from './support/office';
 import { attachmentOf, plainText, usePost } from './support/post';
 
@@ -32,13 +33,6 @@ async function keepStarts(records: StartRecord[]): Promise<void> {
 	const { replaceStarts } = await import('$lib/server/repositories/starts');
 	const made = records.map((record) => ({ record, extras: { clues: { si: [], ip: [] }, firstMover: null } }));
 	await withOrganisation(office.organisationId, (tx) => replaceStarts(tx, office.organisationId, office.unitId, made));
-}
-
-/** Sends what waits in the outbox, as the worker's job does. */
-async function deliver(): Promise<void> {
-	const { mailsOf, sendMail } = await import('$lib/server/services/mails');
-	for (const { id, state } of await mailsOf(office.owner))
-		if (state !== 'sent') await sendMail({ organisationId: office.organisationId, mailId: id }).catch(() => undefined);
 }
 
 /** Text and page count of a PDF, read by another program (poppler). */
@@ -71,7 +65,7 @@ describe('a start-up trip that repeats', () => {
 		await keepStarts([trippedRecord(morning(3)), trippedRecord(morning(1))]);
 		await tellRepeatTrips(job());
 		await tellRepeatTrips(job());
-		await deliver();
+		await deliver(office);
 		expect(post.messages.map(({ to }) => to)).toEqual([['manager@office.test']]);
 		const raw = post.messages[0]?.raw ?? '';
 		const text = plainText(raw);
@@ -90,14 +84,14 @@ describe('a start-up trip that repeats', () => {
 		await changeSite(office.owner, office.siteId, { onCallId: office.technician.personId });
 		await keepStarts([trippedRecord(morning(5)), trippedRecord(morning(2))]);
 		await tellRepeatTrips(job());
-		await deliver();
+		await deliver(office);
 		expect(post.messages.map(({ to }) => to)).toEqual([['technician@office.test']]);
 		const token = /unsubscribe\?token=([\w-]+)/.exec(plainText(post.messages[0]?.raw ?? ''))?.[1] ?? '';
 		expect(await unsubscribe('wrong')).toBe(false);
 		expect(await unsubscribe(token)).toBe(true);
 		await keepStarts([trippedRecord(morning(6)), trippedRecord(morning(4))]);
 		await tellRepeatTrips(job());
-		await deliver();
+		await deliver(office);
 		expect(post.messages.map(({ to }) => to)).toEqual([['technician@office.test'], ['manager@office.test']]);
 	});
 
@@ -111,7 +105,7 @@ describe('a start-up trip that repeats', () => {
 			await keepStarts(records);
 			await tellRepeatTrips(job());
 		}
-		await deliver();
+		await deliver(office);
 		expect(post.messages).toEqual([]);
 	});
 });
@@ -151,7 +145,7 @@ describe('the outbox', () => {
 				because: 'a test'
 			}
 		});
-		await deliver();
+		await deliver(office);
 		expect(plainText(post.messages[0]?.raw ?? '')).toContain('token=s3cret-s3cret');
 		const { withOrganisation } = await import('$lib/server/repositories/transaction');
 		const { listMails } = await import('$lib/server/repositories/mails');
@@ -170,12 +164,12 @@ describe('the week', () => {
 		const inTenDays = new Date(Date.now() + 10 * DAY);
 		await sendDigests(new Date());
 		await sendDigests(new Date());
-		await deliver();
+		await deliver(office);
 		expect(post.messages.map(({ to }) => to.join()).sort()).toEqual(['manager@office.test', 'owner@office.test']);
 		expect(plainText(post.messages[0]?.raw ?? '')).toContain('U 1, Hall A, circuit 1: 2 start-up trips in 14 days');
 		post.messages.length = 0;
 		await sendDigests(inTenDays);
-		await deliver();
+		await deliver(office);
 		expect(plainText(post.messages[0]?.raw ?? '')).toMatch(
 			/Open for over a week, nobody planned[\s\S]*C-1, U 1, Hall A: Waits/
 		);
@@ -194,7 +188,7 @@ describe('late deliveries', () => {
 		await changeUnit(office.owner, office.unitId, { deliveryHours: 24 });
 		await tellLateLogs(new Date(Date.now() + 2 * DAY));
 		await tellLateLogs(new Date(Date.now() + 3 * DAY));
-		await deliver();
+		await deliver(office);
 		expect(post.messages.map(({ to }) => to.join()).sort()).toEqual(['engineer@office.test', 'technician@office.test']);
 		expect(plainText(post.messages[0]?.raw ?? '')).toContain('None has come yet');
 	});
@@ -223,7 +217,7 @@ describe('brief and report', () => {
 		await recordChange(office.technician, office.unitId, changeInputSchema.parse(changed));
 		await expect(sendBrief(office.technician, visit.id)).rejects.toMatchObject({ kind: 'forbidden' });
 		await sendBrief(office.manager, visit.id);
-		await deliver();
+		await deliver(office);
 		const mail = post.messages.find(({ to }) => to.includes('technician@office.test'))?.raw ?? '';
 		const calendar = attachmentOf(mail, /\.ics/)?.toString() ?? plainText(mail);
 		expect(calendar).toContain('DTSTART:20270111T044000Z');
@@ -261,7 +255,7 @@ describe('brief and report', () => {
 		});
 		post.messages.length = 0;
 		await sendReport(office.manager, visit.id, ['client@office.test'], 'si');
-		await deliver();
+		await deliver(office);
 		const sent = post.messages[0]?.raw ?? '';
 		const report = readPdf(attachmentOf(sent, /\.pdf/) ?? new Uint8Array());
 		expect(report.pages).toBe(1);

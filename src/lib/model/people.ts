@@ -2,6 +2,9 @@
 export const ROLES = ['owner', 'manager', 'engineer', 'technician', 'client'] as const;
 export type Role = (typeof ROLES)[number];
 
+/** Least length of a password, as NIST SP 800-63B asks for where it is the only factor (from memory). */
+export const LEAST_PASSWORD = 12;
+
 export const ROLE_NAMES: Readonly<Record<Role, string>> = {
 	owner: 'office owner',
 	manager: 'service manager',
@@ -70,6 +73,15 @@ export function may(actor: Actor, right: Right): boolean {
 /** May this person know of that site? */
 export function maySeeSite(actor: Actor, siteId: string): boolean {
 	return actor.siteIds === null || actor.siteIds.includes(siteId);
+}
+
+/** Of two roles the one with fewer rights. */
+export const narrowerRole = (a: Role, b: Role): Role => (ROLES.indexOf(a) < ROLES.indexOf(b) ? b : a);
+
+/** The sites that two grants share; null is every site. */
+export function sharedSites(a: readonly string[] | null, b: readonly string[] | null): readonly string[] | null {
+	if (a === null) return b;
+	return b === null ? a : a.filter((id) => b.includes(id));
 }
 
 /** What a person chose for the pages. */

@@ -3,9 +3,6 @@ import { hash, verify } from '@node-rs/argon2';
 // OWASP Password Storage Cheat Sheet, argon2id: m = 19 MiB, t = 2, p = 1. The library's default algorithm is argon2id.
 const OPTIONS = { memoryCost: 19_456, timeCost: 2, parallelism: 1 };
 
-/** Least length of a password, as NIST SP 800-63B asks for where it is the only factor (from memory). */
-export const LEAST_PASSWORD = 12;
-
 /** argon2id hash of a password, with its own salt. */
 export const hashPassword = (password: string): Promise<string> => hash(password, OPTIONS);
 

@@ -40,14 +40,14 @@ export async function beginSession(
 export async function readSession(
 	token: string,
 	now: Date
-): Promise<{ actor: Actor; preferences: Preferences; renewed: Date | null } | null> {
+): Promise<{ actor: Actor; preferences: Preferences; twoStepDue: boolean; renewed: Date | null } | null> {
 	const tokenHash = hashToken(token);
 	const found = await findSessionActor(tokenHash, now);
 	if (!found) return null;
 	const renew = now.getTime() - found.seenAt.getTime() > TOUCH_AFTER;
 	const renewed = renew ? new Date(now.getTime() + SESSION_DAYS * DAY) : null;
 	if (renewed) await touchSession(tokenHash, now, renewed);
-	return { actor: found.actor, preferences: found.preferences, renewed };
+	return { actor: found.actor, preferences: found.preferences, twoStepDue: found.twoStepDue, renewed };
 }
 
 export const endSession = (token: string): Promise<void> => deleteSession(hashToken(token));

@@ -1,7 +1,7 @@
-import type { Actor, Preferences, Role, Scope } from '$lib/model/people';
+import { narrowerRole, sharedSites, type Actor, type Preferences, type Role, type Scope } from '$lib/model/people';
 import { database } from '$lib/server/db/client';
-import { apiKeys, members, organisations, people, sessions, tokens } from '$lib/server/db/schema/identity';
-import { and, asc, count, desc, eq, gt, isNull } from 'drizzle-orm';
+import { apiKeys, members, organisations, people, sessions } from '$lib/server/db/schema/identity';
+import { and, asc, count, desc, eq, gt, isNull, lt, ne, or, sql } from 'drizzle-orm';
 
 /** People, members, sessions and keys: what is read before an organisation is known. */
 
@@ -139,21 +139,35 @@ export async function insertSession(row: typeof sessions.$inferInsert): Promise<
 	await database().insert(sessions).values(row);
 }
 
-export type SessionActor = { actor: Actor; preferences: Preferences; expiresAt: Date; seenAt: Date };
+export type SessionActor = {
+	actor: Actor;
+	preferences: Preferences;
+	expiresAt: Date;
+	seenAt: Date;
+	/** the office asks its owners for two-step sign-in, and this one has not set it up */
+	twoStepDue: boolean;
+};
 
 /** The member behind a session's token hash, while the session lives and the member has not left. */
 export async function findSessionActor(tokenHash: string, now: Date): Promise<SessionActor | null> {
 	const [row] = await database()
-		.select({ session: sessions, person: people, role: members.role, siteIds: members.siteIds })
+		.select({
+			session: sessions,
+			person: people,
+			role: members.role,
+			siteIds: members.siteIds,
+			settings: organisations.settings
+		})
 		.from(sessions)
 		.innerJoin(people, eq(people.id, sessions.personId))
+		.innerJoin(organisations, eq(organisations.id, sessions.organisationId))
 		.innerJoin(
 			members,
 			and(eq(members.personId, sessions.personId), eq(members.organisationId, sessions.organisationId))
 		)
 		.where(and(eq(sessions.tokenHash, tokenHash), gt(sessions.expiresAt, now), isNull(members.leftAt)));
 	if (!row) return null;
-	const { session, person, role, siteIds } = row;
+	const { session, person, role, siteIds, settings } = row;
 	return {
 		actor: {
 			organisationId: session.organisationId,
@@ -167,7 +181,8 @@ export async function findSessionActor(tokenHash: string, now: Date): Promise<Se
 		},
 		preferences: person.preferences,
 		expiresAt: session.expiresAt,
-		seenAt: session.seenAt
+		seenAt: session.seenAt,
+		twoStepDue: role === 'owner' && settings['requireTwoStep'] === true && !person.totpConfirmed
 	};
 }
 
@@ -201,20 +216,21 @@ export async function findKeyActor(
 	now: Date
 ): Promise<{ keyId: string; usedAt: Date | null; actor: Actor; preferences: Preferences } | null> {
 	const [row] = await database()
-		.select({ key: apiKeys, person: people, memberRole: members.role })
+		.select({ key: apiKeys, person: people, member: { role: members.role, siteIds: members.siteIds } })
 		.from(apiKeys)
 		.innerJoin(people, eq(people.id, apiKeys.personId))
 		.innerJoin(members, and(eq(members.personId, apiKeys.personId), eq(members.organisationId, apiKeys.organisationId)))
 		.where(and(eq(apiKeys.keyHash, keyHash), isNull(apiKeys.revokedAt), isNull(members.leftAt)));
 	if (!row || (row.key.expiresAt && row.key.expiresAt <= now)) return null;
-	const { key, person } = row;
+	const { key, person, member } = row;
 	const actor: Actor = {
 		organisationId: key.organisationId,
 		personId: person.id,
 		name: person.name,
 		email: person.email,
-		role: key.role,
-		siteIds: key.siteIds,
+		// A key never does more than its member may now, whatever they might when it was made.
+		role: narrowerRole(key.role, member.role),
+		siteIds: sharedSites(key.siteIds, member.siteIds),
 		via: 'key',
 		scopes: key.scopes as Scope[]
 	};
@@ -244,24 +260,62 @@ export async function revokeApiKey(organisationId: string, id: string, at: Date)
 	return rows.length > 0;
 }
 
-export type TokenRow = typeof tokens.$inferSelect;
-
-/** Keeps a single-use token's hash. */
-export async function insertToken(row: typeof tokens.$inferInsert): Promise<void> {
-	await database().insert(tokens).values(row);
+/** Uses a time step of the second step up: true for the one call that does. */
+export async function takeTotpStep(id: string, step: number): Promise<boolean> {
+	const rows = await database()
+		.update(people)
+		.set({ totpLastStep: step })
+		.where(and(eq(people.id, id), or(isNull(people.totpLastStep), lt(people.totpLastStep, step))))
+		.returning({ id: people.id });
+	return rows.length > 0;
 }
 
-/** A token that is unused and has not expired. */
-export async function findToken(tokenHash: string, kind: TokenRow['kind'], now: Date): Promise<TokenRow | null> {
-	const [row] = await database()
-		.select()
-		.from(tokens)
-		.where(
-			and(eq(tokens.tokenHash, tokenHash), eq(tokens.kind, kind), isNull(tokens.usedAt), gt(tokens.expiresAt, now))
-		);
+/** Uses a recovery code up by its hash: true for the one call that does. */
+export async function takeRecoveryHash(id: string, hash: string): Promise<boolean> {
+	const rows = await database()
+		.update(people)
+		.set({ recoveryHashes: sql`${people.recoveryHashes} - ${hash}::text` })
+		.where(and(eq(people.id, id), sql`jsonb_exists(${people.recoveryHashes}, ${hash})`))
+		.returning({ id: people.id });
+	return rows.length > 0;
+}
+
+export async function findPersonBySubject(subject: string): Promise<PersonRow | null> {
+	const [row] = await database().select().from(people).where(eq(people.oidcSubject, subject));
 	return row ?? null;
 }
 
-export async function markTokenUsed(tokenHash: string, at: Date): Promise<void> {
-	await database().update(tokens).set({ usedAt: at }).where(eq(tokens.tokenHash, tokenHash));
+/** Ends a person's sessions but one. */
+export async function deleteOtherSessions(personId: string, keep: string | null): Promise<void> {
+	await database()
+		.delete(sessions)
+		.where(and(eq(sessions.personId, personId), keep === null ? undefined : ne(sessions.tokenHash, keep)));
+}
+
+/** Ends a person's sessions and keys in one office: they left. */
+export async function endAccess(organisationId: string, personId: string, at: Date): Promise<void> {
+	await database()
+		.delete(sessions)
+		.where(and(eq(sessions.personId, personId), eq(sessions.organisationId, organisationId)));
+	await database()
+		.update(apiKeys)
+		.set({ revokedAt: at })
+		.where(and(eq(apiKeys.personId, personId), eq(apiKeys.organisationId, organisationId), isNull(apiKeys.revokedAt)));
+}
+
+export async function renameOrganisation(id: string, name: string): Promise<void> {
+	await database().update(organisations).set({ name }).where(eq(organisations.id, id));
+}
+
+/** Takes an office away with everything in it; people who belong to no other office go too. */
+export async function deleteOrganisation(id: string): Promise<void> {
+	await database().transaction(async (tx) => {
+		await tx.execute(sql`select set_config('app.organisation', ${id}, true)`);
+		const gone = await tx.select({ personId: members.personId }).from(members).where(eq(members.organisationId, id));
+		await tx.delete(organisations).where(eq(organisations.id, id));
+		for (const { personId } of gone) {
+			const [other] = await tx.select({ id: members.personId }).from(members).where(eq(members.personId, personId));
+			if (!other) await tx.delete(people).where(eq(people.id, personId));
+		}
+	});
 }

@@ -1,7 +1,9 @@
 import { AppError } from '$lib/model/errors';
 import { hashToken, randomToken } from '$lib/server/auth/tokens';
 import { config, now } from '$lib/server/config';
-import { countOrganisations, findToken, insertToken, markTokenUsed } from '$lib/server/repositories/identity';
+import { countOrganisations } from '$lib/server/repositories/identity';
+import { findToken, insertToken, useToken } from '$lib/server/repositories/tokens';
+import { passwordSchema } from '$lib/model/wire/entry';
 import { z } from 'zod';
 import { foundOrganisation } from './people';
 
@@ -37,7 +39,7 @@ const form = z.object({
 	office: z.string().min(1, 'Give the office a name.').max(120),
 	name: z.string().min(1, 'Give your name.').max(120),
 	email: z.email('This is no e-mail address.'),
-	password: z.string()
+	password: passwordSchema
 });
 
 /** Makes the organisation and its owner with the code. @throws AppError `invalid` that names the field */
@@ -52,10 +54,9 @@ export async function foundWithCode(input: z.input<typeof form>): Promise<void> 
 	if (!(await isFirstRun())) throw new AppError('conflict', 'There is an organisation already. Sign in.');
 	const { code, office, ...owner } = parsed.data;
 	const token = await findToken(hashToken(code), 'first-owner', now());
-	if (!token)
+	if (!token || !(await useToken(token.tokenHash, now())))
 		throw new AppError('invalid', 'This code is wrong or has expired. Start again for a new one.', {
 			errors: [{ field: 'code', message: 'wrong' }]
 		});
 	await foundOrganisation(office, owner);
-	await markTokenUsed(token.tokenHash, now());
 }

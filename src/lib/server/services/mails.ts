@@ -6,14 +6,7 @@ import { hashToken, randomToken } from '$lib/server/auth/tokens';
 import { config, now } from '$lib/server/config';
 import { enqueueMail } from '$lib/server/jobs/queue';
 import { mailer } from '$lib/server/mail';
-import {
-	findPerson,
-	findToken,
-	insertToken,
-	listMembers,
-	listOrganisations,
-	updatePerson
-} from '$lib/server/repositories/identity';
+import { findPerson, listMembers, listOrganisations, updatePerson } from '$lib/server/repositories/identity';
 import {
 	findMail,
 	insertMail,
@@ -23,6 +16,7 @@ import {
 	updateMail,
 	type MailRow
 } from '$lib/server/repositories/mails';
+import { findToken, insertToken } from '$lib/server/repositories/tokens';
 import { withOrganisation } from '$lib/server/repositories/transaction';
 import { objectStore, readObject } from '$lib/server/store';
 import { randomUUID } from 'node:crypto';
@@ -101,7 +95,8 @@ export async function queueLetter(organisationId: string, letter: Letter): Promi
 
 /** A link that signs in or lets in is for its receiver alone, not for who reads the outbox. */
 const SECRET: ReadonlySet<string> = new Set(['invitation', 'reset', 'email-change']);
-const withoutToken = (text: string): string => text.replaceAll(/([?&]token=)[\w-]+/g, '$1…');
+/** The same text with the secret of every link taken out. */
+export const withoutToken = (text: string): string => text.replaceAll(/([?&]token=)[\w-]+/g, '$1…');
 
 const LINK = /Stop these messages: (\S+)/;
 

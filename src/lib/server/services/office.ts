@@ -1,7 +1,7 @@
 import { may, ROLE_NAMES, type Actor } from '$lib/model/people';
 import { demand } from '$lib/server/auth/guard';
 import { listAudit } from '$lib/server/repositories/audit';
-import { listMembers, listSessions } from '$lib/server/repositories/identity';
+import { listMembers } from '$lib/server/repositories/identity';
 import { listMails } from '$lib/server/repositories/mails';
 import { listSites } from '$lib/server/repositories/plant';
 import { withOrganisation } from '$lib/server/repositories/transaction';
@@ -53,15 +53,4 @@ export async function officeOf(actor: Actor) {
 			subjectId
 		}))
 	};
-}
-
-/** A person's own sessions, newest use first. */
-export async function sessionsOf(actor: Actor) {
-	const rows = await listSessions(actor.personId);
-	return rows.map(({ createdAt, seenAt, expiresAt, userAgent }) => ({
-		createdAt: createdAt.toISOString(),
-		seenAt: seenAt.toISOString(),
-		expiresAt: expiresAt.toISOString(),
-		browser: userAgent ?? 'a program'
-	}));
 }

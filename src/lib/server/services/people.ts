@@ -1,7 +1,7 @@
 import { AppError } from '$lib/model/errors';
-import type { Actor, Preferences, Role } from '$lib/model/people';
+import { LEAST_PASSWORD, type Actor, type Preferences, type Role } from '$lib/model/people';
 import { demand } from '$lib/server/auth/guard';
-import { hashPassword, LEAST_PASSWORD, passwordFits } from '$lib/server/auth/passwords';
+import { hashPassword, passwordFits } from '$lib/server/auth/passwords';
 import { countSignIn, forgiveSignIn } from '$lib/server/auth/rate-limits';
 import { beginSession } from '$lib/server/auth/sessions';
 import { now } from '$lib/server/config';
@@ -15,26 +15,36 @@ import {
 	membershipsOf,
 	savePreferences
 } from '$lib/server/repositories/identity';
+import { takeSecondStep } from './two-step';
 
 export type SignedIn = { token: string; expiresAt: Date };
 
 /**
- * Signs a person in with address and password.
- * @throws AppError `unauthenticated` (which of the two is wrong is not said), `too-many`
+ * Signs a person in with address and password, and with the code of the second step where it is on.
+ * @throws AppError `unauthenticated` (which of the two is wrong is not said; field `code` when only that is), `too-many`
  */
 export async function signIn(
 	email: string,
 	password: string,
 	sender: string,
-	userAgent: string | null
+	userAgent: string | null,
+	code = ''
 ): Promise<SignedIn> {
 	await countSignIn(email, sender);
 	const person = await findPersonByEmail(email);
 	const fits = await passwordFits(person?.passwordHash ?? null, password);
 	const member = person && fits ? (await membershipsOf(person.id))[0] : undefined;
 	if (!person || !member) throw new AppError('unauthenticated', 'This address and password do not go together.');
+	await takeSecondStep(person, code);
 	await forgiveSignIn(email, sender);
 	return beginSession(person.id, member.organisationId, userAgent, now());
+}
+
+/** @throws AppError `invalid` with the field `password` when it is too short */
+export function demandLength(password: string): void {
+	if (password.length >= LEAST_PASSWORD) return;
+	const message = `${LEAST_PASSWORD} characters at least`;
+	throw new AppError('invalid', `A password has ${message}.`, { errors: [{ field: 'password', message }] });
 }
 
 /** Adds a person (or finds the one with this address) as a member. @throws AppError `invalid` for a short password */
@@ -42,11 +52,7 @@ export async function addMember(
 	organisationId: string,
 	member: { email: string; name: string; password: string | null; role: Role; siteIds: string[] | null }
 ): Promise<string> {
-	if (member.password !== null && member.password.length < LEAST_PASSWORD) {
-		throw new AppError('invalid', `A password has ${LEAST_PASSWORD} characters at least.`, {
-			errors: [{ field: 'password', message: 'too short' }]
-		});
-	}
+	if (member.password !== null) demandLength(member.password);
 	const known = await findPersonByEmail(member.email);
 	const person =
 		known ??
@@ -64,11 +70,7 @@ export async function foundOrganisation(
 	name: string,
 	owner: { email: string; name: string; password: string }
 ): Promise<{ organisationId: string; ownerId: string }> {
-	if (owner.password.length < LEAST_PASSWORD) {
-		throw new AppError('invalid', `A password has ${LEAST_PASSWORD} characters at least.`, {
-			errors: [{ field: 'password', message: 'too short' }]
-		});
-	}
+	demandLength(owner.password);
 	const organisationId = await insertOrganisation(name);
 	const ownerId = await addMember(organisationId, { ...owner, role: 'owner', siteIds: null });
 	return { organisationId, ownerId };
