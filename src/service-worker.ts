@@ -45,6 +45,7 @@ function isKept(url: URL): boolean {
 		)
 	)
 		return false;
+	if (/^\/api\/(account|audit|invitations|jobs|keys|mails|members|office|search)\b/.test(url.pathname)) return false;
 	if (!url.pathname.startsWith('/api/')) return true;
 	return !/\/(progress|original|export)$/.test(url.pathname);
 }
@@ -101,7 +102,8 @@ worker.addEventListener('fetch', (event) => {
 	const { request } = event;
 	const url = new URL(request.url);
 	if (url.origin !== worker.location.origin) return;
-	if (request.method === 'POST' && /^\/sign-(in|out)/.test(url.pathname)) {
+	const entry = request.method === 'POST' && /^\/sign-(in|out)/.test(url.pathname);
+	if (entry || url.pathname === '/sign-in/callback') {
 		// Another person must not find what the last one saw.
 		event.waitUntil(caches.delete(SEEN));
 		return;
