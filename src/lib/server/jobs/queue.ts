@@ -90,6 +90,11 @@ export async function scheduleJobs(): Promise<void> {
 	await boss.schedule(JOBS.deliveries, '*/15 * * * *', {}, { tz: 'UTC' });
 }
 
+/** Tries a failed job once more. */
+export async function retryJob(name: string, id: string): Promise<void> {
+	await (await queue()).retry(name, id);
+}
+
 /** Lets go of the queue. */
 export async function closeQueue(): Promise<void> {
 	const boss = await opened;

@@ -33,6 +33,16 @@ export function listChecks(tx: Tx, unitId: string): Promise<CheckRow[]> {
 	return tx.select().from(checks).where(eq(checks.unitId, unitId)).orderBy(asc(checks.at));
 }
 
+/** Checks of some units, newest first. */
+export function listChecksOfUnits(tx: Tx, unitIds: readonly string[]): Promise<CheckRow[]> {
+	if (unitIds.length === 0) return Promise.resolve([]);
+	return tx
+		.select()
+		.from(checks)
+		.where(inArray(checks.unitId, [...unitIds]))
+		.orderBy(desc(checks.at));
+}
+
 export async function findCheck(tx: Tx, id: string): Promise<CheckRow | null> {
 	const [row] = await tx.select().from(checks).where(eq(checks.id, id));
 	return row ?? null;
@@ -73,6 +83,16 @@ export function listSignedSuspects(tx: Tx, unitIds: readonly string[]) {
 
 export function listChanges(tx: Tx, unitId: string): Promise<ChangeRow[]> {
 	return tx.select().from(changes).where(eq(changes.unitId, unitId)).orderBy(asc(changes.at));
+}
+
+/** Changes of some units, newest first. */
+export function listChangesOfUnits(tx: Tx, unitIds: readonly string[]): Promise<ChangeRow[]> {
+	if (unitIds.length === 0) return Promise.resolve([]);
+	return tx
+		.select()
+		.from(changes)
+		.where(inArray(changes.unitId, [...unitIds]))
+		.orderBy(desc(changes.at));
 }
 
 export async function insertChange(
