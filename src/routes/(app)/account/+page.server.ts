@@ -1,5 +1,8 @@
-import { sessionsOf } from '$lib/server/services/office';
+import { SESSION_COOKIE } from '$lib/server/auth/sessions';
+import { accountOf } from '$lib/server/services/account';
 import { actorOf } from '$lib/server/web/endpoint';
-import type { PageServerLoad } from './$types';
 
-export const load: PageServerLoad = async (event) => ({ sessions: await sessionsOf(actorOf(event)) });
+export const load = async (event) => ({
+	account: await accountOf(actorOf(event), event.cookies.get(SESSION_COOKIE) ?? null),
+	twoStepDue: event.locals.twoStepDue
+});
