@@ -2,10 +2,12 @@ import type { ChangeFact, FieldCheckFact } from '$lib/model/checks';
 import type { CircuitInput } from '$lib/model/circuit-input';
 import type { FigureKey, StartRecord } from '$lib/model/start';
 import { limitAt, type LimitKey, type UnitNature } from '$lib/model/unit';
-import { saturationTemperature } from '../refrigerants/saturation';
+import type { Series } from '$lib/model/series';
+import { saturationPressure, saturationTemperature } from '../refrigerants/saturation';
 import { saturationsOf } from '../series/derived';
 import { median } from '../statistics/median';
 import { medianAbsoluteDeviation } from '../statistics/median-absolute-deviation';
+import { freezePoint } from '../water/properties';
 import { type Words, wordsFor } from '../wording/quantity-words';
 import { FIGURE_SIGNALS, stuckFinder } from './stuck-signals';
 import { speaksAbout, isTellingTrip, presentStarts, type SuspectEvidence } from './evidence';
@@ -115,6 +117,17 @@ function withSaturations(input: CircuitInput): CircuitInput['series'] {
 	};
 }
 
+/** Pressures worked out from logged saturations where the log has no pressures: for differences of pressure only. */
+function pressuresOf(input: CircuitInput): Partial<Record<'evapPressure' | 'condPressure', Series>> {
+	const from = (pressure: Series | undefined, saturation: Series | undefined): Series | undefined => {
+		if (pressure?.t.length || !saturation?.t.length) return undefined;
+		return { ...saturation, v: saturation.v.map((value) => saturationPressure(input.refrigerant, value) ?? NaN) };
+	};
+	const { evapPressure, evapSaturation, condPressure, condSaturation } = input.series;
+	const [evap, cond] = [from(evapPressure, evapSaturation), from(condPressure, condSaturation)];
+	return { ...(evap ? { evapPressure: evap } : {}), ...(cond ? { condPressure: cond } : {}) };
+}
+
 function fullLoad(value: number | null, capacity: number | null): number | null {
 	if (value === null || capacity === null) return value;
 	return capacity < 35 ? null : value / (Math.min(100, capacity) / 100);
@@ -128,7 +141,7 @@ export function contextOf(
 	held: StartRecord[]
 ): Context {
 	const { input } = evidence;
-	const reader = traceReader(withSaturations(input));
+	const reader = traceReader(withSaturations(input), pressuresOf(input));
 	const lastStart = starts.at(-1)?.startedAt ?? Infinity;
 	const beside = held.slice(-HELD_BESIDE);
 	const stuck = stuckFinder(reader);
@@ -177,14 +190,32 @@ export function contextOf(
 	};
 }
 
+/** A stop whose kind nobody recorded says nothing of the low side unless saturation was low, K over its cut-out [ours]. */
+const LOW_BY = 3;
+
+const isUntold = (start: StartRecord) => (start.trip?.kind ?? 'unknown') === 'unknown';
+
+function wentLow(start: StartRecord, context: Context): boolean {
+	const least = start.figures.minEvapSaturation;
+	if (least === null) return true;
+	const held = median(context.held.map((one) => one.figures.minEvapSaturation ?? NaN));
+	const freezes = freezePoint(context.nature.evapFluid ?? undefined);
+	return least <= (context.limit('evapSaturationCutout') ?? freezes) + LOW_BY || (held !== null && least < held - 1.5);
+}
+
 /** The same context with only the trips that speak about one side of the machine. */
 export function sideContext(evidence: SuspectEvidence, context: Context, side: 'low-side' | 'head'): Context {
-	const bad = context.bad.filter((start) => speaksAbout(start, side));
+	const bad = context.bad.filter(
+		(start) => speaksAbout(start, side) && (side === 'head' || !isUntold(start) || wentLow(start, context))
+	);
 	return bad.length === context.bad.length ? context : contextOf(evidence, context.starts, bad, context.held);
 }
 
 /** Without a single trip, two stops or more that the log cannot explain within this many seconds are looked at. */
 const UNCLEAR_WITHIN = 1200;
+
+/** Start-up trips tell more than later ones; when they are fewer than this share, all trips are looked at [ours]. */
+const START_UP_SHARE = 1 / 3;
 
 /** The context of a whole period: its tripped starts beside its held ones. */
 export function periodContext(evidence: SuspectEvidence): Context {
@@ -193,6 +224,7 @@ export function periodContext(evidence: SuspectEvidence): Context {
 	const startUp = tripped.filter((start) => start.startupTrip);
 	const unclear = starts.filter((start) => start.outcome === 'unclear' && runSeconds(start) < UNCLEAR_WITHIN);
 	const held = starts.filter((start) => start.outcome === 'held');
-	const bad = startUp.length > 0 ? startUp : tripped.length > 0 ? tripped : unclear.length > 1 ? unclear : [];
+	const tell = startUp.length >= START_UP_SHARE * tripped.length ? startUp : tripped;
+	const bad = tell.length > 0 ? tell : unclear.length > 1 ? unclear : [];
 	return contextOf(evidence, starts, bad, held);
 }

@@ -85,19 +85,28 @@ function lastValue(series: Series | undefined, at: number, withinMs: number): nu
  * Reads traces of one circuit over windows. Differences are taken between medians of the same window, so that two
  * columns logged at other instants need no interpolation (which method.md forbids).
  * @param series the circuit's series, saturations already worked out where the log has only pressures
+ * @param pressures pressures worked out from saturations, read in differences of pressure where none is logged
  */
-export function traceReader(series: CircuitInput['series']): TraceReader {
+export function traceReader(
+	series: CircuitInput['series'],
+	pressures: Partial<Record<SignalKey, Series>> = {}
+): TraceReader {
 	const partsOf = (trace: Readable) => (trace in PARTS ? PARTS[trace as keyof typeof PARTS] : null);
 	const signals = (trace: Readable): SeriesId[] => {
 		const parts = partsOf(trace);
 		return parts ? [parts.a, parts.b] : [trace as SeriesId];
 	};
+	const partOf = (trace: Readable, id: SeriesId): Series | undefined => {
+		const logged = series[id];
+		if (logged?.t.length || partsOf(trace) === null) return logged;
+		return pressures[signalOf(id)];
+	};
 	const lacking = (trace: Readable) =>
 		signals(trace)
-			.filter((id) => (series[id]?.t.length ?? 0) === 0)
+			.filter((id) => (partOf(trace, id)?.t.length ?? 0) === 0)
 			.map(signalOf);
-	const both = (trace: Readable, read: (id: SeriesId) => number | null): number | null => {
-		const [a, b] = signals(trace).map(read);
+	const both = (trace: Readable, read: (part: Series | undefined) => number | null): number | null => {
+		const [a, b] = signals(trace).map((id) => read(partOf(trace, id)));
 		if (a === undefined || a === null) return null;
 		if (partsOf(trace) === null) return a;
 		return b === undefined || b === null ? null : a - b;
@@ -107,7 +116,7 @@ export function traceReader(series: CircuitInput['series']): TraceReader {
 		lacking,
 		series: (id) => series[id],
 		values: (id, from, to) => windowValues(series[id], from, to),
-		median: (trace, from, to) => both(trace, (id) => median(windowValues(series[id], from, to))),
-		last: (trace, at, withinMs) => both(trace, (id) => lastValue(series[id], at, withinMs))
+		median: (trace, from, to) => both(trace, (part) => median(windowValues(part, from, to))),
+		last: (trace, at, withinMs) => both(trace, (part) => lastValue(part, at, withinMs))
 	};
 }

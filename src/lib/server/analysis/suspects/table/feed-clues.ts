@@ -56,6 +56,9 @@ export const superheatLow = (weight: number): ClueRule =>
 const loaded = (starts: readonly StartRecord[]): StartRecord[] =>
 	starts.filter((start) => start.figures.settledCapacity === null || start.figures.settledCapacity >= 45);
 
+/** Seconds from the start before which the condenser's liquid says nothing of the charge [ours]. */
+const SUBCOOLS_FROM = 120;
+
 /** Subcooling says on which side of the valve the liquid is missing. */
 export const subcooling = (
 	key: string,
@@ -71,10 +74,11 @@ export const subcooling = (
 	needs: ['subcooling'],
 	read: (context) => {
 		const settled = context.figure('settledSubcooling', loaded(recent(context, 'settledSubcooling')));
-		const reading = settled ?? context.tripMinute('subcooling');
+		const reading = settled ?? context.tripMinute('subcooling', SUBCOOLS_FROM);
 		if (!reading) return null;
 		return {
-			strength: ramp(reading.value, ...ends),
+			// Before a run settles the condenser is still filling: it counts half.
+			strength: ramp(reading.value, ...ends) * (settled ? 1 : 0.5),
 			sentence: `Subcooling ${context.words.difference(reading.value)} ${settled ? 'in settled runs' : 'in the trip minute'}, median of ${countWords(reading.starts.length, 'start')}.`,
 			figures: { subcooling: reading.value },
 			starts: reading.starts.slice(-8),

@@ -267,6 +267,15 @@ export const starterOrSupply: SuspectRow = {
 	}
 };
 
+/** How far evaporator saturation fell over the last spacing of a run, K; 0 where it rose or cannot be read. */
+function fallAtStop(context: Context, start: StartRecord): number {
+	const stop = start.endedAt ?? start.startedAt;
+	const step = 1000 * start.spacingSeconds;
+	const last = context.reader.last('evapSaturation', stop - 1, 2 * step);
+	const before = context.reader.last('evapSaturation', stop - 1 - step, 2 * step);
+	return last === null || before === null ? 0 : Math.max(0, before - last);
+}
+
 export const limitsOrSetup: SuspectRow = {
 	key: 'limits-or-setup',
 	family: 'plant',
@@ -280,15 +289,16 @@ export const limitsOrSetup: SuspectRow = {
 			needs: ['evapSaturation'],
 			read: (context) => {
 				const cutout = context.limit('evapSaturationCutout');
-				const trips = tripsOfKind(context, 'low-evaporator-saturation', 'low-suction-pressure');
+				// Only what the controller itself recorded: an inferred trip is told by the limit on record.
+				const trips = tripsOfKind(context, 'low-evaporator-saturation', 'low-suction-pressure').filter(
+					(start) => start.trip?.basis === 'recorded'
+				);
 				const least = median(trips.map((start) => start.figures.minEvapSaturation ?? NaN));
 				if (cutout === null || least === null) return SILENT;
-				const fall = median(trips.map((start) => start.figures.steepestFall ?? NaN)) ?? 0;
-				const spacing = median(trips.map((start) => start.spacingSeconds)) ?? 0;
-				// What the spacing can hide: one more spacing of the steepest fall seen.
-				const hidden = (Math.abs(fall) * spacing) / 60;
+				// What the spacing can hide: one spacing and a half of the fall at the stop.
+				const hidden = median(trips.map((start) => 1.5 * fallAtStop(context, start))) ?? 0;
 				return {
-					strength: ramp(least - cutout - 1.5 * hidden, 1.2, 3),
+					strength: ramp(least - cutout - Math.max(0, hidden), 1.2, 2.4) * ramp(trips.length, 1, 3),
 					sentence: `Trips came with saturation no lower than ${context.words.temperature(least)}; the cut-out on record is ${context.words.temperature(cutout)}.`,
 					figures: { least, cutout },
 					starts: trips.slice(-5),

@@ -2,7 +2,7 @@ import { median } from '../../statistics/median';
 import { countWords } from '../../wording/quantity-words';
 import { cautionsFor } from '../cautions';
 import { besideClue, figureClue, telling } from '../clue-builders';
-import { always, type ClueRule, SILENT, type SuspectRow } from '../clue-rule';
+import { always, type ClueRule, natureIs, SILENT, type SuspectRow } from '../clue-rule';
 import type { Context } from '../context';
 import { oilOverAmbient } from '../rest-readings';
 import { ramp } from '../strength';
@@ -31,6 +31,8 @@ export const refrigerantMigration: SuspectRow = {
 			key: 'wet-discharge',
 			weight: 0.5,
 			discriminates: true,
+			// A sound centrifugal's discharge is hardly warmer than its saturation.
+			applies: natureIs('compressor', 'screw', 'scroll', 'reciprocating'),
 			what: 'Discharge superheat',
 			quantity: 'temperatureDifference',
 			trace: 'dischargeSuperheat',
@@ -120,14 +122,15 @@ export const oilHeater: SuspectRow = {
 			key: 'oil-decays-to-ambient',
 			readAt: 'rest',
 			direction: 'for',
-			weight: 0.55,
+			weight: 0.7,
 			discriminates: true,
 			needs: ['oilTemp'],
 			read: (context) => {
 				const rest = oilOverAmbient(context);
 				if (!rest) return null;
 				return {
-					strength: ramp(rest.value, 7, 2.5),
+					// A heater that works keeps oil well over 10 K warm: common practice, no source. One rest may follow work on it.
+					strength: ramp(rest.value, 7, 3.5) * ramp(rest.rests.length, 0, 3),
 					sentence: `After rests of 6 h and more the oil stood only ${context.words.difference(rest.value)} over its surroundings, over ${countWords(rest.rests.length, 'rest')}.`,
 					figures: { oilOverAmbient: rest.value },
 					starts: rest.rests.slice(-5),
