@@ -4,7 +4,8 @@ import type { StartRecord } from '$lib/model/start';
 import { limitAt } from '$lib/model/unit';
 import { prepareCircuit, type Circuit } from './circuit';
 import { readFigures, type FigureSheet } from './figures/read-figures';
-import { markPinnedCurrent } from './figures/pinned-current';
+import { markPinnedQuantity } from './figures/pinned-quantity';
+import { markSameLevel } from './figures/same-level';
 import type { FigureContext } from './figures/sheet';
 import { stageOf } from './figures/stages';
 import { activationsOf, namesAnother, type Activation } from './outcomes/activations';
@@ -54,7 +55,8 @@ export function analyseCircuit(input: CircuitInput): CircuitAnalysis {
 		}
 		return { ...plain, ...episode, ...readFigures(context, brackets, stage) };
 	});
-	markPinnedCurrent(circuit, starts);
+	markSameLevel(circuit, starts);
+	markPinnedQuantity(circuit, starts);
 	return {
 		circuit: input.circuit,
 		starts,

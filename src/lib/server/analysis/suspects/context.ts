@@ -191,16 +191,20 @@ export function contextOf(
 }
 
 /** A stop whose kind nobody recorded says nothing of the low side unless saturation was low, K over its cut-out [ours]. */
-const LOW_BY = 3;
+const LOW_BY = 4;
 
 const isUntold = (start: StartRecord) => (start.trip?.kind ?? 'unknown') === 'unknown';
 
 function wentLow(start: StartRecord, context: Context): boolean {
-	const least = start.figures.minEvapSaturation;
-	if (least === null) return true;
-	const held = median(context.held.map((one) => one.figures.minEvapSaturation ?? NaN));
+	const stop = start.endedAt ?? start.startedAt;
+	const readings = context.reader.values(
+		'evapSaturation',
+		stop - Math.max(60, 2.2 * start.spacingSeconds) * 1000,
+		stop
+	);
+	if (readings.length === 0) return true;
 	const freezes = freezePoint(context.nature.evapFluid ?? undefined);
-	return least <= (context.limit('evapSaturationCutout') ?? freezes) + LOW_BY || (held !== null && least < held - 1.5);
+	return Math.min(...readings) <= (context.limit('evapSaturationCutout') ?? freezes) + LOW_BY;
 }
 
 /** The same context with only the trips that speak about one side of the machine. */

@@ -76,19 +76,29 @@ function restingSaturation(context: Context, source: 'logged' | 'pressure', from
 	return pressure === null ? null : saturationTemperature(context.input.refrigerant, pressure);
 }
 
-/** Suction minus evaporator saturation before starts after 20 min of rest or more; null under three such rests. */
-export function suctionOffset(context: Context): { value: number; spread: number } | null {
-	const values: number[] = [];
+/**
+ * Suction minus evaporator saturation at rests of 1 h or more, 15 to 8 min before the start (pumps may start after that)
+ * while saturation stands still; `air` is the outdoor reading minus saturation, null where none is logged. Null under
+ * three such rests.
+ */
+export function suctionOffset(context: Context): { value: number; spread: number; air: number | null } | null {
+	const found = { offsets: [] as number[], airs: [] as number[] };
 	for (const start of context.starts) {
-		if ((start.restSeconds ?? 0) < REST_SECONDS) continue;
-		const value = context.reader.median('superheat', start.startedAt - 2 * MINUTE, start.startedAt - 1);
-		if (value !== null) values.push(value);
+		if ((start.restSeconds ?? 0) < 3600) continue;
+		const [from, to] = [start.startedAt - 15 * MINUTE, start.startedAt - 8 * MINUTE];
+		const value = context.reader.median('superheat', from, to);
+		if (value === null || !flat(context, 'evapSaturation', from, to)) continue;
+		found.offsets.push(value);
+		const air = context.reader.median('outdoorTemp', from, to);
+		const saturation = context.reader.median('evapSaturation', from, to);
+		if (air !== null && saturation !== null) found.airs.push(air - saturation);
 	}
-	const value = median(values);
-	return value === null || values.length < 3 ? null : { value, spread: medianAbsoluteDeviation(values) ?? 0 };
+	const value = median(found.offsets);
+	if (value === null || found.offsets.length < 3) return null;
+	return { value, spread: medianAbsoluteDeviation(found.offsets) ?? 0, air: median(found.airs) };
 }
 
-/** Oil temperature over the ambient (outdoor, else the resting evaporator) at the end of rests of 6 h or more. */
+/** Oil temperature over the ambient (the resting evaporator, else outdoor) at the end of rests of 6 h or more. */
 export function oilOverAmbient(context: Context): { value: number; rests: StartRecord[] } | null {
 	const found: { start: StartRecord; value: number }[] = [];
 	for (const start of context.starts) {

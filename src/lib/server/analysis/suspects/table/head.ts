@@ -7,7 +7,7 @@ import { besideClue } from '../clue-builders';
 import { always, type ClueRule, SILENT, type SuspectRow } from '../clue-rule';
 import type { Context } from '../context';
 import { ramp } from '../strength';
-import { kindShare, tripsOfKind } from './shared';
+import { differenceStops, oilPressureLost } from './shared';
 
 /** What cools the condenser at the start: its water, else outdoor air. */
 export function coolingAtStart(start: StartRecord): number | null {
@@ -137,6 +137,7 @@ export const coldCondenserWater: SuspectRow = {
 			}
 		}
 	],
+	explainedBy: [{ key: 'refrigerant-migration', share: 0.4 }],
 	trips: 'head',
 	check: {
 		key: 'condenser-water-control',
@@ -160,8 +161,8 @@ export const lowPressureDifference: SuspectRow = {
 			discriminates: true,
 			needs: ['systemDelta'],
 			read: (context) => {
-				const share = kindShare(context, 'low-pressure-difference', 'oil-flow');
-				const trips = tripsOfKind(context, 'low-pressure-difference', 'oil-flow');
+				const trips = differenceStops(context);
+				const share = context.bad.length === 0 ? 0 : trips.length / context.bad.length;
 				const last = median(
 					trips.map((start) => context.reader.last('systemDelta', (start.endedAt ?? 0) - 500, 90_000) ?? NaN)
 				);
@@ -169,7 +170,7 @@ export const lowPressureDifference: SuspectRow = {
 				if (last === null) return null;
 				return {
 					strength: ramp(share, 0.2, 0.6) * ramp(last, 220, 120),
-					sentence: `${countWords(trips.length, 'oil or difference trip')} with only ${context.words.pressureDifference(last)} between condenser and evaporator.`,
+					sentence: `${countWords(trips.length, 'oil or difference stop')} with only ${context.words.pressureDifference(last)} between condenser and evaporator.`,
 					figures: { systemDelta: last, trips: trips.length },
 					starts: trips.slice(-5),
 					show: { signals: ['condPressure', 'evapPressure', 'oilPressure'], from: 0, to: 300 }
@@ -177,14 +178,15 @@ export const lowPressureDifference: SuspectRow = {
 			}
 		},
 		differenceLate(0.15, false),
+		oilPressureLost('against', 0.5),
 		{
 			key: 'difference-is-no-protection-here',
 			direction: 'against',
 			weight: 0.5,
 			needs: [],
 			read: (context) => {
-				const share = kindShare(context, 'low-pressure-difference', 'oil-flow');
 				if (context.bad.length === 0) return SILENT;
+				const share = differenceStops(context).length / context.bad.length;
 				return {
 					strength: ramp(share, 0.2, 0),
 					sentence: 'No oil or difference protection stopped it.',

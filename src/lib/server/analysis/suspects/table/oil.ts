@@ -1,10 +1,11 @@
 import type { FieldCheckFact } from '$lib/model/checks';
 import { cautionsFor } from '../cautions';
-import { besideClue, checkClue, driftClue, figureClue, recent, telling } from '../clue-builders';
+import { besideClue, checkClue, driftClue, figureClue, growthOf, recent, telling } from '../clue-builders';
 import { always, type ClueRule, natureIs, SILENT, type SuspectRow } from '../clue-rule';
+import type { Context } from '../context';
 import { plateau, ramp } from '../strength';
 import { countWords } from '../../wording/quantity-words';
-import { capacityRuns, latestCheck, stallShare, tripsOfKind } from './shared';
+import { capacityRuns, latestCheck, oilPressureLost, oilShareLost, stallShare, tripsOfKind } from './shared';
 
 const oilMoved = natureIs('slideActuation', 'oil-both-ways');
 const screw = natureIs('compressor', 'screw');
@@ -26,6 +27,49 @@ const stallNearFull: ClueRule = {
 		return {
 			...share.reading,
 			strength: share.sureness * ramp(share.share, 0.1, 0.4) * plateau(share.level, low - 4, low, high + 1, high + 5)
+		};
+	}
+};
+
+/** How far the unit's own oil figures have moved the way low oil moves them, 0…1: margin, oil temperature, start capacity. */
+function oilHasChanged(context: Context): number {
+	const grown = (figure: 'settledMargin' | 'settledOilTemp' | 'startCapacity', ends: readonly [number, number]) => {
+		const growth = growthOf(context, figure);
+		return growth ? ramp(growth.now.value - growth.before.value, ...ends) : 0;
+	};
+	// Over baseline at like lift and load by max(3 K, 3 MAD), capacity at start by 8 points (method.md) [ours].
+	return Math.max(grown('settledMargin', [1.8, 3]), grown('settledOilTemp', [2, 3.5]), grown('startCapacity', [3, 7]));
+}
+
+/** Which share of the first third of the long runs stalled. */
+function stalledEarly(context: Context): number {
+	const runs = capacityRuns(context);
+	const early = runs.slice(0, Math.ceil(runs.length / 3));
+	return early.length === 0 ? 0 : early.filter((start) => start.stall?.verdict === 'stall').length / early.length;
+}
+
+/** Loading stalls since the oil's margin or the capacity at start rose: a dead solenoid moves neither. */
+const stallsAsOilChanges: ClueRule = {
+	key: 'stalls-since-oil-changed',
+	direction: 'for',
+	weight: 0.45,
+	discriminates: true,
+	applies: oilMoved,
+	readAt: 'run',
+	needs: ['capacity', ['margin', 'oilTemp']],
+	read: (context) => {
+		const share = stallShare(context);
+		if (!share) return SILENT;
+		return {
+			...share.reading,
+			// Low oil stalls near 85–90 %, seldom under 75 %; what stalled before the oil changed has another cause.
+			strength:
+				share.sureness *
+				ramp(share.share, 0.05, 0.2) *
+				ramp(share.level, 70, 78) *
+				ramp(stalledEarly(context), 0.7, 0.3) *
+				oilHasChanged(context),
+			sentence: `${share.reading.sentence} The oil's margin, its temperature or the capacity at start has risen meanwhile.`
 		};
 	}
 };
@@ -54,6 +98,7 @@ export const lowOil: SuspectRow = {
 			show: { signals: ['capacity', 'demand'], from: 0, to: 180 }
 		}),
 		stallNearFull,
+		stallsAsOilChanges,
 		figureClue({
 			key: 'oil-hot',
 			weight: 0.25,
@@ -112,7 +157,7 @@ export const lowOil: SuspectRow = {
 			figure: 'settledMargin',
 			needs: ['margin'],
 			matched: true,
-			total: [1.5, 4]
+			total: [1.2, 3]
 		}),
 		figureClue({
 			key: 'start-not-over-staged',
@@ -125,7 +170,7 @@ export const lowOil: SuspectRow = {
 			figure: 'startCapacity',
 			needs: ['capacity'],
 			of: telling,
-			strength: (value) => ramp(value, 54, 50)
+			strength: (value, context) => ramp(value, 54, 50) * (1 - oilHasChanged(context))
 		}),
 		figureClue({
 			key: 'start-fully-loaded',
@@ -150,7 +195,9 @@ export const lowOil: SuspectRow = {
 			needs: ['oilTemp'],
 			// Cool oil only speaks while the margin is ordinary too: cold condenser water cools all oil.
 			strength: (value, context) =>
-				ramp(value, 52, 47) * ramp(context.figure('settledMargin', recent(context, 'settledMargin'))?.value ?? 0, 12, 7)
+				(1 - oilHasChanged(context)) *
+				ramp(value, 52, 47) *
+				ramp(context.figure('settledMargin', recent(context, 'settledMargin'))?.value ?? 0, 12, 7)
 		}),
 		{
 			key: 'loads-fully',
@@ -234,33 +281,7 @@ export const oilRestriction: SuspectRow = {
 			size: [-0.6, -2.5],
 			shift: [-3, -6]
 		}),
-		{
-			key: 'oil-pressure-lost',
-			direction: 'for',
-			weight: 0.55,
-			discriminates: true,
-			needs: ['oilPressure', 'condPressure'],
-			read: (context) => {
-				const lost = (start: (typeof context.starts)[number]) => {
-					const source = context.window('condPressure', 60, 1200, [start]);
-					const oil = context.window('oilPressure', 60, 1200, [start]);
-					return source && oil ? source.value - oil.value : null;
-				};
-				const found = telling(context)
-					.map((start) => ({ start, drop: lost(start) }))
-					.filter((one) => one.drop !== null);
-				const drops = found.map((one) => one.drop ?? 0).sort((a, b) => a - b);
-				const drop = drops[Math.floor(drops.length / 2)];
-				if (drop === undefined) return null;
-				return {
-					strength: ramp(drop, 120, 220),
-					sentence: `Oil pressure stands ${context.words.pressureDifference(drop)} under its source, median of ${countWords(drops.length, 'start')}.`,
-					figures: { drop },
-					starts: found.map((one) => one.start),
-					show: { signals: ['oilPressure', 'condPressure'], from: 0, to: 600 }
-				};
-			}
-		},
+		oilPressureLost('for', 0.55),
 		{
 			key: 'filter-drop',
 			direction: 'for',
@@ -316,7 +337,8 @@ export const oilRestriction: SuspectRow = {
 			quantity: 'temperatureDifference',
 			figure: 'settledMargin',
 			needs: ['margin'],
-			strength: (value) => ramp(value, 0.5, 3)
+			// Oil may come warm through a blocked line: what its pressure shows goes before its temperature.
+			strength: (value, context) => ramp(value, 0.5, 3) * ramp(oilShareLost(context)?.share ?? 0, 0.55, 0.35)
 		}),
 		checkClue('filter-drop-measured', 'for', (context) => {
 			const check = latestCheck(context, (one) => (one.kind === 'oil-filter-drop' ? one : null));

@@ -247,10 +247,12 @@ export const starterOrSupply: SuspectRow = {
 			read: (context) => {
 				const run = median(context.bad.map(runSeconds));
 				if (run === null || kindShare(context, ...electrical) > 0.3) return SILENT;
+				const spacing = median(context.bad.map((start) => start.spacingSeconds)) ?? 0;
 				// Unequal phases are the supply's whatever the pressures did meanwhile.
 				const unequal = median(context.bad.map((start) => imbalance(context, start) ?? NaN)) ?? 0;
 				return {
-					strength: ramp(run, 30, 60) * ramp(unequal, 9, 4),
+					// A coarse log cannot show that it ran so long.
+					strength: ramp(run - spacing, 30, 60) * ramp(unequal, 9, 4),
 					sentence: `It ran for ${context.words.seconds(run)} before the trip: the motor was up and the pressures moved.`,
 					figures: { seconds: run },
 					starts: context.bad.slice(-5)

@@ -2,7 +2,7 @@ import type { FieldCheckFact } from '$lib/model/checks';
 import { countWords } from '../../wording/quantity-words';
 import { cautionsFor } from '../cautions';
 import { checkClue, recent } from '../clue-builders';
-import { always, type ClueRule, SILENT, type SuspectRow } from '../clue-rule';
+import { always, type ClueRule, natureIs, SILENT, type SuspectRow } from '../clue-rule';
 import type { Context } from '../context';
 import { restOffset, suctionOffset } from '../rest-readings';
 import { ramp } from '../strength';
@@ -94,8 +94,11 @@ export const evapSaturationSensor: SuspectRow = {
 				if (!gap) return null;
 				// Two columns that agree to the hundredth are one reading shown twice: no second witness.
 				if (Math.max(...gap.values.map(Math.abs)) < 0.05) return SILENT;
+				// Off the water at rest with its own pressure agreeing: both come from the one transducer that is off.
+				const rest = restOffset(context, 'logged');
+				const together = rest?.proved ? ramp(Math.abs(rest.value), LOG_TOLERANCE + 0.5, LOG_TOLERANCE - 0.5) : 1;
 				return {
-					strength: ramp(Math.abs(gap.value), 0.8, 0.4),
+					strength: together * ramp(Math.abs(gap.value), 0.8, 0.4),
 					sentence: `Saturation of the logged pressure agrees within ${context.words.difference(Math.abs(gap.value))}.`,
 					figures: { gap: gap.value },
 					starts: gap.starts.slice(-5)
@@ -160,13 +163,64 @@ const suctionOffAtRestToo: ClueRule = {
 		const off = runs.value - usualSuperheat(context);
 		const together = Math.sign(off) === Math.sign(rest.value) ? Math.min(Math.abs(off), Math.abs(rest.value)) : 0;
 		const wide = context.nature.evaporator === 'dx' ? 9 : 4;
+		// Wet gas is no sensor's doing: a low superheat must go with a dry discharge, where that is logged.
+		const discharge = context.figure('settledDischargeSuperheat', recent(context, 'settledDischargeSuperheat'));
+		const dry = off > 0 || !discharge ? 1 : ramp(discharge.value, 6, 12);
 		return {
 			strength:
-				ramp(together, 1.4, 2.2) * ramp(rest.spread, 1, 0.5) * (approach ? ramp(approach.value, wide * 1.2, wide) : 1),
+				dry *
+				ramp(together, 1.4, 2.2) *
+				ramp(rest.spread, 1, 0.5) *
+				(approach ? ramp(approach.value, wide * 1.2, wide) : 1),
 			sentence: `Suction stands ${context.words.difference(rest.value)} off saturation at rest, and settled superheat is ${context.words.difference(runs.value)}, off the usual to the same side.`,
 			figures: { atRest: rest.value, superheat: runs.value },
 			starts: runs.starts.slice(-5),
 			show: { signals: ['suctionTemp', 'evapSaturation'], from: -1200, to: 1800 }
+		};
+	}
+};
+
+/** Nothing at rest is colder than both the evaporator and the air about it: a suction that reads so reads low. */
+const suctionColdAtRest: ClueRule = {
+	key: 'colder-than-saturation-at-rest',
+	direction: 'for',
+	weight: 0.6,
+	discriminates: true,
+	readAt: 'rest',
+	needs: ['superheat'],
+	read: (context) => {
+		const rest = suctionOffset(context);
+		if (!rest) return null;
+		const warmAir = rest.air === null ? 0.7 : ramp(rest.air, -2, 0);
+		return {
+			strength: ramp(rest.value, -LOG_TOLERANCE + 0.3, -LOG_TOLERANCE - 0.5) * ramp(rest.spread, 1.5, 0.8) * warmAir,
+			sentence: `At rest suction stands ${context.words.difference(-rest.value)} under evaporator saturation, which nothing there could cool it to.`,
+			figures: { atRest: rest.value },
+			starts: context.starts.slice(-5),
+			show: { signals: ['suctionTemp', 'evapSaturation', 'outdoorTemp'], from: -1200, to: 0 }
+		};
+	}
+};
+
+/** Gas that leaves wet cools the discharge: no superheat under a dry discharge is the sensor's reading, not the gas's. */
+const superheatGoneButDry: ClueRule = {
+	key: 'superheat-gone-but-discharge-dry',
+	direction: 'for',
+	weight: 0.5,
+	discriminates: true,
+	readAt: 'run',
+	needs: ['superheat', 'dischargeSuperheat'],
+	applies: natureIs('evaporator', 'dx'),
+	read: (context) => {
+		const superheat = context.figure('superheat', recent(context, 'superheat'));
+		const discharge = context.figure('settledDischargeSuperheat', recent(context, 'settledDischargeSuperheat'));
+		if (!superheat || !discharge) return null;
+		return {
+			strength: ramp(superheat.value, 1.4, 0.2) * ramp(discharge.value, 16, 24),
+			sentence: `Settled superheat reads ${context.words.difference(superheat.value)} while the discharge stays ${context.words.difference(discharge.value)} over condensing: dry.`,
+			figures: { superheat: superheat.value, dischargeSuperheat: discharge.value },
+			starts: superheat.starts.slice(-5),
+			show: { signals: ['superheat', 'dischargeSuperheat'], from: 0, to: 3600 }
 		};
 	}
 };
@@ -177,6 +231,8 @@ export const suctionTemperatureSensor: SuspectRow = {
 	applies: always,
 	clues: [
 		suctionOffAtRestToo,
+		suctionColdAtRest,
+		superheatGoneButDry,
 		{
 			key: 'superheat-alone-high',
 			direction: 'for',
@@ -193,7 +249,8 @@ export const suctionTemperatureSensor: SuspectRow = {
 				return {
 					strength: Math.min(
 						ramp(superheat.value, high, high + 3),
-						ramp(discharge.value, 22, 16),
+						// Common practice, no source: 15–30 K is ordinary, a starved machine goes well beyond.
+						ramp(discharge.value, 34, 26),
 						ramp(approach.value, wide, wide * 0.8)
 					),
 					sentence: `Settled superheat ${context.words.difference(superheat.value)} with ordinary discharge superheat (${context.words.difference(discharge.value)}) and approach (${context.words.difference(approach.value)}).`,

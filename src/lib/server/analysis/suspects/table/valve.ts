@@ -18,6 +18,7 @@ import {
 	superheatLow,
 	valved
 } from './feed-clues';
+import { freezePoint } from '../../water/properties';
 import { latestCheck } from './shared';
 
 const valveWithoutEffect: ClueRule = {
@@ -33,6 +34,8 @@ const valveWithoutEffect: ClueRule = {
 		if (!end || !saturation) return null;
 		// Wide in every run is a line or a charge short of liquid, not a valve that does not follow.
 		const usual = context.figure('meanValvePosition', context.held)?.value ?? 0;
+		// A saturation that stands well over the cut-out is not a starved evaporator's.
+		const lowAt = context.limit('evapSaturationCutout') ?? freezePoint(context.nature.evapFluid ?? undefined);
 		const wide = ramp(end.value, 80, 95) * ramp(usual, 92, 75);
 		const tight = end.shift === null || end.heldCount < 2 ? 0 : ramp(end.shift, -6, -18);
 		const moved = context.bad.map((start) => {
@@ -48,7 +51,7 @@ const valveWithoutEffect: ClueRule = {
 					? 'stayed tighter than in held starts'
 					: 'did not move';
 		return {
-			strength: Math.max(wide, tight, flat),
+			strength: Math.max(wide, tight, flat) * ramp(saturation.value - lowAt, 10, 6),
 			sentence: `The valve ${state} (${context.words.percent(end.value)}) while evaporator saturation fell to ${context.words.temperature(saturation.value)}.`,
 			figures: { valve: end.value, evapSaturation: saturation.value, ...(travel === null ? {} : { travel }) },
 			starts: end.starts,
@@ -106,6 +109,7 @@ export const valveUnderfeeding: SuspectRow = {
 		{ key: 'liquid-line-restriction', share: 0.3 },
 		{ key: 'low-oil', share: 0.3 },
 		{ key: 'slide-not-unloading', share: 0.3 },
+		{ key: 'plant-staging', share: 0.4 },
 		{ key: 'evap-saturation-sensor', share: 0.4 }
 	],
 	trips: 'low-side',
@@ -117,6 +121,16 @@ export const valveUnderfeeding: SuspectRow = {
 		unitOff: false
 	}
 };
+
+/** A valve is still finding its place in the first minutes: short runs that did not trip say nothing of it [ours]. */
+const longEnough = (context: Context) =>
+	recent(context).filter(
+		(start) => start.outcome === 'tripped' || start.endedAt === null || start.endedAt - start.startedAt >= 480_000
+	);
+
+/** Trips that the controller itself recorded on wet discharge gas. */
+const wetTrips = (context: Context) =>
+	context.bad.filter((start) => /\bwet\b|low discharge superheat/i.test(start.trip?.text ?? ''));
 
 /** Wet running: of the settled stretch, or of the first ten minutes where no run settles. */
 function wetReading(
@@ -138,7 +152,7 @@ function wetReading(
 		needs: [trace],
 		read: (context) => {
 			const reading =
-				context.figure(figure, recent(context, figure)) ?? context.window(trace, 60, 600, recent(context));
+				context.figure(figure, recent(context, figure)) ?? context.window(trace, 120, 600, longEnough(context));
 			if (!reading) return null;
 			return {
 				strength: ramp(reading.value, ...ends(context)),
@@ -171,9 +185,10 @@ export const valveOverfeeding: SuspectRow = {
 			key: 'wet-gas-trips',
 			direction: 'for',
 			weight: 0.3,
+			discriminates: true,
 			needs: [],
 			read: (context) => {
-				const wet = context.bad.filter((start) => /\bwet\b|low discharge superheat/i.test(start.trip?.text ?? ''));
+				const wet = wetTrips(context);
 				if (context.bad.length === 0) return SILENT;
 				return {
 					strength: ramp(wet.length / context.bad.length, 0.2, 0.6),
@@ -224,8 +239,27 @@ export const valveOverfeeding: SuspectRow = {
 					starts: reading.starts.slice(-5)
 				};
 			}
+		},
+		{
+			key: 'discharge-dry',
+			direction: 'against',
+			weight: 0.35,
+			needs: ['dischargeSuperheat'],
+			readAt: 'run',
+			applies: dx,
+			read: (context) => {
+				const reading = context.figure('settledDischargeSuperheat', recent(context, 'settledDischargeSuperheat'));
+				if (!reading || wetTrips(context).length > 0) return SILENT;
+				return {
+					strength: ramp(reading.value, 16, 24),
+					sentence: `The discharge stays dry: ${context.words.difference(reading.value)} over condensing.`,
+					figures: { value: reading.value },
+					starts: reading.starts.slice(-5)
+				};
+			}
 		}
 	],
+	explainedBy: [{ key: 'suction-temperature-sensor', share: 0.5 }],
 	showsWithoutSymptom: true,
 	check: {
 		key: 'valve-close',

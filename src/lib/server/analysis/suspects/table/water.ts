@@ -1,4 +1,5 @@
 import type { FieldCheckFact } from '$lib/model/checks';
+import type { StartRecord } from '$lib/model/start';
 import { median } from '../../statistics/median';
 import { quantile } from '../../statistics/quantile';
 import { countWords } from '../../wording/quantity-words';
@@ -12,28 +13,44 @@ import { kindShare, latestCheck, tripsOfKind } from './shared';
 /** AHRI 550/590 (2015) rating conditions, 54 → 44 °F: the water difference of a unit whose design is not given. */
 const RATED_DELTA = 5.56;
 
+/** From this load on a plant with variable flow runs near its full flow, % [ours]. */
+const FLOW_IS_FULL = 70;
+
 /** Water difference over design at the load reached, of starts that run past 2 min (water lags before). */
-function deltaRatio(context: Context): { value: number; designKnown: boolean; count: number } | null {
+function deltaRatio(context: Context): { value: number; sureness: number; designKnown: boolean; count: number } | null {
 	const design = context.nature.designEvapDelta ?? null;
 	const ratios: number[] = [];
+	const loads: number[] = [];
 	for (const start of context.starts) {
 		const delta = context.window('evapDelta', 150, 3600, [start]);
 		const load = context.window('capacity', 150, 3600, [start]);
-		if (delta && load && load.value > 35) ratios.push(delta.value / ((design ?? RATED_DELTA) * (load.value / 100)));
+		if (!delta || !load || load.value <= 35) continue;
+		ratios.push(delta.value / ((design ?? RATED_DELTA) * (load.value / 100)));
+		loads.push(load.value);
 	}
 	const value = median(ratios);
-	return value === null ? null : { value, designKnown: design !== null, count: ratios.length };
+	// A plant with variable flow turns it down at part load on purpose: unless flow is logged, only full load tells.
+	const told = context.reader.has('evapFlow') || (median(loads) ?? 0) >= FLOW_IS_FULL;
+	const sureness = (design === null ? 0.6 : 1) * (told ? 1 : 0.5);
+	return value === null ? null : { value, sureness, designKnown: design !== null, count: ratios.length };
 }
 
 /** Flow over design, else over the unit's own usual (90th percentile of its starts). */
-function flowShare(context: Context): { value: number; flow: number; count: number; from: string } | null {
+function flowShare(
+	context: Context
+): { value: number; flow: number; count: number; from: string; byPlant: boolean } | null {
 	const bad = context.window('evapFlow', 10, 600, telling(context));
 	if (!bad) return null;
 	const design = context.nature.designEvapFlow ?? null;
 	const own = quantile(context.window('evapFlow', 10, 600, context.starts)?.values ?? [], 0.9);
 	const reference = design ?? own;
 	if (!reference) return null;
+	const most = quantile(context.window('evapFlow', 60, 3600, context.starts)?.values ?? [], 0.9) ?? 0;
+	const held = context.window('evapFlow', 10, 600, context.held);
+	const asHeld = context.bad.length === 0 || (held !== null && held.value < bad.value + 0.1 * reference);
 	return {
+		// Flow that reaches design in other hours and is as low in starts that held is turned down by the plant.
+		byPlant: most > 0.85 * reference && bad.value < 0.8 * reference && asHeld,
 		value: bad.value / reference,
 		flow: bad.value,
 		count: bad.starts.length,
@@ -51,7 +68,7 @@ const flowLow: ClueRule = {
 		const share = flowShare(context);
 		if (!share) return null;
 		return {
-			strength: ramp(share.value, 0.78, 0.6),
+			strength: ramp(share.value, 0.78, 0.6) * (share.byPlant ? 0.3 : 1),
 			sentence: `Evaporator flow ${context.words.flow(share.flow)}, ${Math.round(100 * share.value)} % of ${share.from}, median of ${countWords(share.count, 'start')}.`,
 			figures: { flow: share.flow, share: share.value },
 			starts: telling(context).slice(-5),
@@ -71,7 +88,7 @@ const deltaWide: ClueRule = {
 		if (!ratio) return null;
 		return {
 			// Over 1.3 times design at the load reached: common practice, no source.
-			strength: ramp(ratio.value, 1.3, 1.6) * (ratio.designKnown ? 1 : 0.6),
+			strength: ramp(ratio.value, 1.3, 1.6) * ratio.sureness,
 			sentence: `Entering minus leaving water is ${ratio.value.toFixed(1)} times ${ratio.designKnown ? 'design' : 'a usual design'} at the load reached, median of ${countWords(ratio.count, 'start')}.`,
 			figures: { ratio: ratio.value },
 			starts: telling(context).slice(-5),
@@ -169,7 +186,7 @@ export const lowWaterFlow: SuspectRow = {
 				const ratio = deltaRatio(context);
 				if (!ratio) return null;
 				return {
-					strength: ramp(ratio.value, 1.15, 1) * (ratio.designKnown ? 1 : 0.6),
+					strength: ramp(ratio.value, 1.15, 1) * ratio.sureness,
 					sentence: `Entering minus leaving water is ${ratio.value.toFixed(1)} times ${ratio.designKnown ? 'design' : 'a usual design'} at the load reached.`,
 					figures: { ratio: ratio.value },
 					starts: telling(context).slice(-5)
@@ -260,11 +277,83 @@ function waterSteady(context: Context, from: number, to: number): boolean {
 	return before !== null && after !== null && Math.abs(after - before) < 0.8;
 }
 
+/** Water lags the start by up to a minute; after five a run cut short has shown what it does. */
+const TURNS_FROM = 45;
+const TURNS_TO = 300;
+
+/**
+ * Minutes in which a run cools all the water that circulates once: its water difference over the rate at which the
+ * entering water falls. Infinite where the entering water does not fall; null where the run is too short to tell.
+ */
+function turnover(context: Context, start: StartRecord): number | null {
+	const to = Math.min(TURNS_TO, ((start.endedAt ?? Infinity) - start.startedAt) / 1000 - 1);
+	const wide = Math.max(15, start.spacingSeconds);
+	const seconds = to - TURNS_FROM - wide;
+	if (seconds < Math.max(45, start.spacingSeconds)) return null;
+	const first = context.window('evapWaterIn', TURNS_FROM, TURNS_FROM + wide, [start]);
+	const last = context.window('evapWaterIn', to - wide, to, [start]);
+	const delta = context.window('evapDelta', TURNS_FROM, to, [start]);
+	if (!first || !last || !delta || delta.value < 0.3) return null;
+	const rate = (first.value - last.value) / (seconds / 60);
+	return rate < 0.1 ? Infinity : delta.value / rate;
+}
+
+/** Runs that ended by themselves within a quarter of an hour. */
+const shortRuns = (context: Context): StartRecord[] =>
+	context.starts.filter(
+		(start) => start.outcome !== 'tripped' && start.endedAt !== null && start.endedAt - start.startedAt < 900_000
+	);
+
+/**
+ * The same little water comes round again and again. A loop holds 3 to 10 gallons a ton, 1.5 to 4 minutes of the design
+ * flow: common practice, no source. Less is not the building's water.
+ */
+const waterComesRound: ClueRule = {
+	key: 'entering-falls-with-leaving',
+	direction: 'for',
+	weight: 0.6,
+	discriminates: true,
+	needs: ['evapDelta'],
+	read: (context) => {
+		const turns = context.gather(context.starts, (start) => turnover(context, start));
+		if (!turns) return null;
+		const short = shortRuns(context);
+		return {
+			strength: ramp(turns.value, 2, 1.2) * ramp(short.length / context.starts.length, 0.3, 0.6),
+			sentence: `Entering water follows leaving water down: all the water that circulates is cooled once in ${context.words.seconds(60 * turns.value)}, and ${short.length} of ${countWords(context.starts.length, 'run')} ended within a quarter of an hour.`,
+			figures: { turnoverMinutes: turns.value, short: short.length, runs: context.starts.length },
+			starts: turns.starts.slice(-5),
+			show: { signals: ['evapWaterIn', 'evapWaterOut', 'capacity'], from: -120, to: 900 }
+		};
+	}
+};
+
+const manyShortRuns: ClueRule = {
+	key: 'many-short-runs',
+	direction: 'for',
+	weight: 0.2,
+	needs: [],
+	read: (context) => {
+		const short = shortRuns(context);
+		const [first, last] = [context.starts[0], context.starts.at(-1)];
+		if (!first || !last || short.length < 3) return SILENT;
+		const days = Math.max(1, (last.startedAt - first.startedAt) / 86_400_000);
+		return {
+			strength: ramp(short.length / days, 4, 10),
+			sentence: `${countWords(short.length, 'run')} of under a quarter of an hour in ${Math.round(days)} days.`,
+			figures: { short: short.length, days },
+			starts: short.slice(-5)
+		};
+	}
+};
+
 export const waterShortCircuit: SuspectRow = {
 	key: 'water-short-circuit',
 	family: 'water',
 	applies: always,
 	clues: [
+		waterComesRound,
+		manyShortRuns,
 		{
 			key: 'entering-follows-leaving',
 			direction: 'for',
@@ -288,6 +377,7 @@ export const waterShortCircuit: SuspectRow = {
 			}
 		}
 	],
+	showsWithoutSymptom: true,
 	check: {
 		key: 'bypass',
 		title: 'Bypass, decoupler and check valves: where does the leaving water go?',
