@@ -8,6 +8,7 @@ import { markPinnedQuantity } from './figures/pinned-quantity';
 import { markSameLevel } from './figures/same-level';
 import type { FigureContext } from './figures/sheet';
 import { stageOf } from './figures/stages';
+import { shownNature } from './nature-shown';
 import { activationsOf, namesAnother, type Activation } from './outcomes/activations';
 import type { Verdict } from './outcomes/judge';
 import { proposeShift } from './outcomes/match';
@@ -29,7 +30,8 @@ const SAME_RUN = () => true;
  * Every start of one circuit's log, with its outcome, figures and stall (method.md). Pure: the same input gives the
  * same result. Where no column can tell when it ran, there are no starts and a note says so.
  */
-export function analyseCircuit(input: CircuitInput): CircuitAnalysis {
+export function analyseCircuit(given: CircuitInput): CircuitAnalysis {
+	const input = { ...given, nature: shownNature(given) };
 	const running = readRunning(input.series, input.nature);
 	if (running === null || running.t.length === 0) return nothing(input);
 	const { activations, shift, notes } = alignedAlarms(input, running);

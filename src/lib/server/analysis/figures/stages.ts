@@ -8,13 +8,16 @@ const MOST_LEVELS = 8;
 /** Levels held for this share of the running time between them make it stepped. */
 const SHARE = 0.9;
 
+/** No more than this share may stand elsewhere. */
+const STRAYS = 0.005;
+
 /** A stepped machine whose levels cannot be read is taken for one of four stages, points. */
 const USUAL_STAGE = 25;
 
 /**
  * The capacity between two stages of a machine with stepped capacity, points. Zero for a machine that is not stepped: by
- * its nature, or where nature is silent by its readings, which are those of stages only when nine tenths of the running
- * time stand on even parts of 100 % (halves to eighths). A stepped machine stands between two stages by nature, so short
+ * its nature, or where nature is silent by its readings, which are those of stages only when all of the running time
+ * stands on even parts of 100 %. A stepped machine stands between two stages by nature, so short
  * of demand by less than a stage is no stall.
  */
 export function stageOf(circuit: Circuit): number {
@@ -25,12 +28,36 @@ export function stageOf(circuit: Circuit): number {
 		const apart = (levels ?? []).slice(1).map((level, i) => level - (levels?.[i] ?? 0));
 		return apart.length > 0 ? Math.min(50, Math.max(...apart)) : USUAL_STAGE;
 	}
-	if (levels === null) return 0;
-	for (let parts = 2; parts <= 8; parts++) {
-		const stage = 100 / parts;
-		if (levels.every((level) => Math.abs(level - stage * Math.round(level / stage)) <= 1.5)) return stage;
+	return levels === null ? 0 : evenStage(circuit);
+}
+
+/** Parts of full capacity that machines are stepped in. */
+const PARTS = [2, 3, 4, 5, 6, 8] as const;
+
+/**
+ * The stage of a machine whose capacity never stands anywhere but on even parts of 100 % (halves to eighths), loading
+ * included: what slides on its way up is not stepped. Readings caught between two stages do not stand. 0 when it is not.
+ */
+function evenStage(circuit: Circuit): number {
+	const capacity = circuit.trace('capacity');
+	if (capacity === undefined) return 0;
+	const off = new Map<number, number>(PARTS.map((parts) => [parts, 0]));
+	let total = 0;
+	for (const run of circuit.runs) {
+		const values = readingsWithin(capacity, run.startedAt, run.lastOn).v;
+		for (let i = 1; i + 1 < values.length; i++) {
+			const value = values[i] ?? NaN;
+			const stands = Math.abs(value - (values[i - 1] ?? NaN)) <= 1 && Math.abs(value - (values[i + 1] ?? NaN)) <= 1;
+			if (!stands) continue;
+			total++;
+			for (const parts of PARTS) {
+				const stage = 100 / parts;
+				if (Math.abs(value - stage * Math.round(value / stage)) > 1.2) off.set(parts, (off.get(parts) ?? 0) + 1);
+			}
+		}
 	}
-	return 0;
+	const found = PARTS.find((parts) => (off.get(parts) ?? total) <= STRAYS * total);
+	return found === undefined || total === 0 ? 0 : 100 / found;
 }
 
 /** Capacity levels that hold most of the running time, rising; null when they do not. */
@@ -59,5 +86,5 @@ function levelsOf(circuit: Circuit): number[] | null {
 		levels.push(bin);
 		held += near(bin);
 	}
-	return held >= SHARE * total && levels.length >= 2 ? levels.sort((a, b) => a - b) : null;
+	return held >= SHARE * total && levels.length >= 1 ? levels.sort((a, b) => a - b) : null;
 }

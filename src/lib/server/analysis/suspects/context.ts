@@ -5,6 +5,7 @@ import { limitAt, type LimitKey, type UnitNature } from '$lib/model/unit';
 import type { Series } from '$lib/model/series';
 import { saturationPressure, saturationTemperature } from '../refrigerants/saturation';
 import { saturationsOf } from '../series/derived';
+import { shownNature } from '../nature-shown';
 import { median } from '../statistics/median';
 import { medianAbsoluteDeviation } from '../statistics/median-absolute-deviation';
 import { freezePoint } from '../water/properties';
@@ -133,6 +134,17 @@ function fullLoad(value: number | null, capacity: number | null): number | null 
 	return capacity < 35 ? null : value / (Math.min(100, capacity) / 100);
 }
 
+/** Settled superheat from which an evaporator that nobody described is direct expansion, K: common practice, no source. */
+const DRY_FROM = 3.5;
+
+/** The nature as given or shown by the columns; an evaporator whose runs settle dry is taken for direct expansion. */
+function settledNature(input: CircuitInput, starts: readonly StartRecord[]): CircuitInput['nature'] {
+	const shown = shownNature(input);
+	if (shown.evaporator) return shown;
+	const superheat = median(starts.map((start) => start.figures.superheat ?? NaN));
+	return superheat !== null && superheat >= DRY_FROM ? { ...shown, evaporator: 'dx' } : shown;
+}
+
 /** What the clues are read from, over given tripped and held starts. */
 export function contextOf(
 	evidence: SuspectEvidence,
@@ -140,7 +152,7 @@ export function contextOf(
 	bad: StartRecord[],
 	held: StartRecord[]
 ): Context {
-	const { input } = evidence;
+	const input = { ...evidence.input, nature: settledNature(evidence.input, starts) };
 	const reader = traceReader(withSaturations(input), pressuresOf(input));
 	const lastStart = starts.at(-1)?.startedAt ?? Infinity;
 	const beside = held.slice(-HELD_BESIDE);

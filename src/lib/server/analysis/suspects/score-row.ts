@@ -41,7 +41,8 @@ function missingClue(rule: ClueRule, weight: number, lacking: readonly string[])
 }
 
 function readRule(rule: ClueRule, context: Context, applies: number): { clue: Clue | null; lacking: string[] } {
-	const share = applies * (rule.applies?.(context.nature) ?? 1);
+	// A nature that is not known halves once, however much of it is not known.
+	const share = Math.min(applies, rule.applies?.(context.nature) ?? 1);
 	if (share === 0) return { clue: null, lacking: [] };
 	const lacking = [...new Set(rule.needs.flatMap((need) => lackingOf(need, context)))];
 	if (lacking.length > 0) return { clue: missingClue(rule, rule.weight * share, lacking), lacking };

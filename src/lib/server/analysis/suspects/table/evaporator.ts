@@ -4,11 +4,15 @@ import { always, type ClueRule, SILENT, type SuspectRow } from '../clue-rule';
 import type { Context } from '../context';
 import { restOffset } from '../rest-readings';
 import { ramp } from '../strength';
+import { flooded } from './feed-clues';
 import { latestCheck } from './shared';
 
-/** Usual upper end of the settled evaporator approach: 4 °F flooded, 10 °F direct expansion, from memory (sources). */
+/**
+ * Usual upper end of the settled evaporator approach: 4 °F flooded, 10 °F direct expansion, from memory (sources). The
+ * wider one where nobody said which it is.
+ */
 function usualHigh(context: Context): number {
-	return context.limit('evapApproachUsualHigh') ?? (context.nature.evaporator === 'dx' ? 5.6 : 2.3);
+	return context.limit('evapApproachUsualHigh') ?? (flooded(context) ? 2.3 : 5.6);
 }
 
 /** Where a full-load approach begins to be wide, and where it surely is: 1.35 and 2 times the usual upper end [ours]. */
@@ -17,6 +21,7 @@ const wide = (context: Context): readonly [number, number] => [1.35 * usualHigh(
 const approachWide = (weight: number, discriminates: boolean): ClueRule =>
 	figureClue({
 		key: 'evaporator-approach-wide',
+		applies: (nature) => (nature.evaporator ? 1 : 0.5),
 		weight,
 		discriminates,
 		what: 'Settled evaporator approach',
@@ -50,7 +55,7 @@ const superheatOrdinary = (weight: number): ClueRule =>
 		figure: 'superheat',
 		needs: ['superheat'],
 		of: (context) => context.starts,
-		strength: (value, context) => (context.nature.evaporator === 'dx' ? ramp(value, 10, 7) : ramp(value, 7, 4))
+		strength: (value, context) => (flooded(context) ? ramp(value, 7, 4) : ramp(value, 10, 7))
 	});
 const starved: ClueRule = besideClue({
 	key: 'superheat-high-instead',
@@ -60,7 +65,7 @@ const starved: ClueRule = besideClue({
 	quantity: 'temperatureDifference',
 	trace: 'superheat',
 	window: 'trip minute',
-	size: (context) => (context.nature.evaporator === 'dx' ? [10, 14] : [7, 11]),
+	size: (context) => (flooded(context) ? [7, 11] : [10, 14]),
 	shift: [3, 6]
 });
 const sensorExplains: ClueRule = {

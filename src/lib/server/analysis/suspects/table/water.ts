@@ -169,7 +169,7 @@ export const lowWaterFlow: SuspectRow = {
 				const share = flowShare(context);
 				if (!share) return null;
 				return {
-					strength: ramp(share.value, 0.82, 0.92) * (share.from === 'design' ? 1 : 0.6),
+					strength: ramp(share.value, 0.82, 0.92) * (share.from === 'design' ? 1 : 0.25),
 					sentence: `Evaporator flow ${context.words.flow(share.flow)} is ${Math.round(100 * share.value)} % of ${share.from}.`,
 					figures: { share: share.value },
 					starts: telling(context).slice(-5)
