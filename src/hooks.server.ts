@@ -3,11 +3,15 @@ import { AppError } from '$lib/model/errors';
 import { readApiKey } from '$lib/server/auth/api-keys';
 import { readSession, SESSION_COOKIE } from '$lib/server/auth/sessions';
 import { now } from '$lib/server/config';
+import { letGo } from '$lib/server/services/health';
 import { sessionCookie } from '$lib/server/web/cookies';
 import { bearerOf, isForeign } from '$lib/server/web/foreign';
 import { errorResponse } from '$lib/server/web/problem';
 import { redirect, type Handle, type HandleServerError } from '@sveltejs/kit';
 import { sequence } from '@sveltejs/kit/hooks';
+
+// adapter-node has served its last request then; what still holds the process are the pools.
+if (!building) process.once('sveltekit:shutdown', () => void letGo());
 
 const OPEN = [
 	/^\/sign-in/,

@@ -18,6 +18,7 @@ for (const size of SIZES)
 				`${below}/starts`,
 				`${below}/starts/${start}`,
 				`${below}/nights`,
+				`${below}/season`,
 				`${below}/side-by-side`,
 				`${below}/suspects`,
 				`${below}/checks`,

@@ -2,6 +2,7 @@ import { queryOptions } from '@tanstack/svelte-query';
 import type { UnitSystem } from '$lib/model/quantities';
 import type { Comparison } from '$lib/model/wire/comparison';
 import type { Nights } from '$lib/model/wire/nights';
+import type { Season } from '$lib/model/wire/season';
 import type { Suspects } from '$lib/model/wire/start';
 import type { StartSheet } from '$lib/model/wire/start-sheet';
 import { getJson, pathWith } from './api';
@@ -28,6 +29,14 @@ export function nightsQuery(fetcher: typeof fetch, unit: string, circuit: string
 	return queryOptions({
 		queryKey: ['units', unit, 'nights', circuit, system],
 		queryFn: () => getJson<Nights>(fetcher, pathWith(`/api/units/${unit}/nights`, { circuit, units: system }))
+	});
+}
+
+/** Weekly medians over thirteen weeks. */
+export function seasonQuery(fetcher: typeof fetch, unit: string, circuit: string | null, system: UnitSystem) {
+	return queryOptions({
+		queryKey: ['units', unit, 'season', circuit, system],
+		queryFn: () => getJson<Season>(fetcher, pathWith(`/api/units/${unit}/season`, { circuit, units: system }))
 	});
 }
 

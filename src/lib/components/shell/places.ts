@@ -33,6 +33,7 @@ export const UNIT_SHEETS: readonly UnitSheet[] = [
 	{ path: '', label: 'Days' },
 	{ path: '/starts', label: 'Starts' },
 	{ path: '/nights', label: 'Nights' },
+	{ path: '/season', label: 'Season' },
 	{ path: '/side-by-side', label: 'Side by side' },
 	{ path: '/suspects', label: 'Suspects' },
 	{ path: '/checks', label: 'Checks and changes' },

@@ -13,14 +13,37 @@ const SEASON_MS = 91 * 86_400_000;
 /** Rest tests that read an offset between two sensors: these drift. */
 const OFFSETS = /offset|sensor/i;
 
-function titleOf(traces: readonly SeasonTrace[]): string {
-	const changed = traces.filter((trace) => trace.change !== null);
-	const drifting = traces.filter((trace) => trace.driftPerWeek !== null);
-	const first = changed[0];
-	if (first?.change) return `${first.label} took a new level in the week of ${first.change.week}`;
-	if (drifting[0]) return `${drifting[0].label} drifts from week to week`;
+/** How a heading names what is followed; a resting offset is named by its two sensors. */
+const SPOKEN: Readonly<Record<string, string>> = {
+	evapApproach: 'The evaporator approach',
+	condApproach: 'The condenser approach',
+	settledMargin: 'The settled margin',
+	settledOilTemp: 'The settled oil temperature',
+	settledSubcooling: 'The subcooling',
+	superheat: 'The superheat',
+	startCapacity: 'The capacity at start',
+	minEvapSaturation: 'The least evaporator saturation'
+};
+
+/** The finding: what moved most over the season, with its figures as the person reads them. */
+function titleOf(traces: readonly SeasonTrace[], system: UnitSystem): string {
+	const first = traces[0];
+	if (first && first.weight > 0) {
+		const name = SPOKEN[first.key] ?? `At rest, ${first.label}`;
+		const unit = MEASURES[apiMeasure(first.quantity, system)].symbol.replace(' diff.', '');
+		const say = (value: number) => value.toFixed(first.quantity === 'percent' ? 0 : 1).replace('-', '−');
+		const { change, driftPerWeek, weeks } = first;
+		if (driftPerWeek !== null) {
+			const over = Math.abs(changeBy(driftPerWeek, first.quantity, system) * (weeks.length - 1));
+			return `${name} ${driftPerWeek > 0 ? 'rose' : 'fell'} by ${say(over)} ${unit} in ${weeks.length} weeks`;
+		}
+		if (change) {
+			const [before, after] = [change.before, change.after].map((value) => say(inUnits(value, first.quantity, system)));
+			return `${name} went from ${before} to ${after} ${unit} in the week of ${change.week}`;
+		}
+	}
 	return traces.some((trace) => trace.weeks.length > 2)
-		? 'No new level and no drift in these weeks'
+		? 'Nothing drifts and nothing took a new level in these weeks'
 		: 'Too few weeks to see a drift';
 }
 
@@ -56,6 +79,6 @@ export async function seasonOf(actor: Actor, unitId: string, circuit: string, sy
 			},
 			driftPerWeek: trace.driftPerWeek === null ? null : changeBy(trace.driftPerWeek, trace.quantity, system)
 		}));
-		return { title: titleOf(traces), traces: shaped, units: unitsObject(system) };
+		return { title: titleOf(traces, system), traces: shaped, units: unitsObject(system) };
 	});
 }

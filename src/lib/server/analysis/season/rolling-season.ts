@@ -24,6 +24,12 @@ const LOAD_REACH = 10;
 const LEAST_RUNS = 2;
 const LEAST_WEEKS = 6;
 
+/**
+ * What a season must add up to before it is called a drift or a new level, by quantity, stored units: finer than this is
+ * below what a controller's sensors repeat [ours].
+ */
+const LEAST_MOVE: Partial<Record<Quantity, number>> = { temperature: 1, temperatureDifference: 0.5, percent: 4 };
+
 /** One resting offset of a rest, K, as the nights give them. */
 export type OffsetReading = { key: string; label: string; at: number; value: number };
 export type WeekPoint = { week: string; value: number; count: number };
@@ -36,6 +42,8 @@ export type SeasonTrace = {
 	change: { week: string; before: number; after: number } | null;
 	/** Theil–Sen drift per week, when a trend is clear at 1 in 20; null otherwise. */
 	driftPerWeek: number | null;
+	/** How far the season moved it, in least moves worth naming; 0 when neither drift nor new level is clear. */
+	weight: number;
 };
 
 function weekly(readings: readonly { at: number; value: number }[], timeZone: string): WeekPoint[] {
@@ -67,27 +75,27 @@ function traceOf(
 		weeks.map((one) => Date.parse(one.week) / (7 * 86_400_000)),
 		values
 	);
-	return {
-		key,
-		label,
-		quantity,
-		weeks,
-		change:
-			found && first
-				? {
-						week: first.week,
-						before: median(values.slice(0, found.index)) ?? NaN,
-						after: median(values.slice(found.index)) ?? NaN
-					}
-				: null,
-		driftPerWeek: trend && trend.twoSided <= 0.05 && line ? line.slope : null
-	};
+	const least = LEAST_MOVE[quantity] ?? 0;
+	const level =
+		found && first
+			? {
+					week: first.week,
+					before: median(values.slice(0, found.index)) ?? NaN,
+					after: median(values.slice(found.index)) ?? NaN
+				}
+			: null;
+	const change = level && Math.abs(level.after - level.before) >= least ? level : null;
+	const slope = trend && trend.twoSided <= 0.05 && line ? line.slope : null;
+	const drifted = slope === null ? 0 : Math.abs(slope) * (weeks.length - 1);
+	const driftPerWeek = drifted >= least ? slope : null;
+	const moved = Math.max(change ? Math.abs(change.after - change.before) : 0, driftPerWeek === null ? 0 : drifted);
+	return { key, label, quantity, weeks, change, driftPerWeek, weight: least > 0 ? moved / least : moved };
 }
 
 /**
  * The rolling season: weekly medians of settled figures at like load, of capacity at start and of resting offsets, with
  * the week of a change of level (Pettitt) and the drift (Theil–Sen where Mann–Kendall is clear). A slow fouling or leak
- * shows here before it trips. Attended starts and lay-ups are left out; a figure nobody has is left out.
+ * shows here before it trips. What moved most comes first. Attended starts and lay-ups are left out; a figure nobody has is left out.
  */
 export function rollingSeason(
 	starts: readonly StartRecord[],
@@ -122,5 +130,6 @@ export function rollingSeason(
 			timeZone
 		)
 	);
-	return [...figures, ...resting].filter((trace) => trace !== null);
+	const traces = [...figures, ...resting].filter((trace) => trace !== null);
+	return traces.sort((a, b) => b.weight - a.weight);
 }
