@@ -25,6 +25,10 @@ export const TRIP_KINDS = [
 ] as const;
 export type TripKind = (typeof TRIP_KINDS)[number];
 
+/** Where a start is known from: a trend log, or without one a person's typing or an alarm list. */
+export const START_SOURCES = ['log', 'typed', 'alarm-list'] as const;
+export type StartSource = (typeof START_SOURCES)[number];
+
 /** The protections whose headroom is watched. */
 export const PROTECTIONS = [
 	'evapSaturation',
@@ -146,6 +150,8 @@ export type Stall = {
 /** One start as the analysis knows it. Times are ms UTC, quantities in stored units. */
 export type StartRecord = {
 	circuit: string;
+	/** `log` when absent. Of an alarm list without a start line this is the instant of the trip. */
+	source?: StartSource;
 	startedAt: number;
 	/** null while it still runs at the log's end */
 	endedAt: number | null;
@@ -177,8 +183,8 @@ export type StartRecord = {
 	trip: Trip | null;
 	stall: Stall | null;
 	settled: Interval | null;
-	/** Where `running` came from. */
-	runningFrom: 'running' | 'motorCurrent' | 'power' | 'speed' | 'capacity' | 'startCommand';
+	/** Where `running` came from; `record` for a start without a trend log. */
+	runningFrom: 'record' | 'running' | 'motorCurrent' | 'power' | 'speed' | 'capacity' | 'startCommand';
 	notes: readonly string[];
 	figures: Record<FigureKey, number | null>;
 	absent: Partial<Record<FigureKey, { reason: AbsentReason; detail: string }>>;

@@ -26,6 +26,11 @@ describe('stripShapes', () => {
 		expect(only?.x0).toBe(240);
 		expect(only?.shape.right).toBe(300);
 	});
+	it('leaves a run without a trend log in outline', () => {
+		const [logged] = stripShapes({ strokes: [stroke(720, 900, 'held')] }, evenClock(480), 7, 5, 15);
+		const [noted] = stripShapes({ strokes: [{ ...stroke(720, 900, 'held'), noted: true }] }, evenClock(480), 7, 5, 15);
+		expect(noted?.shape).toEqual({ ...logged?.shape, ink: '', open: logged?.shape.ink });
+	});
 });
 
 describe('unlogged', () => {

@@ -1,6 +1,6 @@
 import type { DayStrip, Stroke } from '../model/wire/views';
 import { clockX, type DayClock } from './day-clock';
-import { strokeShape, type StrokeShape } from './stroke-geometry';
+import { hollow, strokeShape, type StrokeShape } from './stroke-geometry';
 
 /** One day's strokes as shapes, in the order they are drawn: trips last, so that none hides under a neighbour. */
 export function stripShapes(
@@ -23,7 +23,8 @@ export function stripShapes(
 				outcome: stroke.outcome,
 				goesOn: stroke.goesOn
 			});
-			return { stroke, x0, shape };
+			// Without a trend log a run is an outline: it is known, but nothing of it was drawn by a machine.
+			return { stroke, x0, shape: stroke.noted ? hollow(shape) : shape };
 		});
 }
 

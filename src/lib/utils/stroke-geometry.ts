@@ -115,6 +115,11 @@ function fadingEnd({ x0, x1, y, h }: StrokeInput, dots: boolean): StrokeShape {
 	return { ink, trip: '', open: '', fade, right: dots ? x1 + 0.8 * h * 2.75 : x1 };
 }
 
+/** A stroke in outline: a run that is known without a trend log. */
+export function hollow(shape: StrokeShape): StrokeShape {
+	return { ...shape, ink: '', open: shape.ink + shape.open };
+}
+
 /** Several strokes as one: parts are joined, so that a whole miniature is four elements. */
 export function joinStrokes(shapes: readonly StrokeShape[]): StrokeShape {
 	const joined: StrokeShape = { ink: '', trip: '', open: '', fade: [], right: 0 };

@@ -16,6 +16,7 @@ function start(id: string, over: Partial<Start> = {}): Start {
 		id,
 		unitId: 'u',
 		circuit: '1',
+		source: 'log',
 		startedAt: `2026-05-0${id}T05:00:00Z`,
 		endedAt: `2026-05-0${id}T06:00:00Z`,
 		uncertaintySeconds: 5,

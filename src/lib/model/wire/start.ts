@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { ABSENT_REASONS, FIGURE_KEYS, OUTCOMES, TRIP_KINDS } from '../start';
+import { ABSENT_REASONS, FIGURE_KEYS, OUTCOMES, START_SOURCES, TRIP_KINDS } from '../start';
 import { idSchema, instantSchema, unitsSchema } from './common';
 
 const figureKey = z.enum(FIGURE_KEYS as [string, ...string[]]);
@@ -25,6 +25,9 @@ export const startSchema = z
 		id: idSchema,
 		unitId: idSchema,
 		circuit: z.string(),
+		source: z.enum(START_SOURCES).meta({
+			description: 'without a trend log: typed, or of an alarm list, whose trip instant stands where no start is known'
+		}),
 		startedAt: instantSchema,
 		endedAt: instantSchema.nullable(),
 		uncertaintySeconds: z.number(),

@@ -15,7 +15,9 @@ export const strokeSchema = z.object({
 	goesOn: z.boolean(),
 	outcome: z.enum(OUTCOMES),
 	startupTrip: z.boolean(),
-	attended: z.boolean()
+	attended: z.boolean(),
+	/** known without a trend log: typed, or from an alarm list */
+	noted: z.boolean().optional()
 });
 export const dayStripSchema = z.object({
 	/** the site's date, YYYY-MM-DD */
@@ -79,6 +81,8 @@ export const unitSummarySchema = z
 		site: siteSchema,
 		starts: z.number().int(),
 		startupTrips: z.number().int(),
+		/** starts known without a trend log, in no other count of this row */
+		noted: z.number().int().optional(),
 		/** m eligible first tries, k of them start-up trips, with Wilson's 95 % interval */
 		firstTries: z.object({ m: z.number(), k: z.number(), low: z.number().nullable(), high: z.number().nullable() }),
 		lastFirst: z.array(z.enum(OUTCOMES)).meta({ description: 'the last ten first starts, oldest first' }),

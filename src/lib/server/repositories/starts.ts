@@ -1,7 +1,7 @@
-import type { StartCorrection, StartRecord } from '$lib/model/start';
+import type { StartCorrection, StartRecord, StartSource } from '$lib/model/start';
 import type { Tx } from '$lib/server/db/client';
 import { circuitResults, corrections, starts } from '$lib/server/db/schema/logs';
-import { and, asc, eq, gte, inArray, lte } from 'drizzle-orm';
+import { and, asc, eq, gte, inArray, lte, ne } from 'drizzle-orm';
 
 /** Starts, their corrections and what was computed per circuit. */
 
@@ -9,7 +9,19 @@ export type StartRow = typeof starts.$inferSelect;
 export type CorrectionRow = Omit<typeof corrections.$inferSelect, 'correction'> & { correction: StartCorrection };
 export type CircuitResultRow = typeof circuitResults.$inferSelect;
 
-export type StartFilter = { from?: number; to?: number; outcome?: string; circuit?: string };
+export type StartFilter = {
+	from?: number;
+	to?: number;
+	outcome?: string;
+	circuit?: string;
+	/** those of trend logs unless said: what nobody logged has no place in rates, proof or comparisons */
+	source?: 'log' | 'noted' | 'all';
+};
+
+function fromSource(source: StartFilter['source'] = 'log') {
+	if (source === 'all') return undefined;
+	return source === 'log' ? eq(starts.source, 'log') : ne(starts.source, 'log' satisfies StartSource);
+}
 
 /** The starts of some units, oldest first. */
 export function listStarts(tx: Tx, unitIds: readonly string[], filter: StartFilter = {}): Promise<StartRow[]> {
@@ -20,6 +32,7 @@ export function listStarts(tx: Tx, unitIds: readonly string[], filter: StartFilt
 		.where(
 			and(
 				inArray(starts.unitId, [...unitIds]),
+				fromSource(filter.source),
 				filter.from === undefined ? undefined : gte(starts.startedAt, filter.from),
 				filter.to === undefined ? undefined : lte(starts.startedAt, filter.to),
 				filter.outcome ? eq(starts.outcome, filter.outcome as StartRow['outcome']) : undefined,
@@ -79,6 +92,7 @@ export async function replaceStarts(
 		startedAt: record.startedAt,
 		endedAt: record.endedAt,
 		outcome: record.outcome,
+		source: record.source ?? 'log',
 		record,
 		extras
 	}));

@@ -4,6 +4,7 @@ import type { Series } from '$lib/model/series';
 import type { StartRecord } from '$lib/model/start';
 import type { SuspectsResult } from '$lib/model/suspect';
 import { analyseCircuit } from '$lib/server/analysis/analyse-circuit';
+import { notedStarts } from '$lib/server/analysis/noted/noted-starts';
 import { firstMoverOf, matchedHeld } from '$lib/server/analysis/first-mover/first-mover';
 import { cluesOfStart, evaluateSuspects, type SuspectEvidence } from '$lib/server/analysis/suspects';
 import { factsOf } from './facts';
@@ -11,6 +12,7 @@ import { keepFirstMover } from './first-mover-shapes';
 import { listTripWords, listVisitSpans } from '$lib/server/repositories/circle';
 import type { Window } from '$lib/server/repositories/blocks';
 import { listLogs, listLogStates, updateLog, withLock } from '$lib/server/repositories/logs';
+import { listNoted } from '$lib/server/repositories/noted';
 import { findSite, findUnit, listLimits, listUnits, type SiteRow, type UnitRow } from '$lib/server/repositories/plant';
 import {
 	listCircuitResults,
@@ -26,6 +28,7 @@ import { loadEvents, loadSeries, loadTexts } from './series';
 /** Recomputes what a unit's logs say: starts, figures and suspects, circuit by circuit. */
 
 type Job = { organisationId: string; unitId: string };
+const NO_EXTRAS: StartRow['extras'] = { clues: { si: [], ip: [] }, firstMover: null };
 
 export const circuitsOf = (unit: { circuits: number }): string[] =>
 	Array.from({ length: unit.circuits }, (_, i) => String(i + 1));
@@ -97,6 +100,7 @@ async function compute(job: Job): Promise<{ computed: Computed[]; revision: numb
 		const site = unit && (await findSite(tx, unit.siteId));
 		if (!unit || !site) return null;
 		const facts = await factsOf(tx, unit.id);
+		const typed = await listNoted(tx, unit.id);
 		const computed: Computed[] = [];
 		for (const input of await circuitInputs(tx, unit, site)) {
 			const analysis = analyseCircuit(input);
@@ -106,10 +110,18 @@ async function compute(job: Job): Promise<{ computed: Computed[]; revision: numb
 				si: evaluateSuspects({ ...evidence, units: 'si' }),
 				ip: evaluateSuspects({ ...evidence, units: 'ip' })
 			};
+			const unlogged = notedStarts({
+				...input,
+				typed: typed.flatMap(({ circuit, body }) => (circuit === input.circuit && body.kind === 'start' ? [body] : [])),
+				covered: analysis.covered
+			});
 			computed.push({
 				analysis,
 				suspects,
-				made: analysis.starts.map((record) => ({ record, extras: extrasOf(evidence, record) }))
+				made: [
+					...analysis.starts.map((record) => ({ record, extras: extrasOf(evidence, record) })),
+					...unlogged.map((record) => ({ record, extras: NO_EXTRAS }))
+				]
 			});
 		}
 		return { computed, revision: unit.revision };

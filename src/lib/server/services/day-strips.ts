@@ -21,7 +21,8 @@ function strokeOn(row: StartRow, end: number, midnight: number, next: number): S
 		goesOn,
 		outcome: row.outcome,
 		startupTrip: row.record.startupTrip,
-		attended: row.record.attended
+		attended: row.record.attended,
+		...(row.source === 'log' ? {} : { noted: true })
 	};
 }
 

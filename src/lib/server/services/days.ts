@@ -50,6 +50,13 @@ async function pinsOf(tx: Tx, unitId: string, zone: string): Promise<Pin[]> {
 	return pins.sort((a, b) => (a.at < b.at ? -1 : 1));
 }
 
+/** Where a unit has no samples, its record of starts spans the days. */
+async function notedSpan(tx: Tx, unitId: string): Promise<{ from: number; to: number } | null> {
+	const rows = await listStarts(tx, [unitId], { source: 'noted' });
+	const [first, last] = [rows[0], rows.at(-1)];
+	return first && last ? { from: first.startedAt, to: last.endedAt ?? last.startedAt } : null;
+}
+
 const clockMinutes = (clock: string): number => Number(clock.slice(0, 2)) * 60 + Number(clock.slice(3, 5));
 
 const minuteOf = (row: StartRow, zone: string): number =>
@@ -80,8 +87,12 @@ export function tripCluster(trips: readonly number[], others: readonly number[])
 	};
 }
 
-function titleOf(rows: readonly StartRow[], cluster: Days['cluster']): string {
+function titleOf(rows: readonly StartRow[], cluster: Days['cluster'], noted: readonly StartRow[]): string {
 	const trips = rows.filter((row) => row.record.startupTrip);
+	if (rows.length === 0 && noted.length > 0) {
+		const tripped = noted.filter((row) => row.outcome === 'tripped').length;
+		return `No trend log; ${tripped} of ${noted.length} starts on record tripped`;
+	}
 	if (rows.length === 0) return 'No start in these logs yet';
 	if (trips.length === 0) {
 		const late = rows.filter((row) => row.outcome === 'tripped').length;
@@ -103,12 +114,18 @@ export async function daysOf(actor: Actor, unitId: string, query: Query, system:
 	return withOrganisation(actor.organisationId, async (tx) => {
 		const { site } = await visibleUnit(tx, actor, unitId);
 		const zone = site.timeZone;
-		const span = await sampleSpan(tx, unitId);
+		const span = (await sampleSpan(tx, unitId)) ?? (await notedSpan(tx, unitId));
 		const { from, to } = periodOf(query, span, zone);
 		const begin = dayStart(from, zone);
 		const end = dayStart(addDays(to, 1), zone);
-		const filter = { from: begin - 3 * DAY_MS, to: end, ...(query.circuit ? { circuit: query.circuit } : {}) };
-		const rows = await listStarts(tx, [unitId], filter);
+		const filter = {
+			source: 'all' as const,
+			from: begin - 3 * DAY_MS,
+			to: end,
+			...(query.circuit ? { circuit: query.circuit } : {})
+		};
+		const all = await listStarts(tx, [unitId], filter);
+		const rows = all.filter((row) => row.source === 'log');
 		const results = (await listCircuitResults(tx, [unitId])).filter(
 			(row) => !query.circuit || row.circuit === query.circuit
 		);
@@ -121,7 +138,7 @@ export async function daysOf(actor: Actor, unitId: string, query: Query, system:
 			trips.map((row) => minuteOf(row, zone)),
 			held.map((row) => minuteOf(row, zone))
 		);
-		const days = dayStrips(rows, covered, from, to, zone, covered.at(-1)?.[1] ?? end).map((strip) => {
+		const days = dayStrips(all, covered, from, to, zone, covered.at(-1)?.[1] ?? end).map((strip) => {
 			const today = inside.filter((row) => siteDate(row.startedAt, zone) === strip.date);
 			const first = today.find((row) => row.record.firstStart) ?? null;
 			const least = today.map((row) => row.record.figures.minEvapSaturation).filter((value) => value !== null);
@@ -142,7 +159,11 @@ export async function daysOf(actor: Actor, unitId: string, query: Query, system:
 			days,
 			pins: (await pinsOf(tx, unitId, zone)).filter((pin) => pin.date >= from && pin.date <= to),
 			cluster,
-			title: titleOf(inside, cluster),
+			title: titleOf(
+				inside,
+				cluster,
+				all.filter((row) => row.source !== 'log' && row.startedAt >= begin)
+			),
 			from,
 			to,
 			coverage: coverageOf(covered, begin, Math.min(end, now().getTime())),

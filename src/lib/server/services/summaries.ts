@@ -74,11 +74,13 @@ function nextVisitOf(
 }
 
 function summary(actor: Actor, unit: UnitRow, site: SiteRow, shaped: UnitSummary['unit'], from: Sources): UnitSummary {
-	const rows = from.starts.filter((row) => row.unitId === unit.id);
+	const all = from.starts.filter((row) => row.unitId === unit.id);
+	const rows = all.filter((row) => row.source === 'log');
 	const results = from.results.filter((row) => row.unitId === unit.id);
 	const covered = joinCovered(results.map((row) => row.covered));
 	const lastAt = covered.at(-1)?.[1] ?? null;
-	const to = siteDate(lastAt ?? now().getTime(), site.timeZone);
+	// Where nothing is logged the record of starts gives the last day.
+	const to = siteDate(lastAt ?? all.at(-1)?.startedAt ?? now().getTime(), site.timeZone);
 	const records = rows.map((row) => row.record);
 	const first = records.filter((record) => record.firstStart && !record.attended).slice(-10);
 	const states = from.logStates.filter((row) => row.unitId === unit.id).map((row) => row.state);
@@ -89,12 +91,13 @@ function summary(actor: Actor, unit: UnitRow, site: SiteRow, shaped: UnitSummary
 		site: siteShape(site),
 		starts: rows.length,
 		startupTrips: records.filter((record) => record.startupTrip).length,
+		noted: all.length - rows.length,
 		firstTries: countFirstTries(records),
 		lastFirst: first.map((record) => record.outcome),
 		trippedInARow: trippedInARow(records),
 		...verdictsOf(actor, results, from.settled.has(unit.id)),
 		coverage: begin === null || lastAt === null ? null : coverageOf(covered, begin, lastAt),
-		strip: dayStrips(rows, covered, addDays(to, 1 - STRIP_DAYS), to, site.timeZone, lastAt ?? 0),
+		strip: dayStrips(all, covered, addDays(to, 1 - STRIP_DAYS), to, site.timeZone, lastAt ?? 0),
 		openCase: openCaseOf(from.cases.filter((row) => row.unitId === unit.id)),
 		nextVisit: nextVisitOf(
 			from.visits.filter((row) => row.unitId === unit.id),
@@ -139,7 +142,7 @@ export async function unitSummaries(actor: Actor, siteId?: string): Promise<{ un
 		const ids = rows.map((unit) => unit.id);
 		const limits = await listLimits(tx, ids);
 		const sources: Sources = {
-			starts: await listStarts(tx, ids),
+			starts: await listStarts(tx, ids, { source: 'all' }),
 			results: await listCircuitResults(tx, ids),
 			cases: await listCases(tx, ids),
 			visits: await listVisits(tx, ids),

@@ -6,7 +6,7 @@ import { valueInForce } from '../series/hold';
 import { localSpacing } from '../series/spacing';
 import { hasReadings } from '../series/window';
 
-export type RunningSource = StartRecord['runningFrom'];
+export type RunningSource = Exclude<StartRecord['runningFrom'], 'record'>;
 
 /** On and off as read: blanks left out, so neighbours in these arrays are neighbouring readings. */
 export type RunningReadings = {

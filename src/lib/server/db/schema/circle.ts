@@ -1,3 +1,4 @@
+import type { TripKind } from '$lib/model/start';
 import type { SuspectKey } from '$lib/model/suspect';
 import type { LimitKey } from '$lib/model/unit';
 import {
@@ -268,15 +269,18 @@ export const idempotency = pgTable(
 	(t) => [primaryKey({ columns: [t.organisationId, t.key] }), ownRows()]
 );
 
-/** A unit's own trade words that name a trip kind. */
+/** Trade words that name a trip kind: a unit's own, or the whole organisation's. */
 export const tripWords = pgTable(
 	'trip_words',
 	{
 		organisationId: organisationId(),
 		id: uuid().notNull().defaultRandom(),
-		unitId: uuid().notNull(),
+		/** null: every unit of the organisation */
+		unitId: uuid(),
 		words: text().notNull(),
-		kind: text().notNull()
+		kind: text().$type<TripKind>().notNull(),
+		byName: text().notNull().default(''),
+		createdAt: instant().notNull().defaultNow()
 	},
 	(t) => [primaryKey({ columns: [t.organisationId, t.id] }), onUnit(t), ownRows()]
 );

@@ -1,6 +1,7 @@
 import type { UnitSystem } from '$lib/model/quantities';
 import type { SeriesId } from '$lib/model/signals';
-import type { StartRecord } from '$lib/model/start';
+import type { NotedBody } from '$lib/model/noted';
+import type { StartRecord, StartSource } from '$lib/model/start';
 import type { Clue, SuspectKey, SuspectsResult } from '$lib/model/suspect';
 import type { KeptFirstMover } from '$lib/model/first-mover';
 import type { Log } from '$lib/model/wire/log';
@@ -188,6 +189,80 @@ export const rememberedMappings = pgTable(
 	(t) => [primaryKey({ columns: [t.organisationId, t.siteId, t.signature] }), ownRows()]
 );
 
+/** What a person typed of a unit's starts without a trend log: a start, or a reading of the counters. */
+export const noted = pgTable(
+	'noted',
+	{
+		organisationId: organisationId(),
+		id: uuid().notNull().defaultRandom(),
+		/** the page's own key: one that is sent twice is kept once */
+		clientKey: text(),
+		unitId: uuid().notNull(),
+		circuit: text().notNull(),
+		at: epochMs().notNull(),
+		body: jsonb().$type<NotedBody>().notNull(),
+		by: uuid().notNull(),
+		byName: text().notNull(),
+		createdAt: instant().notNull().defaultNow()
+	},
+	(t) => [
+		primaryKey({ columns: [t.organisationId, t.id] }),
+		uniqueIndex().on(t.organisationId, t.clientKey),
+		index().on(t.organisationId, t.unitId, t.at),
+		foreignKey({ columns: [t.organisationId, t.unitId], foreignColumns: [units.organisationId, units.id] }).onDelete(
+			'cascade'
+		),
+		ownRows()
+	]
+);
+
+/** A log on its way in parts: what has arrived stays until it is whole, given up, or too old. */
+export const uploads = pgTable(
+	'uploads',
+	{
+		organisationId: organisationId(),
+		id: uuid().notNull().defaultRandom(),
+		unitId: uuid().notNull(),
+		files: jsonb().$type<{ name: string; bytes: number }[]>().notNull(),
+		options: jsonb().$type<Pick<LogOptions, 'timeZone' | 'mapping'> & { name: string | null }>().notNull(),
+		/** the log it became */
+		logId: uuid(),
+		createdBy: uuid().notNull(),
+		createdAt: instant().notNull().defaultNow(),
+		/** after this nothing of it is kept; each part that arrives moves it on */
+		expiresAt: instant().notNull()
+	},
+	(t) => [
+		primaryKey({ columns: [t.organisationId, t.id] }),
+		foreignKey({ columns: [t.organisationId, t.unitId], foreignColumns: [units.organisationId, units.id] }).onDelete(
+			'cascade'
+		),
+		ownRows()
+	]
+);
+
+/** Bytes of an upload that are safe in the object store: stretches of one file that follow each other. */
+export const uploadParts = pgTable(
+	'upload_parts',
+	{
+		organisationId: organisationId(),
+		uploadId: uuid().notNull(),
+		file: integer().notNull(),
+		/** the first byte's place in the file */
+		begin: bigint({ mode: 'number' }).notNull(),
+		bytes: bigint({ mode: 'number' }).notNull(),
+		key: text().notNull()
+	},
+	(t) => [
+		primaryKey({ columns: [t.organisationId, t.uploadId, t.file, t.begin] }),
+		foreignKey({
+			columns: [t.organisationId, t.uploadId],
+			foreignColumns: [uploads.organisationId, uploads.id]
+		}).onDelete('cascade'),
+		ownRows()
+	]
+);
+
 export const starts = pgTable(
 	'starts',
 	{
@@ -198,6 +273,8 @@ export const starts = pgTable(
 		startedAt: epochMs().notNull(),
 		endedAt: epochMs(),
 		outcome: text().$type<StartRecord['outcome']>().notNull(),
+		/** starts without a trend log stand beside the others and are read only where they are asked for */
+		source: text().$type<StartSource>().notNull().default('log'),
 		record: jsonb().$type<StartRecord>().notNull(),
 		/** what the analysis says about this start beside its figures */
 		extras: jsonb().$type<StartExtras>().notNull()

@@ -1,5 +1,6 @@
 import { OUTCOMES } from '$lib/model/start';
-import { instantSchema, pageQuerySchema } from '$lib/model/wire/common';
+import { idSchema, instantSchema, pageQuerySchema } from '$lib/model/wire/common';
+import { notedInputSchema, recordSchema } from '$lib/model/wire/noted';
 import { startCorrectionSchema, startSchema, suspectsSchema } from '$lib/model/wire/start';
 import { firstMoverSchema, startSheetSchema } from '$lib/model/wire/start-sheet';
 import { tracesSchema } from '$lib/model/wire/views';
@@ -24,6 +25,9 @@ export const listStarts = operation({
 		to: instantSchema.optional(),
 		outcome: z.enum(OUTCOMES).optional(),
 		circuit: z.string().optional(),
+		source: z.enum(['log', 'noted', 'all']).default('log').meta({
+			description: 'those of trend logs, those known without one (typed, alarm lists), or both'
+		}),
 		units
 	}),
 	response: z.object({ starts: z.array(startSchema), nextCursor: z.string().nullable() })
@@ -85,4 +89,28 @@ export const unitTraces = operation({
 	query: traceQuery.extend({ from: instantSchema, to: instantSchema, circuit: z.string().optional() }),
 	response: tracesSchema,
 	responseTypes: [TRACES_BINARY]
+});
+export const getRecord = operation({
+	method: 'get',
+	path: '/api/units/{unit}/record',
+	summary: 'Starts without a trend log: typed, from alarm lists, and what the counters tell',
+	right: 'read',
+	query: z.object({ units }),
+	response: recordSchema
+});
+export const addNoted = operation({
+	method: 'post',
+	path: '/api/units/{unit}/record',
+	summary: 'Types in a start, with a handful of readings, or a reading of the starts and hours counters',
+	right: 'field',
+	body: notedInputSchema,
+	response: z.object({ id: idSchema }),
+	status: 201
+});
+export const removeNoted = operation({
+	method: 'delete',
+	path: '/api/units/{unit}/record/{entry}',
+	summary: 'Takes a typed entry away',
+	right: 'field',
+	status: 204
 });

@@ -5,6 +5,7 @@ import { pageOf } from '$lib/server/web/paging';
 
 export const GET = endpoint(listStarts, async ({ actor, params, query, units }) => {
 	const filter = {
+		source: query.source,
 		...(query.from ? { from: Date.parse(query.from) } : {}),
 		...(query.to ? { to: Date.parse(query.to) } : {}),
 		...(query.outcome ? { outcome: query.outcome } : {}),
