@@ -3,6 +3,7 @@ import { QueryClient, queryOptions } from '@tanstack/svelte-query';
 import type { UnitSystem } from '$lib/model/quantities';
 import type { Log, LogPreview } from '$lib/model/wire/log';
 import type { Method } from '$lib/model/wire/method';
+import type { UnitRecord } from '$lib/model/wire/noted';
 import type { Site, Unit } from '$lib/model/wire/site-unit';
 import type { Start } from '$lib/model/wire/start';
 import type { Days, UnitSummary } from '$lib/model/wire/views';
@@ -91,6 +92,24 @@ export function startsQuery(fetcher: typeof fetch, unit: string, window: Window,
 		queryKey: ['units', unit, 'starts', window, system],
 		queryFn: () =>
 			getJson<StartsPage>(fetcher, pathWith(`/api/units/${unit}/starts`, { ...window, units: system, limit: '5000' }))
+	});
+}
+
+/** Starts with and without a trend log, as one list. */
+export function allStartsQuery(fetcher: typeof fetch, unit: string, window: Window, system: UnitSystem) {
+	return queryOptions({
+		queryKey: ['units', unit, 'starts', 'all', window, system],
+		queryFn: () => {
+			const path = pathWith(`/api/units/${unit}/starts`, { ...window, source: 'all', units: system, limit: '5000' });
+			return getJson<StartsPage>(fetcher, path);
+		}
+	});
+}
+
+export function recordQuery(fetcher: typeof fetch, unit: string, system: UnitSystem) {
+	return queryOptions({
+		queryKey: ['units', unit, 'record', system],
+		queryFn: () => getJson<UnitRecord>(fetcher, pathWith(`/api/units/${unit}/record`, { units: system }))
 	});
 }
 

@@ -1,4 +1,5 @@
 import type { ChangeInputSent, CheckInputSent } from '$lib/model/wire/field';
+import type { NotedInputSent } from '$lib/model/wire/noted';
 
 /**
  * What a person recorded and the server has not confirmed yet, kept in the browser (IndexedDB). Everything goes through
@@ -19,6 +20,7 @@ type Common = {
 };
 export type UnsentCheck = Common & { what: 'check'; body: CheckInputSent; line: string };
 export type UnsentChange = Common & { what: 'change'; body: ChangeInputSent; line: string };
+export type UnsentNoted = Common & { what: 'noted'; body: NotedInputSent; line: string };
 export type UnsentPhoto = Common & {
 	what: 'photo';
 	/** the client key of the check it belongs to */
@@ -28,7 +30,7 @@ export type UnsentPhoto = Common & {
 	caption: string;
 	kind: 'camera' | 'thermal' | 'sight-glass';
 };
-export type Unsent = UnsentCheck | UnsentChange | UnsentPhoto;
+export type Unsent = UnsentCheck | UnsentChange | UnsentNoted | UnsentPhoto;
 
 const DATABASE = 'firstpull';
 const STORE = 'unsent';

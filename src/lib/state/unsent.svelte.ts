@@ -4,6 +4,8 @@ import { dropUnsent, keepUnsent, listUnsent, type Unsent } from './unsent-store'
 
 const AGAIN_MS = 15_000;
 
+const PATHS = { check: 'checks', change: 'changes', noted: 'record' } as const;
+
 async function post(item: Unsent): Promise<Response> {
 	if (item.what === 'photo') {
 		const query = new URLSearchParams({
@@ -18,7 +20,7 @@ async function post(item: Unsent): Promise<Response> {
 			body: item.picture
 		});
 	}
-	return fetch(`/api/units/${item.unitId}/${item.what === 'check' ? 'checks' : 'changes'}`, {
+	return fetch(`/api/units/${item.unitId}/${PATHS[item.what]}`, {
 		method: 'POST',
 		headers: { 'content-type': 'application/json' },
 		body: JSON.stringify({ ...item.body, clientKey: item.key })

@@ -77,5 +77,12 @@ describe('days of a site as instants', () => {
 		expect(clock.dayBegins('2024-07-01', 'Australia/Lord_Howe')).toBe('2024-06-30T13:30:00.000Z');
 		expect(clock.dayEnds('2026-12-31', 'UTC')).toBe('2027-01-01T00:00:00.000Z');
 	});
+	// IANA tz: New York is five hours behind UTC in winter; 2024-11-03 01:30 comes twice, at 05:30Z first.
+	it('gives the instant of a clock of the site, the first of a repeated hour', () => {
+		expect(clock.siteInstant('2025-01-06T07:15', 'America/New_York')).toBe('2025-01-06T12:15:00.000Z');
+		expect(clock.siteInstant('2024-11-03T01:30', 'America/New_York')).toBe('2024-11-03T05:30:00.000Z');
+		expect(clock.siteInstant('2024-11-03T03:30', 'America/New_York')).toBe('2024-11-03T08:30:00.000Z');
+		expect(clock.siteInstant('', 'UTC')).toBeNull();
+	});
 	it('refuses what is no date', () => expect(() => clock.dayBegins('2026-13-01', 'UTC')).toThrow(RangeError));
 });

@@ -177,6 +177,21 @@ export function dayBegins(date: string, timeZone: string): string {
 	return new Date(midnight - zoneOffset(guess, timeZone)).toISOString();
 }
 
+/**
+ * The instant of a clock of the site as an input gives it (`YYYY-MM-DDTHH:mm`, seconds or not), ISO UTC; null when it is
+ * none. Of a repeated hour the first is taken.
+ */
+export function siteInstant(local: string, timeZone: string): string | null {
+	const wall = Date.parse(`${local}Z`);
+	if (!/^\d{4}-\d\d-\d\dT\d\d:\d\d(:\d\d)?$/.test(local) || Number.isNaN(wall)) return null;
+	// A zone changes its clock at most once in these two days, so one of both offsets holds.
+	const before = wall - zoneOffset(wall - 86_400_000, timeZone);
+	const after = wall - zoneOffset(wall + 86_400_000, timeZone);
+	const shows = (at: number): boolean => at + zoneOffset(at, timeZone) === wall;
+	const found = [before, after].filter(shows);
+	return new Date(found.length > 0 ? Math.min(...found) : before).toISOString();
+}
+
 /** The instant a date of the site ends, ISO UTC: the beginning of the next. */
 export function dayEnds(date: string, timeZone: string): string {
 	const next = new Date(instant(`${date}T00:00:00Z`) + 86_400_000).toISOString().slice(0, 10);

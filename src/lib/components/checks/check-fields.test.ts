@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { CHECK_KINDS, READING_SCHEMAS } from '$lib/model/wire/field';
-import { CHECK_FIELDS, fieldMeasure, numberTyped, readingsOf } from './check-fields';
+import { CHECK_FIELDS, fieldMeasure, readingsOf } from './check-fields';
 
 const AIR = 101.325;
 
@@ -40,13 +40,6 @@ describe('the forms', () => {
 			const known = Object.keys(READING_SCHEMAS[kind].shape);
 			for (const field of CHECK_FIELDS[kind]) expect(known, `${kind}.${field.key}`).toContain(field.key);
 		}
-	});
-
-	it('take a comma, a true minus, and refuse words', () => {
-		expect(numberTyped(' 7,5 ')).toBe(7.5);
-		expect(numberTyped('−2')).toBe(-2);
-		expect(numberTyped('')).toBeNull();
-		expect(numberTyped('about 3')).toBeNaN();
 	});
 
 	it('measure heights in inches or millimetres', () => {

@@ -3,6 +3,7 @@ import { isSignalKey, SIGNAL_KEYS, SIGNALS } from '$lib/model/signals';
 import { SUSPECT_KEYS } from '$lib/model/suspect';
 import type { CheckKind } from '$lib/model/wire/field';
 import { SUSPECT_WORDS } from '$lib/model/words';
+import { numberTyped } from '$lib/utils/number-typed';
 
 /** The forms of the field checks, declared: what each asks, in which unit of measure. */
 
@@ -154,13 +155,6 @@ export function fieldMeasure(
 
 /** What a form holds: every field as it was typed. */
 export type Typed = Record<string, string>;
-
-/** A number as it was typed, comma or point; null for nothing, NaN for what is none. */
-export function numberTyped(text: string): number | null {
-	const plain = text.trim().replace('−', '-').replace(',', '.');
-	if (plain === '') return null;
-	return /^[+-]?(\d+\.?\d*|\.\d+)$/.test(plain) ? Number(plain) : Number.NaN;
-}
 
 export type FormReadings = { readings: Record<string, unknown>; errors: Record<string, string> };
 

@@ -106,6 +106,6 @@ describe('startsCsv', () => {
 		const lines = startsCsv(starts, { temperature: '°C' }).split('\r\n');
 		expect(lines[0]).toContain('"Evap. saturation, least, °C"');
 		expect(lines).toHaveLength(5);
-		expect(lines[2]).toContain(',tripped,,,yes,no,2,no,40000,5,5,');
+		expect(lines[2]).toContain(',tripped,,,yes,no,2,no,trend log,40000,5,5,');
 	});
 });

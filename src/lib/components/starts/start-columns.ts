@@ -102,7 +102,8 @@ export function filterStarts(starts: readonly Start[], filter: StartFilter): Sta
 }
 
 /** The finding as the sheet's heading. */
-export function startsTitle(starts: readonly Start[]): string {
+export function startsTitle(starts: readonly Start[], noted = 0): string {
+	if (starts.length === 0 && noted > 0) return `No trend log in this period; ${noted} on record without one`;
 	if (starts.length === 0) return 'No start in this period';
 	const trips = starts.filter((start) => start.outcome === 'tripped').length;
 	const early = starts.filter((start) => start.startupTrip).length;
@@ -114,7 +115,7 @@ export function startsTitle(starts: readonly Start[]): string {
 /** Every start with every figure as CSV; the header names the unit of measure, the clock is UTC. */
 export function startsCsv(starts: readonly Start[], units: Readonly<Record<string, string>>): string {
 	const header = ['start (UTC)', 'end (UTC)', 'circuit', 'outcome', 'trip kind', 'trip basis', 'start-up trip'];
-	header.push('first start', 'try', 'attended', 'rest, s', 'uncertainty, s', 'sampled every, s');
+	header.push('first start', 'try', 'attended', 'known from', 'rest, s', 'uncertainty, s', 'sampled every, s');
 	for (const key of FIGURE_KEYS) {
 		const unit = FIGURES[key] === 'duration' ? 's' : (units[FIGURES[key]] ?? '');
 		header.push(unit ? `${FIGURE_WORDS[key]}, ${unit}` : FIGURE_WORDS[key]);
@@ -131,6 +132,7 @@ export function startsCsv(starts: readonly Start[], units: Readonly<Record<strin
 		yes(start.firstStart),
 		start.tryNumber,
 		yes(start.attended),
+		start.source === 'log' ? 'trend log' : start.source === 'typed' ? 'typed in' : 'alarm list',
 		start.restSeconds,
 		start.uncertaintySeconds,
 		start.spacingSeconds,
