@@ -55,6 +55,12 @@ function limitWords(circuit: Circuit, stretch: Interval): string | null {
 	return text === '' ? '' : (NAMES.find(([words]) => words.test(text))?.[1] ?? text);
 }
 
+/** Does the log name a limit, other than a loading ramp, over most of a stretch? */
+export function namesLimit(circuit: Circuit, stretch: Interval): boolean {
+	const said = limitWords(circuit, stretch);
+	return said !== null && said !== '' && said !== 'loading ramp';
+}
+
 /** For each quantity a controller may limit on: its name when near, false when not, null when not known. */
 function nearLimits(circuit: Circuit, stretch: Interval, level: number): (string | false | null)[] {
 	const at = stretch.from;

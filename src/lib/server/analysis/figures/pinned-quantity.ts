@@ -2,7 +2,8 @@ import type { Stall, StartRecord } from '$lib/model/start';
 import type { Series } from '$lib/model/series';
 import type { Circuit } from '../circuit';
 import { median, quantile } from '../series/numbers';
-import { readingsWithin } from '../series/window';
+import { valueInForce } from '../series/hold';
+import { extreme, readingsWithin } from '../series/window';
 
 /** Three flat stretches at the same value but at different capacities show that this quantity held them [ours]. */
 const LEAST = 3;
@@ -78,6 +79,7 @@ function markPinned(circuit: Circuit, starts: readonly StartRecord[], held: Held
 	const levels = pinned.map((stall) => stall.levelPct);
 	if (Math.max(...levels) - Math.min(...levels) < OTHER_CAPACITY) return;
 	if (!endsThere(circuit, held, series, usual)) return;
+	if (held.trace === 'evapSaturation' && !apartFromWater(circuit, pinned)) return;
 	for (const stall of pinned) {
 		stall.verdict = 'limited';
 		stall.limiting = held.name;
@@ -92,7 +94,25 @@ function endsThere(circuit: Circuit, held: Held, series: Series, usual: number):
 		const readings = readingsWithin(series, Math.min(run.startedAt + held.from * 1000, run.lastOn), run.lastOn).v;
 		const past = Float64Array.from(readings, (value) => held.side * (value - usual));
 		furthest = Math.max(furthest, quantile(past, 0.98) ?? -Infinity);
-		nearest = Math.min(nearest, quantile(past, 0.05) ?? Infinity);
+		const away = extreme(readingsWithin(series, run.startedAt, run.lastOn), held.side);
+		if (away !== null) nearest = Math.min(nearest, held.side * (away.value - usual));
 	}
 	return furthest <= held.beyond(usual) && -nearest >= held.moves;
+}
+
+/** With the water over its setpoint by this much, K, a saturation that stands is held by itself [ours]. */
+const WATER_OVER = 0.8;
+
+/**
+ * Is the evaporator's saturation held by itself, not by the water? Water at its setpoint holds the saturation under it
+ * as steady as a limit does.
+ */
+function apartFromWater(circuit: Circuit, stalls: readonly Stall[]): boolean {
+	const { evapWaterOut, waterSetpoint } = circuit.map;
+	if (evapWaterOut === undefined || waterSetpoint === undefined) return true;
+	const over = stalls.map((stall) => {
+		const water = median(readingsWithin(evapWaterOut, stall.from, stall.to).v) ?? NaN;
+		return water - valueInForce('waterSetpoint', waterSetpoint, stall.to, 900);
+	});
+	return (median(over.filter((value) => !Number.isNaN(value))) ?? Infinity) >= WATER_OVER;
 }

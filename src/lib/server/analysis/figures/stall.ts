@@ -3,7 +3,7 @@ import type { Stall } from '$lib/model/start';
 import { valueInForce } from '../series/hold';
 import { median, quantile, sampledQuantile } from '../series/numbers';
 import { hasReadings, readingsWithin } from '../series/window';
-import { limitingOver } from './limiting';
+import { limitingOver, namesLimit } from './limiting';
 import type { FigureContext } from './sheet';
 import { goodStretches, sliding, type Sliding } from './sliding';
 
@@ -39,7 +39,10 @@ export function findStall(context: FigureContext, stage = 0): Stall | null {
 		const fit = view.load.fitWithin(a, b, 0.75);
 		if (fit === null || fit.mean >= full || Math.abs(fit.slope) * 300 > DRIFT || fit.deviation > DEVIATION)
 			return false;
-		return moreWanted(view, { from: a, to: b }, fit.mean);
+		// Demand may be shown behind the limit: a log that names one says by itself that more was wanted.
+		const stretch = { from: a, to: b };
+		if (moreWanted(view, stretch, fit.mean)) return true;
+		return namesLimit(context.circuit, stretch) && !(view.stepped && setpointMet(waterOver(view, stretch)));
 	};
 	const width = Math.max(FLAT_MS, 2000 * context.spacing);
 	const stretches = goodStretches(from, to, width, 30_000, held).filter((s) => !isRamp(context, load, s));
@@ -97,7 +100,15 @@ function moreWanted(view: View, stretch: Interval, level: number): boolean {
 		if (before < level + 10 || view.load.mostBefore(stretch.from) > level + 4) return false;
 	}
 	const water = waterOver(view, stretch);
-	return water !== null && water > DEAD_BAND + WATER_ABOVE;
+	return water !== null && water > DEAD_BAND + WATER_ABOVE && !comingDown(view, stretch);
+}
+
+/** Water that still falls this fast is being cooled enough, K/min [ours]. */
+const COMING_DOWN = 0.15;
+
+function comingDown(view: View, stretch: Interval): boolean {
+	const slope = view.water?.fitWithin(stretch.from, stretch.to, 0.5)?.slope ?? 0;
+	return slope * 60 <= -COMING_DOWN;
 }
 
 /** Mean leaving water minus setpoint over a stretch, K; null where either is not logged. */

@@ -1,3 +1,4 @@
+import type { Series } from '$lib/model/series';
 import type { Trip, TripKind } from '$lib/model/start';
 import type { Circuit } from '../circuit';
 import { WATCHES, type Watch } from '../figures/protections';
@@ -26,7 +27,7 @@ export function inferTrip(
 ): Trip | null {
 	if (spacing > 60 || evidence.loaded !== true || evidence.unloaded === true || evidence.valveClosed) return null;
 	if (evidence.commandFellAt !== null) return null;
-	const hint = flowHint(circuit, run) ?? bestHint(circuit, run, stop, spacing, learned);
+	const hint = flowHint(circuit, run, stop) ?? bestHint(circuit, run, stop, spacing, learned);
 	if (hint === null) return null;
 	if (evidence.waterAbove === false && hint.kind !== 'low-leaving-water' && hint.kind !== 'loss-of-water-flow')
 		return null;
@@ -46,8 +47,18 @@ export function wasPastLimit(circuit: Circuit, run: Run, stop: number, spacing: 
 	});
 }
 
-/** The flow proof was gone while it still ran. */
-function flowHint(circuit: Circuit, run: Run): Hint | null {
+/**
+ * Did a proof open in the row of the stop and close again within 5 min, so that no pump was stopped? A pump that goes off
+ * with the compressor leaves its proof open.
+ */
+function openedAtStop(series: Series, run: Run, stop: number): boolean {
+	const after = readingsWithin(series, run.lastOn + 1, stop + 300_000);
+	const closes = after.v.findIndex((v) => v === 1);
+	return after.v[0] === 0 && (after.t[0] ?? Infinity) <= stop && closes > 0;
+}
+
+/** The flow proof was gone while it still ran, or opened as it stopped with the pump running on. */
+function flowHint(circuit: Circuit, run: Run, stop: number): Hint | null {
 	for (const [proof, name] of [
 		['evapFlowProof', 'Evaporator'],
 		['condFlowProof', 'Condenser']
@@ -56,7 +67,8 @@ function flowHint(circuit: Circuit, run: Run): Hint | null {
 		if (series === undefined) continue;
 		const readings = readingsWithin(series, run.startedAt, run.lastOn);
 		const last = readings.v.at(-1);
-		if (last === 0 && readings.v.some((v) => v === 1) && run.lastOn - (readings.t.at(-1) ?? 0) <= 60_000) {
+		const whileRunning = last === 0 && run.lastOn - (readings.t.at(-1) ?? 0) <= 60_000;
+		if (readings.v.some((v) => v === 1) && (whileRunning || openedAtStop(series, run, stop))) {
 			return {
 				kind: 'loss-of-water-flow',
 				sureness: 0.85,

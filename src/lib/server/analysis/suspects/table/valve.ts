@@ -173,7 +173,7 @@ export const valveOverfeeding: SuspectRow = {
 		wetReading('superheat-near-zero', 0.5, 'Superheat', 'superheat', 'superheat', () => [2.6, 0.8], dx),
 		wetReading(
 			'discharge-superheat-low',
-			0.5,
+			0.55,
 			'Discharge superheat',
 			'settledDischargeSuperheat',
 			'dischargeSuperheat',

@@ -31,8 +31,17 @@ function deltaRatio(context: Context): { value: number; sureness: number; design
 	const value = median(ratios);
 	// A plant with variable flow turns it down at part load on purpose: unless flow is logged, only full load tells.
 	const told = context.reader.has('evapFlow') || (median(loads) ?? 0) >= FLOW_IS_FULL;
-	const sureness = (design === null ? 0.6 : 1) * (told ? 1 : 0.5);
+	const sureness = (design === null ? 0.6 : 1) * (told ? 1 : 0.5) * flowAllows(context);
 	return value === null ? null : { value, sureness, designKnown: design !== null, count: ratios.length };
+}
+
+/** The most flow of a run that is no spike (its 95th percentile), the highest of the latest runs. */
+function fullestFlow(context: Context): number {
+	const runs = context.starts.slice(-20).map((start) => {
+		const to = Math.min(start.endedAt ?? Infinity, start.startedAt + 12 * 3_600_000);
+		return quantile(context.reader.values('evapFlow', start.startedAt + 60_000, to), 0.95) ?? 0;
+	});
+	return Math.max(0, ...runs);
 }
 
 /** Flow over design, else over the unit's own usual (90th percentile of its starts). */
@@ -45,7 +54,7 @@ function flowShare(
 	const own = quantile(context.window('evapFlow', 10, 600, context.starts)?.values ?? [], 0.9);
 	const reference = design ?? own;
 	if (!reference) return null;
-	const most = quantile(context.window('evapFlow', 60, 3600, context.starts)?.values ?? [], 0.9) ?? 0;
+	const most = fullestFlow(context);
 	const held = context.window('evapFlow', 10, 600, context.held);
 	const asHeld = context.bad.length === 0 || (held !== null && held.value < bad.value + 0.1 * reference);
 	return {
@@ -56,6 +65,13 @@ function flowShare(
 		count: bad.starts.length,
 		from: design ? 'design' : 'its own usual flow'
 	};
+}
+
+/** How far a logged flow leaves a wide water difference to low flow, 0…1: not when it is good, little when it is turned down. */
+function flowAllows(context: Context): number {
+	const flow = flowShare(context);
+	if (!flow) return 1;
+	return (flow.byPlant ? 0.3 : 1) * (flow.from === 'design' ? ramp(flow.value, 0.97, 0.85) : 1);
 }
 
 const flowLow: ClueRule = {
