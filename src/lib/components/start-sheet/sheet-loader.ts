@@ -25,6 +25,11 @@ export class SheetLoader {
 		return wanted;
 	}
 
+	/** Lets the next look ask the server again: something was written on this start. */
+	forget(): void {
+		this.#known.clear();
+	}
+
 	/** The page's part of another start; its figures stand beside this one's. */
 	#sheetOf(id: string): Promise<StartSheet> {
 		const key = `${id} ${this.sheet.units}`;

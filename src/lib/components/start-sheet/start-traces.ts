@@ -22,7 +22,7 @@ export type StartTrace = {
 	v: Float32Array;
 };
 
-export type Mark = { kind: 'start' | 'trip' | 'stop' | 'alarm' | 'change'; at: number; text: string };
+export type Mark = { kind: 'start' | 'trip' | 'stop' | 'alarm' | 'change' | 'note'; at: number; text: string };
 
 /** All traces of one start over one stretch of time. */
 export type StartTraces = {

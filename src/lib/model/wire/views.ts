@@ -122,7 +122,11 @@ export const tracesSchema = z
 		),
 		gaps: z.array(z.object({ from: instantSchema, to: instantSchema })),
 		marks: z.array(
-			z.object({ kind: z.enum(['start', 'trip', 'stop', 'alarm', 'change']), at: instantSchema, text: z.string() })
+			z.object({
+				kind: z.enum(['start', 'trip', 'stop', 'alarm', 'change', 'note']),
+				at: instantSchema,
+				text: z.string()
+			})
 		),
 		missing: z.array(z.string()),
 		units: unitsSchema

@@ -3,6 +3,7 @@ import type { Actor } from '$lib/model/people';
 import { apiMeasure, fromStored, MEASURES, type Quantity, type UnitSystem } from '$lib/model/quantities';
 import type { Series, SeriesMap } from '$lib/model/series';
 import { DERIVED, DERIVED_KEYS, isSignalKey, SIGNALS, type DerivedKey, type TraceKey } from '$lib/model/signals';
+import { READING_SCHEMAS } from '$lib/model/wire/field';
 import type { Traces } from '$lib/model/wire/views';
 import { reduceTrace } from '$lib/server/analysis/reduce';
 import { deriveSeries, saturationsOf } from '$lib/server/analysis/series/derived';
@@ -10,7 +11,7 @@ import { firstAtOrAfter, lastAtOrBefore } from '$lib/server/analysis/series/sear
 import { isGapBefore, spacingWithin } from '$lib/server/analysis/series/spacing';
 import { hasReadings } from '$lib/server/analysis/series/window';
 import type { Window } from '$lib/server/repositories/blocks';
-import { listChanges } from '$lib/server/repositories/circle';
+import { listChanges, listChecks } from '$lib/server/repositories/circle';
 import type { UnitRow } from '$lib/server/repositories/plant';
 import { listStarts, type StartRow } from '$lib/server/repositories/starts';
 import { withOrganisation, type Tx } from '$lib/server/repositories/transaction';
@@ -134,7 +135,12 @@ async function tracesOf({ tx, unit, circuit, window, system }: Source, query: Tr
 	};
 }
 
-/** Starts, trips, stops, alarms and changes inside the window, in time order. */
+const noteText = (readings: unknown): string => {
+	const note = READING_SCHEMAS.note.safeParse(readings);
+	return note.success ? note.data.text : '';
+};
+
+/** Starts, trips, stops, alarms, changes and notes inside the window, in time order. */
 async function marksOf({ tx, unit, circuit, window }: Source): Promise<Traces['marks']> {
 	const marks: Traces['marks'] = [];
 	const add = (kind: Traces['marks'][number]['kind'], at: number, text: string): void => {
@@ -152,6 +158,10 @@ async function marksOf({ tx, unit, circuit, window }: Source): Promise<Traces['m
 		if (text !== '' && text !== alarm.text[i - 1]) add('alarm', alarm.t[i] ?? NaN, text);
 	});
 	for (const change of await listChanges(tx, unit.id)) add('change', change.at.getTime(), change.text);
+	for (const check of await listChecks(tx, unit.id)) {
+		const here = check.circuit === null || check.circuit === circuit;
+		if (check.kind === 'note' && here) add('note', check.at.getTime(), noteText(check.readings));
+	}
 	return marks.sort((a, b) => (a.at < b.at ? -1 : a.at > b.at ? 1 : 0));
 }
 

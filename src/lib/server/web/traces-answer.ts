@@ -12,7 +12,7 @@ export async function tracesAnswer(request: Request, traces: BinaryTraces): Prom
 	const body = binary ? packTraces(traces) : Buffer.from(JSON.stringify(plainTraces(traces)));
 	const headers: Record<string, string> = {
 		'content-type': binary ? TRACES_BINARY : 'application/json',
-		'cache-control': 'private, max-age=5',
+		'cache-control': 'private, no-cache',
 		vary: 'accept, accept-encoding'
 	};
 	const accepts = request.headers.get('accept-encoding') ?? '';
