@@ -13,6 +13,7 @@ import { tellLateLogs } from '$lib/server/services/deliveries';
 import { sendDigests } from '$lib/server/services/digest';
 import { sendMail, sweepMails } from '$lib/server/services/mails';
 import { unfinished } from '$lib/server/services/recovery';
+import { sweepUploads } from '$lib/server/services/uploads';
 import { closeDatabase } from '$lib/server/repositories/transaction';
 import { fileURLToPath } from 'node:url';
 import { ThreadPool } from './thread-pool';
@@ -43,6 +44,7 @@ async function main(): Promise<void> {
 	const sweep = async (): Promise<void> => {
 		for (const log of await unfinished()) await enqueueReading(log);
 		await sweepMails();
+		await sweepUploads();
 	};
 	await sweepSafely(sweep);
 	setInterval(() => void sweepSafely(sweep), SWEEP_MS).unref();

@@ -1,28 +1,75 @@
 import type { Log } from '$lib/model/wire/log';
 import type { Problem } from '$lib/model/wire/common';
+import { ApiError } from './api';
+import { IN_PARTS_FROM, sendInParts } from './upload-parts';
 
-/** Where an upload is: on its way, in the store's hands, or refused. */
-export type UploadState = 'sending' | 'storing' | 'sent' | 'failed' | 'stopped';
+/** Where an upload is: on its way, waiting for a connection, in the store's hands, or refused. */
+export type UploadState = 'sending' | 'waiting' | 'storing' | 'sent' | 'failed' | 'stopped';
 
 /**
  * One upload of one or several files that make one log. Bytes are counted as the connection takes them
- * (XMLHttpRequest: fetch cannot tell), so the stroke shows what has left this device and no more.
+ * (XMLHttpRequest: fetch cannot tell), so the stroke shows what has left this device and no more. Big ones go in parts
+ * and go on where a broken connection stopped them.
  */
 export class Upload {
 	readonly names: readonly string[];
 	readonly total: number;
+	/** Goes in parts. */
+	readonly large: boolean;
 	state = $state<UploadState>('sending');
 	sent = $state(0);
+	/** Bytes that an earlier try had brought already. */
+	resumedFrom = $state(0);
 	log: Log | null = $state(null);
 	problem: Problem | null = $state(null);
-	readonly #request = new XMLHttpRequest();
+	readonly #stop = new AbortController();
 
 	constructor(unit: string, files: readonly File[], done: (upload: Upload) => void) {
 		this.names = files.map((file) => file.name);
 		this.total = files.reduce((sum, file) => sum + file.size, 0);
+		this.large = this.total >= IN_PARTS_FROM;
+		if (this.large) void this.#inParts(unit, files, done);
+		else this.#inOne(unit, files, done);
+	}
+
+	/** Stops sending; what has arrived is thrown away by the server. */
+	stop(): void {
+		this.#stop.abort();
+	}
+
+	async #inParts(unit: string, files: readonly File[], done: (upload: Upload) => void): Promise<void> {
+		const report = {
+			sent: (bytes: number) => (this.sent = Math.min(bytes, this.total)),
+			resumed: (bytes: number) => (this.resumedFrom = bytes),
+			waiting: (waits: boolean) => (this.state = waits ? 'waiting' : 'sending'),
+			storing: () => (this.state = 'storing')
+		};
+		try {
+			this.#took(await sendInParts(unit, files, report, this.#stop.signal));
+		} catch (error) {
+			if (this.#stop.signal.aborted) this.state = 'stopped';
+			else this.#failed(error);
+		}
+		done(this);
+	}
+
+	#took(log: Log): void {
+		this.state = 'sent';
+		this.sent = this.total;
+		this.log = log;
+	}
+
+	#failed(error: unknown): void {
+		this.state = 'failed';
+		const title = error instanceof Error ? error.message : 'It could not be sent.';
+		this.problem = error instanceof ApiError ? error.problem : { type: 'about:blank', title, status: 0 };
+	}
+
+	#inOne(unit: string, files: readonly File[], done: (upload: Upload) => void): void {
 		const body = new FormData();
 		for (const file of files) body.append('file', file, file.name);
-		const request = this.#request;
+		const request = new XMLHttpRequest();
+		this.#stop.signal.addEventListener('abort', () => request.abort());
 		request.open('POST', `/api/units/${unit}/logs?mapping=ask`);
 		request.setRequestHeader('accept', 'application/json');
 		request.setRequestHeader('idempotency-key', crypto.randomUUID());
@@ -33,14 +80,12 @@ export class Upload {
 		request.upload.onload = () => {
 			if (this.state === 'sending') this.state = 'storing';
 		};
-		request.onload = () => this.#answer(done);
+		request.onload = () => {
+			this.#answer(request);
+			done(this);
+		};
 		request.onerror = () => {
-			this.state = 'failed';
-			this.problem = {
-				type: 'about:blank',
-				title: 'The connection broke. Nothing was kept; send it again.',
-				status: 0
-			};
+			this.#failed(new Error('The connection broke. Nothing was kept; send it again.'));
 			done(this);
 		};
 		request.onabort = () => {
@@ -50,23 +95,14 @@ export class Upload {
 		request.send(body);
 	}
 
-	/** Stops sending; what has arrived is thrown away by the server. */
-	stop(): void {
-		this.#request.abort();
-	}
-
-	#answer(done: (upload: Upload) => void): void {
-		const body: unknown = parse(this.#request.responseText);
-		if (this.#request.status === 202 && typeof body === 'object' && body !== null && 'log' in body) {
-			this.state = 'sent';
-			this.sent = this.total;
-			this.log = body.log as Log;
-		} else {
-			this.state = 'failed';
-			const fallback = { type: 'about:blank', title: `The server answered ${this.#request.status}` };
-			this.problem = { ...fallback, status: this.#request.status, ...(body as Partial<Problem> | null) };
+	#answer(request: XMLHttpRequest): void {
+		const body: unknown = parse(request.responseText);
+		if (request.status === 202 && typeof body === 'object' && body !== null && 'log' in body) {
+			this.#took(body.log as Log);
+			return;
 		}
-		done(this);
+		const fallback = { type: 'about:blank', title: `The server answered ${request.status}` };
+		this.#failed(new ApiError({ ...fallback, status: request.status, ...(body as Partial<Problem> | null) }));
 	}
 }
 

@@ -7,12 +7,14 @@ import { createWriteStream } from 'node:fs';
 import { mkdir, unlink } from 'node:fs/promises';
 import { join } from 'node:path';
 import { Readable, Transform } from 'node:stream';
-import { pipeline } from 'node:stream/promises';
+import { once } from 'node:events';
+import { finished, pipeline } from 'node:stream/promises';
 
 /** A file that has arrived, on disk beside the store until the log is taken in. */
 export type IncomingFile = { name: string; path: string; bytes: number; sha256: string };
 
-const SNIFF = 4096;
+/** So many first bytes show whether a file can be a log at all. */
+export const SNIFF_BYTES = 4096;
 
 async function incomingPath(): Promise<string> {
 	const folder = join(config().DATA_DIR, 'incoming');
@@ -21,7 +23,7 @@ async function incomingPath(): Promise<string> {
 }
 
 /** A base name without path or control characters. */
-function safeName(name: string): string {
+export function safeName(name: string): string {
 	const base =
 		name
 			.replaceAll('\\', '/')
@@ -53,7 +55,7 @@ export async function receiveFile(source: Readable, name: string): Promise<Incom
 					throw new AppError('too-large', `A log may have ${Math.floor(limit / 1024 ** 2)} MiB at most.`);
 				if (head) {
 					head = Buffer.concat([head, chunk]);
-					if (head.length >= SNIFF) {
+					if (head.length >= SNIFF_BYTES) {
 						look(head);
 						head = null;
 					}
@@ -80,6 +82,33 @@ export async function receiveFile(source: Readable, name: string): Promise<Incom
 		throw error;
 	}
 	return { name: safeName(name), path, bytes, sha256: hash.digest('hex') };
+}
+
+/**
+ * Streams one part of a file to disk. A connection that breaks in the middle gives what has arrived.
+ * @throws AppError `too-large` when more than `most` bytes come; nothing is left on disk then
+ */
+export async function receivePart(source: Readable, most: number): Promise<{ path: string; bytes: number }> {
+	const path = await incomingPath();
+	const out = createWriteStream(path);
+	let bytes = 0;
+	try {
+		for await (const chunk of source as AsyncIterable<Buffer>) {
+			bytes += chunk.length;
+			if (bytes > most) throw new AppError('too-large', 'The part is longer than what is left of its file.');
+			if (!out.write(chunk)) await once(out, 'drain');
+		}
+	} catch (error) {
+		if (error instanceof AppError) {
+			out.destroy();
+			await unlink(path).catch(() => undefined);
+			throw error;
+		}
+		// The sender is gone: what came before counts, and the next look tells it how much that is.
+	}
+	out.end();
+	await finished(out);
+	return { path, bytes };
 }
 
 /** Every file part of a multipart body, one after another. */
@@ -110,7 +139,7 @@ async function settle(files: Promise<IncomingFile>[]): Promise<IncomingFile[]> {
 }
 
 /** Takes files off the disk that will not be kept. */
-export async function discard(files: readonly IncomingFile[]): Promise<void> {
+export async function discard(files: readonly { path: string }[]): Promise<void> {
 	for (const file of files) await unlink(file.path).catch(() => undefined);
 }
 

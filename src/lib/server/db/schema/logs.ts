@@ -216,6 +216,9 @@ export const noted = pgTable(
 	]
 );
 
+/** How an upload in parts is to be read, and the sender's own mark of its files. */
+export type UploadKept = Pick<LogOptions, 'timeZone' | 'mapping'> & { name: string | null; fingerprint: string | null };
+
 /** A log on its way in parts: what has arrived stays until it is whole, given up, or too old. */
 export const uploads = pgTable(
 	'uploads',
@@ -224,7 +227,7 @@ export const uploads = pgTable(
 		id: uuid().notNull().defaultRandom(),
 		unitId: uuid().notNull(),
 		files: jsonb().$type<{ name: string; bytes: number }[]>().notNull(),
-		options: jsonb().$type<Pick<LogOptions, 'timeZone' | 'mapping'> & { name: string | null }>().notNull(),
+		options: jsonb().$type<UploadKept>().notNull(),
 		/** the log it became */
 		logId: uuid(),
 		createdBy: uuid().notNull(),

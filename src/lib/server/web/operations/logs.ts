@@ -1,9 +1,11 @@
 import { instantSchema, pageQuerySchema } from '$lib/model/wire/common';
 import { logPreviewSchema, logSchema, mappingInputSchema } from '$lib/model/wire/log';
+import { uploadInputSchema, uploadSchema } from '$lib/model/wire/upload';
 import { z } from 'zod';
 import { operation } from '../operation';
 
 const log = '/api/logs/{log}';
+const upload = '/api/uploads/{upload}';
 
 export const listLogs = operation({
 	method: 'get',
@@ -79,4 +81,54 @@ export const exportUnit = operation({
 		units: z.enum(['si', 'ip']).optional()
 	}),
 	responseTypes: ['text/csv', 'application/vnd.openxmlformats-officedocument.spreadsheetml.sheet', 'text/zinc']
+});
+export const listUploads = operation({
+	method: 'get',
+	path: '/api/units/{unit}/uploads',
+	summary: 'Your uploads in parts to this unit that are not a log yet',
+	right: 'read',
+	response: z.object({ uploads: z.array(uploadSchema) })
+});
+export const beginUpload = operation({
+	method: 'post',
+	path: '/api/units/{unit}/uploads',
+	summary: 'Begins an upload in parts, for big files on bad connections; the same fingerprint again gives the open one',
+	right: 'logs',
+	body: uploadInputSchema,
+	response: uploadSchema,
+	status: 201
+});
+export const getUpload = operation({
+	method: 'get',
+	path: upload,
+	summary: 'How far an upload is: the bytes of each file that are safe, where to send on from',
+	right: 'logs',
+	response: uploadSchema
+});
+export const sendPart = operation({
+	method: 'put',
+	path: upload,
+	summary: 'One part of a file, from its first missing byte; what has arrived when the connection breaks is kept',
+	right: 'logs',
+	query: z.object({
+		file: z.coerce.number().int().min(0).max(399).default(0),
+		from: z.coerce.number().int().min(0)
+	}),
+	bodyTypes: ['application/octet-stream'],
+	response: uploadSchema
+});
+export const finishUpload = operation({
+	method: 'post',
+	path: `${upload}/log`,
+	summary: 'Makes the log of an upload that is whole; asked again it gives the same log',
+	right: 'logs',
+	response: z.object({ log: logSchema }),
+	status: 202
+});
+export const dropUpload = operation({
+	method: 'delete',
+	path: upload,
+	summary: 'Gives an upload up; nothing of it is kept',
+	right: 'logs',
+	status: 204
 });
