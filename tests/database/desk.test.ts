@@ -34,7 +34,7 @@ const bytesOf = async (stream: ReadableStream<Uint8Array>): Promise<Uint8Array> 
 
 describe('jobs', () => {
 	it('are seen by their own office, and a failed one is tried again by it alone', async () => {
-		const { jobsOf, retryOfficeJob } = await import('$lib/server/services/office-desk');
+		const { jobsOf, retryOfficeJob } = await import('$lib/server/services/office');
 		const { JOBS, queue } = await import('$lib/server/jobs/queue');
 		const logId = await upload(office);
 		const waiting = (await jobsOf(office.manager)).find((job) => job.data['logId'] === logId);
@@ -59,7 +59,7 @@ describe('jobs', () => {
 
 describe('settings', () => {
 	it('are the owner’s, keep what is not changed, and name a present member for calls', async () => {
-		const { changeSettings, settingsOf } = await import('$lib/server/services/office-desk');
+		const { changeSettings, settingsOf } = await import('$lib/server/services/office');
 		await changeSettings(office.owner, { onCallId: office.technician.personId });
 		await changeSettings(office.owner, { name: 'Renamed' });
 		expect(await settingsOf(office.manager)).toEqual({
@@ -219,7 +219,7 @@ describe('everything as a zip', () => {
 
 describe('the end of an office', () => {
 	it('wants its name and the password, takes its rows and originals, and leaves the other office alone', async () => {
-		const { endOffice } = await import('$lib/server/services/office-desk');
+		const { endOffice } = await import('$lib/server/services/office');
 		const { findPersonByEmail, listOrganisations } = await import('$lib/server/repositories/identity');
 		const { exportOffice } = await import('$lib/server/services/office-export');
 		const { objectKeysOf } = await import('$lib/server/services/office-export');

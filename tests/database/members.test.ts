@@ -141,7 +141,7 @@ describe('a member who leaves', () => {
 });
 
 it('leaves a trail of who invited, joined, changed and ended whom', async () => {
-	const { auditOf } = await import('$lib/server/services/office-desk');
+	const { auditOf } = await import('$lib/server/services/office');
 	const lines = await auditOf(office.owner, { limit: 200 });
 	const said = lines.map(({ by, action, subject }) => `${by} ${action} ${subject}`);
 	for (const line of [

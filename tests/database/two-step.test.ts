@@ -71,7 +71,7 @@ describe('two-step sign-in', () => {
 
 describe('an office that asks its owners for it', () => {
 	it('holds an owner without it, and no other member', async () => {
-		const { changeSettings } = await import('$lib/server/services/office-desk');
+		const { changeSettings } = await import('$lib/server/services/office');
 		const { beginSession, readSession } = await import('$lib/server/auth/sessions');
 		const { addMember, actorFor } = await import('$lib/server/services/people');
 		const due = async (email: string): Promise<boolean | undefined> => {

@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import { MAIL_CHOICES } from '../mail';
-import { ROLES } from '../people';
+import { ROLES, SCOPES } from '../people';
 import { idSchema, instantSchema } from './common';
 import { passwordSchema } from './entry';
 
@@ -18,6 +18,16 @@ export const invitationInputSchema = z
 		path: ['siteIds']
 	})
 	.meta({ id: 'InvitationInput' });
+
+export const keyInputSchema = z
+	.object({
+		name: z.string().trim().min(1, 'Give the key a name.').max(80),
+		role: z.enum(ROLES).default('engineer'),
+		scopes: z.array(z.enum(SCOPES)).min(1).default(['write']),
+		siteIds: z.array(idSchema).nullable().default(null),
+		expiresAt: instantSchema.nullable().default(null)
+	})
+	.meta({ id: 'ApiKeyInput' });
 
 export const memberPatchSchema = z
 	.object({ role: z.enum(ROLES).optional(), siteIds: z.array(idSchema).nullable().optional() })
@@ -49,6 +59,8 @@ export const membersSchema = z
 	})
 	.meta({ id: 'Members' });
 
+export type Members = z.infer<typeof membersSchema>;
+
 export const officeSchema = z
 	.object({
 		name: z.string(),
@@ -56,6 +68,7 @@ export const officeSchema = z
 		onCallId: idSchema.nullable().meta({ description: 'who is told at once, where a site names nobody' })
 	})
 	.meta({ id: 'Office' });
+export type Office = z.infer<typeof officeSchema>;
 export const officePatchSchema = z
 	.object({
 		name: z.string().trim().min(1).max(120).optional(),
@@ -63,6 +76,15 @@ export const officePatchSchema = z
 		onCallId: idSchema.nullable().optional()
 	})
 	.meta({ id: 'OfficePatch' });
+
+export const twinInputSchema = z
+	.object({
+		from: z.uuid('Choose both units.'),
+		nature: z.boolean().default(true),
+		limits: z.boolean().default(true),
+		mapping: z.boolean().default(true)
+	})
+	.meta({ id: 'TwinInput' });
 
 export const auditLineSchema = z.object({
 	id: z.number().int(),
@@ -74,6 +96,8 @@ export const auditLineSchema = z.object({
 	before: z.unknown(),
 	after: z.unknown()
 });
+
+export type AuditLine = z.infer<typeof auditLineSchema>;
 
 export const mailSchema = z
 	.object({
@@ -92,17 +116,23 @@ export const mailSchema = z
 	})
 	.meta({ id: 'Mail' });
 
+export type Mail = z.infer<typeof mailSchema>;
+
 export const jobSchema = z.object({
 	id: idSchema,
 	name: z.string(),
 	state: z.string(),
 	data: z.record(z.string(), z.unknown()),
+	about: z.string().nullable().meta({ description: 'the log, unit or message' }),
+	unitId: idSchema.nullable(),
 	tries: z.number().int(),
 	error: z.string().nullable(),
 	createdAt: instantSchema,
 	startedAt: instantSchema.nullable(),
 	completedAt: instantSchema.nullable()
 });
+
+export type Job = z.infer<typeof jobSchema>;
 
 export const accountSchema = z
 	.object({

@@ -41,6 +41,19 @@ export function listLogStates(tx: Tx, unitIds: readonly string[]) {
 		.where(inArray(logs.unitId, [...unitIds]));
 }
 
+/** Names and units of some logs, by their ids. */
+export async function listLogNames(
+	tx: Tx,
+	ids: readonly string[]
+): Promise<Map<string, { name: string; unitId: string }>> {
+	if (ids.length === 0) return new Map();
+	const rows = await tx
+		.select({ id: logs.id, name: logs.name, unitId: logs.unitId })
+		.from(logs)
+		.where(inArray(logs.id, [...ids]));
+	return new Map(rows.map(({ id, ...row }) => [id, row]));
+}
+
 export async function updateLog(tx: Tx, id: string, change: LogChange): Promise<void> {
 	await tx.update(logs).set(change).where(eq(logs.id, id));
 }

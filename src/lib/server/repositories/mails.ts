@@ -1,6 +1,6 @@
 import type { Tx } from '$lib/server/db/client';
 import { mails } from '$lib/server/db/schema/circle';
-import { and, desc, eq, lt, or, isNull, sql } from 'drizzle-orm';
+import { and, desc, eq, inArray, lt, or, isNull, sql } from 'drizzle-orm';
 
 /** Messages of the transaction's organisation: the outbox. */
 
@@ -21,6 +21,16 @@ export async function findMail(tx: Tx, id: string): Promise<MailRow | null> {
 /** The newest messages first. */
 export function listMails(tx: Tx, limit: number): Promise<MailRow[]> {
 	return tx.select().from(mails).orderBy(desc(mails.createdAt)).limit(limit);
+}
+
+/** Subjects of some messages, by their ids. */
+export async function listSubjects(tx: Tx, ids: readonly string[]): Promise<Map<string, string>> {
+	if (ids.length === 0) return new Map();
+	const rows = await tx
+		.select({ id: mails.id, subject: mails.subject })
+		.from(mails)
+		.where(inArray(mails.id, [...ids]));
+	return new Map(rows.map((row) => [row.id, row.subject]));
 }
 
 export async function updateMail(tx: Tx, id: string, change: Partial<NewMail>): Promise<void> {

@@ -1,4 +1,4 @@
-import { changeSettings, endOffice, settingsOf } from '$lib/server/services/office-desk';
+import { changeSettings, endOffice, settingsOf } from '$lib/server/services/office';
 import { endpoint } from '$lib/server/web/endpoint';
 import * as operations from '$lib/server/web/operations/office';
 

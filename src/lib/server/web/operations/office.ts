@@ -14,7 +14,8 @@ import {
 	officePatchSchema,
 	officeSchema,
 	passwordInputSchema,
-	passwordOnlySchema
+	passwordOnlySchema,
+	twinInputSchema
 } from '$lib/model/wire/office';
 import { unitSchema } from '$lib/model/wire/site-unit';
 import { z } from 'zod';
@@ -142,7 +143,11 @@ export const importPlant = operation({
 	summary:
 		'Adds sites and units from a sheet (CSV or xlsx) with the columns site, time zone, address, altitude, unit, refrigerant, circuits',
 	right: 'plant',
-	bodyTypes: ['text/csv', 'application/vnd.openxmlformats-officedocument.spreadsheetml.sheet'],
+	bodyTypes: [
+		'text/csv',
+		'application/vnd.openxmlformats-officedocument.spreadsheetml.sheet',
+		'application/octet-stream'
+	],
 	response: z.object({ sites: z.number().int(), units: z.number().int(), known: z.number().int() }),
 	status: 201
 });
@@ -151,12 +156,7 @@ export const copyTwin = operation({
 	path: '/api/units/{unit}/twin',
 	summary: 'Sets a unit up like its twin: nature, limits, confirmed mappings',
 	right: 'plant',
-	body: z.object({
-		from: z.uuid(),
-		nature: z.boolean().default(true),
-		limits: z.boolean().default(true),
-		mapping: z.boolean().default(true)
-	}),
+	body: twinInputSchema,
 	response: unitSchema
 });
 

@@ -1,5 +1,6 @@
-import { ROLES, SCOPES } from '$lib/model/people';
+import { ROLES } from '$lib/model/people';
 import { instantSchema } from '$lib/model/wire/common';
+import { keyInputSchema } from '$lib/model/wire/office';
 import { z } from 'zod';
 import { operation } from '../operation';
 
@@ -50,13 +51,7 @@ export const addKey = operation({
 	path: '/api/keys',
 	summary: 'Makes an API key; it is shown once',
 	right: 'office',
-	body: z.object({
-		name: z.string().trim().min(1).max(80),
-		role: z.enum(ROLES).default('engineer'),
-		scopes: z.array(z.enum(SCOPES)).min(1).default(['write']),
-		siteIds: z.array(z.uuid()).nullable().default(null),
-		expiresAt: instantSchema.nullable().default(null)
-	}),
+	body: keyInputSchema,
 	response: z.object({ id: z.uuid(), key: z.string() }),
 	status: 201
 });
