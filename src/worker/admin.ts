@@ -5,9 +5,12 @@ import { closeDatabase } from '$lib/server/repositories/transaction';
 import { firstRunCode } from '$lib/server/services/first-run';
 import { keyForMember } from '$lib/server/services/keys';
 import { parseArgs } from 'node:util';
+import { watch } from './watch';
 
 const USAGE = `npm run admin -- key create --member <e-mail> [--name <name>] [--scope read|logs|write] [--days <n>]
     makes an API key that acts as this member, and prints it once
+npm run admin -- watch <folder> --unit <id> [--every <seconds>] [--once]
+    takes what comes into a folder in as logs of a unit, until Ctrl-C
 npm run admin -- first-run-code
     prints a new code for the first visit, while there is no organisation`;
 
@@ -30,6 +33,7 @@ async function createKey(args: string[]): Promise<void> {
 
 async function main([group, ...rest]: string[]): Promise<void> {
 	if (group === 'key' && rest[0] === 'create') return createKey(rest.slice(1));
+	if (group === 'watch') return watch(rest, USAGE);
 	if (group === 'first-run-code') {
 		console.log((await firstRunCode()) ?? 'There is an organisation already.');
 		return;

@@ -80,7 +80,7 @@ export async function takeLog(
 				sha256,
 				files: stored,
 				options: { timeZone: options.timeZone, mapping: options.mapping, choices: {} },
-				createdBy: actor.personId,
+				createdBy: actor.via === 'system' ? null : actor.personId,
 				createdAt: now()
 			});
 			await recordAudit(tx, actor, {
