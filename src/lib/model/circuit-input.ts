@@ -58,4 +58,4 @@ export type CircuitAnalysis = {
 	notes: string[];
 };
 
-export const METHOD_VERSION = '1';
+export const METHOD_VERSION = '2';
