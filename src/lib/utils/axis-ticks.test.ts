@@ -46,4 +46,8 @@ describe('valueTicks', () => {
 		expect(high - low).toBeGreaterThanOrEqual(10);
 		expect(valueTicks([]).ticks).toContain(0);
 	});
+	it('ends where all values are one and no least span is asked for', () => {
+		expect(valueTicks([0, 0], 4, 0).ticks).toContain(0);
+		expect(valueTicks([7, 7], 4, 0)).toMatchObject({ ticks: [4, 6, 8, 10] });
+	});
 });

@@ -57,6 +57,11 @@ export function valueTicks(values: Iterable<number>, most = 4, least = 1): Value
 	if (low > high) [low, high] = [0, 1];
 	const lack = least - (high - low);
 	if (lack > 0) [low, high] = [low - lack / 2, high + lack / 2];
+	// One value and no least span has no width to divide: it stands in the middle of a span of its own size.
+	if (!(high - low > 1e-9 * Math.max(Math.abs(low), Math.abs(high)))) {
+		const half = Math.max(Math.abs(high) / 2, 0.5);
+		[low, high] = [low - half, high + half];
+	}
 	const pad = (high - low) * 0.06;
 	const [bottom, top] = [low - pad, high + pad];
 	const count = (step: number) => Math.floor(top / step + 1e-9) - Math.ceil(bottom / step - 1e-9) + 1;

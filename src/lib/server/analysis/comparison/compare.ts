@@ -15,6 +15,7 @@ import { type GroupExpression, parseGroup } from './group-grammar';
 import { type Matched, matchedComparison } from './matched';
 import { type Share, shareOf, type SplitTest, splitTest } from './proportions';
 import { type GroupContext, groupWords, selectGroup } from './select-group';
+import { reachWords, tellingFirst } from './telling';
 
 export type ComparisonInput = {
 	/** All starts of the circuit or unit in the period, oldest first. */
@@ -97,11 +98,13 @@ function tooFewWords(a: number, b: number): string | null {
 
 function differenceSentence(row: Difference, labels: readonly [string, string], words: Words): string {
 	const say = (value: number | null) => words.of(value, row.quantity);
-	const reach =
-		row.low === null || row.high === null
-			? ''
-			: `, by ${words.of(Math.min(Math.abs(row.low), Math.abs(row.high)), row.shiftQuantity)} to ${words.of(Math.max(Math.abs(row.low), Math.abs(row.high)), row.shiftQuantity)}`;
-	return `${row.label} was ${row.words} in “${labels[0]}”: ${say(row.a)} against ${say(row.b)}${reach}.`;
+	return `${row.label} was ${row.words} in “${labels[0]}”: ${say(row.a)} against ${say(row.b)}${reachWords(row, words)}.`;
+}
+
+/** What is said where no tested figure is worth a sentence. */
+function nothingToldWords(clear: number): string {
+	if (clear === 0) return 'None of the tested figures differs clearly between the groups.';
+	return 'The tested figures that differ clearly do so by too little to matter; they stand in the table.';
 }
 
 function rateSentence(a: GroupResult, b: GroupResult): string {
@@ -201,15 +204,14 @@ export function compareGroups(comparison: ComparisonInput): ComparisonResult {
 	const matched = byOutcome ? null : matchedComparison(one.counted, two.counted, definedBy);
 	const tooFew = tooFewWords(figuresA.length, figuresB.length);
 	const labels = [a.label, b.label] as const;
-	const told = differences
-		.filter((row) => row.clear && row.role === 'tested')
-		.map((row) => differenceSentence(row, labels, words));
+	const clear = differences.filter((row) => row.clear && row.role === 'tested');
+	const told = tellingFirst(clear).map((row) => differenceSentence(row, labels, words));
 	const reader = comparison.input ? readerOf(comparison.input) : null;
 	const crossTable = crossTableOf([...one.counted, ...two.counted], comparison.timeZone, words);
 	const sentences = [
 		...(byOutcome ? [] : [rateSentence(a, b)]),
 		...told,
-		...(told.length === 0 && tooFew === null ? ['None of the tested figures differs clearly between the groups.'] : []),
+		...(told.length === 0 && tooFew === null ? [nothingToldWords(clear.length)] : []),
 		matchedSentence(matched, byOutcome || tooFew !== null),
 		shared.size > 0
 			? `${countWords(shared.size, 'start')} in both groups ${shared.size === 1 ? 'was' : 'were'} left out.`
