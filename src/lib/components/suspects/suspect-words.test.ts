@@ -27,6 +27,7 @@ const answer = (changed: Partial<Suspects>): Suspects => ({
 	verdict: 'fault-pattern',
 	suspects: [],
 	missingSignals: [],
+	nextChecks: [],
 	circuits: [],
 	units: {},
 	...changed

@@ -80,6 +80,16 @@ export const clueSchema = z.object({
 	starts: z.array(z.string()),
 	show: z.object({ signals: z.array(z.string()), from: z.number(), to: z.number() }).optional()
 });
+const checkToDoSchema = z.object({
+	key: z.string(),
+	title: z.string(),
+	tools: z.array(z.string()),
+	cautions: z.array(z.string()),
+	unitOff: z.boolean()
+});
+/** A field check that would tell the leading suspects apart: which it decides, by name, and what it parts. */
+const nextCheckSchema = checkToDoSchema.extend({ decides: z.array(z.string()), sentence: z.string() });
+export type NextCheck = z.infer<typeof nextCheckSchema>;
 export const suspectSchema = z
 	.object({
 		key: z.string(),
@@ -87,13 +97,7 @@ export const suspectSchema = z
 		rank: z.number().int(),
 		standing: z.enum(['points-to', 'fits', 'speaks-against', 'cannot-tell']),
 		clues: z.array(clueSchema),
-		decisiveCheck: z.object({
-			key: z.string(),
-			title: z.string(),
-			tools: z.array(z.string()),
-			cautions: z.array(z.string()),
-			unitOff: z.boolean()
-		})
+		decisiveCheck: checkToDoSchema
 	})
 	.meta({ id: 'Suspect' });
 export type Suspect = z.infer<typeof suspectSchema>;
@@ -104,6 +108,8 @@ export const suspectsSchema = z
 		verdict: verdictSchema,
 		suspects: z.array(suspectSchema),
 		missingSignals: z.array(z.string()),
+		/** field checks to do next, those that separate most first; empty on a sound unit */
+		nextChecks: z.array(nextCheckSchema),
 		circuits: z.array(circuitSuspects),
 		units: unitsSchema
 	})

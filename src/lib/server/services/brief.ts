@@ -24,7 +24,6 @@ import { usualBeThereBy, visibleVisit } from './visits';
 /** The brief of a visit: one or two pages for who goes there. The page, the PDF and the mail print the same one. */
 
 const STRIP_DAYS = 12;
-const MOST_CHECKS = 4;
 
 /** The circuit the visit is about: the case's, or the one with most start-up trips. */
 function circuitOf(named: string | null, rows: readonly StartRow[]): string {
@@ -34,16 +33,16 @@ function circuitOf(named: string | null, rows: readonly StartRow[]): string {
 	return [...trips].sort((a, b) => b[1] - a[1])[0]?.[0] ?? '1';
 }
 
-function checksOfBrief(suspects: Suspects['suspects']): Brief['checks'] {
-	const checks = new Map<string, Brief['checks'][number]>();
-	for (const { name, standing, decisiveCheck } of suspects) {
-		if (standing !== 'points-to' && standing !== 'fits') continue;
-		const known = checks.get(decisiveCheck.key);
-		if (known) known.decides = `${known.decides}, ${name.toLowerCase()}`;
-		else if (checks.size < MOST_CHECKS)
-			checks.set(decisiveCheck.key, { ...decisiveCheck, decides: name.toLowerCase() });
-	}
-	return [...checks.values()];
+/** The checks of the brief: those that separate most first, each with what it decides. */
+function checksOfBrief(checks: Suspects['nextChecks']): Brief['checks'] {
+	return checks.map(({ decides, key, title, tools, cautions, unitOff }) => ({
+		key,
+		title,
+		tools,
+		cautions,
+		unitOff,
+		decides: decides.map((name) => name.toLowerCase()).join(', ')
+	}));
 }
 
 function coverageWords(results: readonly CircuitResultRow[]): { words: string; days: { logged: number; all: number } } {
@@ -130,7 +129,7 @@ export async function briefOf(actor: Actor, visitId: string, system: UnitSystem)
 			standing,
 			clue: clues.find((clue) => clue.direction === 'for')?.sentence ?? ''
 		})),
-		checks: checksOfBrief(found.suspects),
+		checks: checksOfBrief(found.nextChecks),
 		logNext: tonight
 			? [
 					tonight.sentence,

@@ -4,7 +4,7 @@ import type { UnitSystem } from '$lib/model/quantities';
 import type { SuspectsResult } from '$lib/model/suspect';
 import type { Suspects } from '$lib/model/wire/start';
 import { SUSPECT_WORDS } from '$lib/model/words';
-import { evaluateSuspects } from '$lib/server/analysis/suspects';
+import { evaluateSuspects, nextChecks } from '$lib/server/analysis/suspects';
 import { listSignedSuspects } from '$lib/server/repositories/circle';
 import { listCircuitResults, listStarts, type StartRow } from '$lib/server/repositories/starts';
 import { withOrganisation, type Tx } from '$lib/server/repositories/transaction';
@@ -52,6 +52,15 @@ function suspectsShape(result: CircuitSuspects, rows: readonly StartRow[]): Susp
 	}));
 }
 
+/** What to check next; nothing on a sound unit, and nothing for a client, who does no checks. */
+function nextChecksShape(result: CircuitSuspects, all: boolean): Suspects['nextChecks'] {
+	if (!all || result.verdict === 'no-fault-pattern') return [];
+	return nextChecks(result.suspects).map((check) => ({
+		...check,
+		decides: check.decides.map((key) => SUSPECT_WORDS[key])
+	}));
+}
+
 /**
  * The ranked suspects of a unit, circuit by circuit; the top is that of the worst circuit, or of the one asked for.
  * @throws AppError `forbidden` for a client while no technician has signed a deciding check
@@ -71,7 +80,8 @@ export async function suspectsOf(actor: Actor, unitId: string, query: Query, sys
 				circuit: result.circuit,
 				verdict: result.verdict,
 				missingSignals: result.missingSignals,
-				suspects: all ? suspects : suspects.filter(({ key }) => signed.has(key))
+				suspects: all ? suspects : suspects.filter(({ key }) => signed.has(key)),
+				nextChecks: nextChecksShape(result, all)
 			};
 		});
 		const worst = query.circuit
@@ -81,6 +91,7 @@ export async function suspectsOf(actor: Actor, unitId: string, query: Query, sys
 			verdict: worst?.verdict ?? 'cannot-tell',
 			suspects: worst?.suspects ?? [],
 			missingSignals: worst?.missingSignals ?? [],
+			nextChecks: worst?.nextChecks ?? [],
 			circuits: circuits.map(({ circuit, verdict, suspects }) => ({ circuit, verdict, suspects })),
 			units: unitsObject(system)
 		};
