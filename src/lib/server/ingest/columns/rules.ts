@@ -117,7 +117,8 @@ rule('startCommand', 0.94, 'run command', 'compressor unit status');
 rule('startCommand', 0.92, 'compressor command', 'unit status');
 rule('startCommand', 0.9, 'unit command', 'status');
 rule('startCommand', 0.84, 'start stop', 'compressor unit command status');
-rule('startCommand', 0.72, 'command', '');
+// With nothing else said and on/off by its values, it is the machine's own command: pumps and valves are named.
+rule('startCommand', 0.84, 'command', '');
 rule('unitMode', 0.93, 'mode', 'unit compressor status active');
 rule('unitMode', 0.66, 'unit status', 'active');
 rule('activeLimit', 0.92, 'limit active|status|mode', 'unit compressor');

@@ -12,15 +12,15 @@ function sure(guess: Guess): boolean {
 }
 
 /** Columns in doubt that a start needs: no sure column carries the same signal. */
-function doubts(guesses: readonly Guess[]): string[] {
+function doubts(guesses: readonly Guess[], ask: boolean): string[] {
 	const questions: string[] = [];
+	const runs = guesses.some((g) => g.signal === 'running' && sure(g));
 	for (const guess of guesses) {
 		if (!guess.signal || sure(guess) || guess.confidence < 0.45 || !NEEDED.includes(guess.signal)) continue;
 		const same = guesses.some((g) => g !== guess && g.signal === guess.signal && sure(g) && g.unitId === guess.unitId);
-		const running =
-			guess.signal !== 'running' &&
-			RUN_SIGNALS.includes(guess.signal) &&
-			guesses.some((g) => g.signal === 'running' && sure(g));
+		// Where nobody waits to be asked, a log that says when it runs is not held up for its command.
+		const spared = RUN_SIGNALS.includes(guess.signal) || (!ask && guess.signal === 'startCommand');
+		const running = guess.signal !== 'running' && spared && runs;
 		const saturated = guess.signal === 'evapPressure' && guesses.some((g) => g.signal === 'evapSaturation' && sure(g));
 		if (same || running || saturated) continue;
 		questions.push(`Is "${guess.sample.column}" the ${SIGNALS[guess.signal].label}?`);
@@ -32,13 +32,14 @@ function doubts(guesses: readonly Guess[]): string[] {
 export function openQuestions(
 	guesses: readonly Guess[],
 	choices: readonly Choice[],
-	known: ReadonlySet<string>
+	known: ReadonlySet<string>,
+	ask: boolean
 ): string[] {
 	const questions = choices.filter((choice) => !choice.sure).map((choice) => choice.question);
 	if (!guesses.some((g) => g.signal && RUN_SIGNALS.includes(g.signal) && sure(g))) {
 		questions.push('No column surely tells when the compressor runs: which one does?');
 	}
-	questions.push(...doubts(guesses));
+	questions.push(...doubts(guesses, ask));
 	const unknown = new Set(guesses.map((g) => g.unknownUnit).filter((n): n is string => n !== null && !known.has(n)));
 	for (const number of unknown)
 		questions.push(`Columns carry the number ${number}, which no unit of this site has: whose are they?`);

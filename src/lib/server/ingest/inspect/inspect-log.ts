@@ -260,7 +260,7 @@ async function inspectUnpacked(unpacked: Unpacked, ctx: ReadContext): Promise<In
 	const questions =
 		onlyEvents || remembered
 			? choices.filter((c) => !c.sure).map((c) => c.question)
-			: openQuestions(judged.guesses, choices, new Set());
+			: openQuestions(judged.guesses, choices, new Set(), ctx.ask);
 	if (ctx.ask && !remembered && questions.length === 0 && !onlyEvents)
 		questions.push('Is every column what it is taken for?');
 	const rows = [0, 1, 2].map((k) => Math.floor((k * Math.max(0, (drafts[0]?.headRows ?? 1) - 1)) / 2));
