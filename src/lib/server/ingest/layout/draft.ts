@@ -29,18 +29,30 @@ const RUN = 3;
 /** Rows that decide which kind of layout a table has. */
 const MOST_JUDGED = 600;
 
+/** Where another header stands among rows: what follows it has its columns elsewhere. −1 when there is none. */
+function nextHeader(rows: readonly TextRow[], names: readonly string[]): number {
+	const known = new Set(names);
+	return rows.findIndex(({ cells }) => {
+		const same = cells.map((cell) => cell.trim());
+		return same.filter((cell) => known.has(cell)).length >= 2 && same.some((cell, i) => cell !== (names[i] ?? ''));
+	});
+}
+
 function sampleRows(
 	look: Look,
 	delimiter: string,
 	head: TextRow[],
-	dataLine: number
+	{ dataLine, names }: Header
 ): { rows: TextRow[]; headRows: number } {
-	const data = head.filter((row) => row.line >= dataLine);
+	const all = head.filter((row) => row.line >= dataLine);
+	const next = nextHeader(all, names);
+	const data = next < 0 ? all : all.slice(0, next);
 	const headRows = Math.min(data.length, MOST_HEAD_ROWS);
 	const rows = data.slice(0, headRows);
 	const every = Math.max(RUN, Math.floor((data.length - headRows) / HEAD_RUNS));
 	for (let at = headRows; at < data.length; at += every) rows.push(...data.slice(at, Math.min(at + RUN, at + every)));
-	for (const run of look.runs) {
+	// Behind another header the columns are placed anew: its rows say nothing of these.
+	for (const run of next < 0 ? look.runs : []) {
 		// A run may begin inside a quoted cell: rows of another width are not believed.
 		for (const row of papaRows(run.lines.join('\n'), delimiter, run.line)) rows.push(row);
 	}
@@ -75,7 +87,7 @@ export function draftFile(leaf: Leaf, look: Look, ctx: ReadContext): Draft | Pro
 	if (!table) return noTable(leaf, look);
 	const header = findHeader(look.head, table);
 	const width = Math.max(table.width, header.names.length);
-	const { rows, headRows } = sampleRows(look, table.delimiter, papaRows(look.head, table.delimiter), header.dataLine);
+	const { rows, headRows } = sampleRows(look, table.delimiter, papaRows(look.head, table.delimiter), header);
 	const { column, clockColumn, time } = table.place;
 	const skip = [column, clockColumn];
 	const cells = rows.slice(0, 400).flatMap((row) => row.cells.filter((_, i) => !skip.includes(i)));

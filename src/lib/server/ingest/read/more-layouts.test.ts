@@ -285,3 +285,44 @@ describe('change-of-value logs', () => {
 		expect(got.blocks.find((b) => b.signal === 'evapWaterOut')?.increment).toBeCloseTo(0.1 / 1.8, 6);
 	});
 });
+
+describe('a header that changes in mid-file', () => {
+	/** Invented: a minute apart; on from the tenth to the hundredth. */
+	const stamp = (i: number) => `2025-03-05 1${Math.floor(i / 60)}:${String(i % 60).padStart(2, '0')}:00`;
+	const on = (i: number) => (i > 9 && i < 100 ? 1 : 0);
+	const first = ['Time,Compressor Running,Motor Current (A),Leaving Water (°F)'];
+	for (let i = 0; i < 60; i++) first.push(`${stamp(i)},${on(i)},${on(i) * (200 + i)},${44 + i / 100}`);
+	const amps = Array.from({ length: 120 }, (_, i) => on(i) * (200 + i));
+
+	it('places the columns anew by name, and says so with its line', async () => {
+		const second = ['Time,Leaving Water (°F),Compressor Running,Motor Current (A)'];
+		for (let i = 60; i < 120; i++) second.push(`${stamp(i)},${44 + i / 100},${on(i)},${on(i) * (200 + i)}`);
+		const got = await readBack([sourceFile('w.csv', [...first, ...second].join('\n'))]);
+		expect(got.result?.rows).toBe(120);
+		expect(got.series('motorCurrent').v).toEqual(amps);
+		expect(got.result?.problems).toEqual([expect.objectContaining({ line: 62, kind: 'header-changed' })]);
+		expect(got.result?.signals.filter((signal) => signal.signal === 'motorCurrent')).toHaveLength(1);
+	});
+
+	it('reads no new column unasked, and names those that came and went', async () => {
+		const second = ['Time,Compressor Running,Motor Current (A),Oil Temp (°F)'];
+		for (let i = 60; i < 120; i++) second.push(`${stamp(i)},${on(i)},${on(i) * (200 + i)},${100 + i / 10}`);
+		const got = await readBack([sourceFile('w.csv', [...first, ...second].join('\n'))]);
+		expect(got.series('motorCurrent').v).toEqual(amps);
+		expect(got.series('evapWaterOut').v).toHaveLength(60);
+		const message = got.result?.problems[0]?.message ?? '';
+		expect(message).toMatch(/not read: Oil Temp/);
+		expect(message).toMatch(/gone: LeavingWater/);
+	});
+
+	it('leaves out what follows when the time has no name there, alike with both readers', async () => {
+		const second = ['Compressor Running,Motor Current (A),Leaving Water (°F),When'];
+		for (let i = 60; i < 75; i++) second.push(`${on(i)},${on(i) * (200 + i)},${44 + i / 100},${stamp(i)}`);
+		for (const reader of ['auto', 'exact'] as const) {
+			const got = await readBack([sourceFile('w.csv', [...first, ...second].join('\n'))], context(), reader);
+			expect(got.series('motorCurrent').v).toEqual(amps.slice(0, 60));
+			expect(got.result?.problems[0]).toMatchObject({ line: 62, kind: 'header-changed' });
+			expect(got.result?.problems[0]?.message).toMatch(/left out/);
+		}
+	});
+});

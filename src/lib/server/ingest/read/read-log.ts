@@ -1,5 +1,6 @@
 import { unpack, type Leaf } from '../container/unpack';
 import { textForm, toUtf8, type TextForm } from '../text/encoding';
+import { headerChange, type HeaderChange } from '../layout/header-change';
 import { readRows, type ReaderChoice } from '../text/row-reader';
 import type { Dictionary, OddRow, RowPlan, RowView } from '../text/row-plan';
 import {
@@ -28,6 +29,26 @@ type Rows = { plan: RowPlan; dictionaries: Dictionary[] };
 
 /** Shortest time between two reports of progress, ms. */
 const REPORT_EVERY = 150;
+
+/** Headers of one file at most; each costs a pass over the file up to it. */
+const MOST_HEADERS = 20;
+
+/** Watches the rows of a file for a header that is not its own; nothing after it counts. */
+class HeaderWatch {
+	found: HeaderChange | null = null;
+	constructor(readonly plan: FilePlan) {}
+
+	after(line: number): boolean {
+		return this.found !== null && line > this.found.line;
+	}
+
+	/** Is this odd row another header? */
+	sees(line: number, text: string, header: string): boolean {
+		if (this.found || text.replace(/["\s]/g, '') === header) return false;
+		this.found = headerChange(text, line, this.plan);
+		return this.found !== null;
+	}
+}
 
 class LogReader {
 	readonly problems = new ProblemList();
@@ -75,31 +96,94 @@ class LogReader {
 		this.badTimes += time.impossible + time.missing;
 	}
 
+	/** A wide table, stretch by stretch: where the header changes in mid-file the columns are placed anew by name. */
 	async #wide(leaf: Leaf, plan: FilePlan, index: number, time: RowTime, header: string): Promise<void> {
-		const targets = targetsOf(plan, this.mapping, this.ctx.airPressure, this.taken);
-		const tallies = targets.map((target) => new TargetTally(target, index, plan.intervalSeconds));
-		const changes = targets.length > 0 && targets.every((target) => target.plan.logging === 'change');
+		const changes =
+			plan.columns.length > 0 &&
+			targetsOf(plan, this.mapping, this.ctx.airPressure, new Map()).every(
+				(target) => target.plan.logging === 'change'
+			);
 		const clock = new RowClock(changes, plan.time.descending);
-		const rows = new WideRows(plan, index, targets, tallies, clock);
+		const tallies: TargetTally[] = [];
+		let stretch: FilePlan | null = plan;
+		for (let n = 0; stretch !== null && n < MOST_HEADERS; n++) {
+			stretch = await this.#stretch(leaf, stretch, index, time, n === 0 ? header : stretch.headerText, clock, tallies);
+		}
+		if (stretch !== null)
+			this.#leftOut(stretch.file, stretch.headerLine, `The header changes more than ${MOST_HEADERS} times`);
+		this.clocks.push(clock);
+		this.tallies.push(...tallies);
+	}
+
+	/** Rows up to the end of the file or the next header; gives how the rows after that are read. */
+	async #stretch(
+		leaf: Leaf,
+		plan: FilePlan,
+		index: number,
+		time: RowTime,
+		header: string,
+		clock: RowClock,
+		tallies: TargetTally[]
+	): Promise<FilePlan | null> {
+		const targets = targetsOf(plan, this.mapping, this.ctx.airPressure, this.taken);
+		const own = targets.map((target) => {
+			const same = tallies.find((tally) => tally.target.mapping === target.mapping);
+			if (same) return same;
+			const fresh = new TargetTally(target, index, plan.intervalSeconds);
+			tallies.push(fresh);
+			return fresh;
+		});
+		const rows = new WideRows(plan, index, targets, own, clock);
+		const change = new HeaderWatch(plan);
 		const take = (view: RowView) => {
 			const t = time.at(view.wall, view.offset, view.line);
 			if (Number.isNaN(t)) return;
 			this.rows++;
 			rows.take(t, view);
 		};
-		for await (const _ of this.#pieces(leaf, plan, rows, take, header)) await rows.drain(this.sink);
+		for await (const _ of this.#pieces(leaf, plan, rows, take, header, change)) {
+			await rows.drain(this.sink);
+			if (change.found) break;
+		}
 		rows.flush();
 		await rows.drain(this.sink);
-		this.clocks.push(clock);
-		this.tallies.push(...tallies);
+		return this.#changed(plan, change);
+	}
+
+	/** What is said of a header that changed, and how the rows after it are read. */
+	#changed(plan: FilePlan, change: HeaderWatch): FilePlan | null {
+		const { found } = change;
+		if (!found) return null;
+		const list = (names: readonly string[]): string => names.slice(0, 8).join(', ') + (names.length > 8 ? ' …' : '');
+		const said = [
+			found.appeared.length > 0 ? `new and not read: ${list(found.appeared)}` : '',
+			found.gone.length > 0 ? `gone: ${list(found.gone)}` : ''
+		].filter((part) => part !== '');
+		const what = `The header changes here${said.length > 0 ? ` (${said.join('; ')})` : ''}`;
+		if (!found.plan) {
+			this.#leftOut(plan.file, found.line, what);
+			return null;
+		}
+		const message = `${what}; the rows after it are read by their new places.`;
+		this.problems.add({ file: plan.file, line: found.line, column: null, kind: 'header-changed', message });
+		return found.plan;
+	}
+
+	#leftOut(file: string, line: number, what: string): void {
+		const message = `${what}; the rows after it were left out. Upload them as a log of their own.`;
+		this.problems.add({ file, line, column: null, kind: 'header-changed', message });
 	}
 
 	async #long(leaf: Leaf, plan: FilePlan, index: number, time: RowTime, header: string): Promise<void> {
 		const targets = targetsOf(plan, this.mapping, this.ctx.airPressure, this.taken);
 		const tallies = targets.map((target) => new TargetTally(target, index, plan.intervalSeconds));
 		const rows = new LongRows(plan, index, targets, tallies, time);
-		for await (const _ of this.#pieces(leaf, plan, rows, (view) => rows.take(view), header))
+		const change = new HeaderWatch(plan);
+		for await (const _ of this.#pieces(leaf, plan, rows, (view) => rows.take(view), header, change)) {
 			await rows.drain(this.sink);
+			if (change.found) break;
+		}
+		this.#changed(plan, change);
 		rows.flush();
 		await rows.drain(this.sink);
 		this.rows += rows.rows;
@@ -118,10 +202,13 @@ class LogReader {
 
 	async #events(leaf: Leaf, plan: FilePlan, time: RowTime, header: string): Promise<void> {
 		const rows = new EventRows(plan, this.ctx, time);
-		for await (const _ of this.#pieces(leaf, plan, rows, (view) => rows.take(view), header)) {
+		const change = new HeaderWatch(plan);
+		for await (const _ of this.#pieces(leaf, plan, rows, (view) => rows.take(view), header, change)) {
+			if (change.found) break;
 			for (const event of rows.drain()) await this.sink.event(event);
 		}
 		for (const event of rows.drain()) await this.sink.event(event);
+		this.#changed(plan, change);
 		this.events += rows.events;
 		this.rows += rows.events;
 		this.first = Math.min(this.first, rows.first);
@@ -133,18 +220,18 @@ class LogReader {
 		plan: FilePlan,
 		rows: Rows,
 		take: (view: RowView) => void,
-		header: string
+		header: string,
+		change: HeaderWatch
 	): AsyncIterable<void> {
-		const odd = (line: number, text: string, why: OddRow) => this.#odd(plan, line, text, why, header);
+		const odd = (line: number, text: string, why: OddRow): void => {
+			if (change.after(line) || change.sees(line, text, header)) return;
+			this.#odd(plan, line, text, why, header);
+		};
+		const row = (view: RowView): void => {
+			if (!change.after(view.line)) take(view);
+		};
 		const text = toUtf8(leaf.open(), await formOf(leaf, plan));
-		for await (const _ of readRows(
-			text,
-			rows.plan,
-			plan.dataLine,
-			{ row: take, odd },
-			rows.dictionaries,
-			this.reader
-		)) {
+		for await (const _ of readRows(text, rows.plan, plan.dataLine, { row, odd }, rows.dictionaries, this.reader)) {
 			await this.report();
 			yield;
 		}
