@@ -138,3 +138,32 @@ describe('a unit without a trend log', () => {
 		expect((await record()).entries).toEqual([]);
 	});
 });
+
+describe('the trip-word table', () => {
+	it('is extended by a person for every unit or for one, and trips are told anew', async () => {
+		const { addTripWord, removeTripWord, tripWordsOf } = await import('$lib/server/services/trip-words');
+		const { tripWordInputSchema } = await import('$lib/model/wire/trip-word');
+		await uploaded('Time,Alarm\n2025-03-20 06:02:10,Kode 4711 trip\n2025-03-21 06:00:00,Kode 4711 trip\n', 'codes.csv');
+		const kinds = async () =>
+			(await record()).starts.filter((start) => start.startedAt > '2025-03-19').map((start) => start.trip?.kind);
+		expect(await kinds()).toEqual(['unknown', 'unknown']);
+		expect((await tripWordsOf(office.client, office.unitId)).unnamed).toEqual([{ text: 'Kode 4711 trip', times: 2 }]);
+
+		const input = tripWordInputSchema.parse({ words: 'kode 4711', kind: 'oil-flow' });
+		await expect(addTripWord(office.technician, office.unitId, input)).rejects.toMatchObject({ kind: 'forbidden' });
+		const all = await addTripWord(office.engineer, office.unitId, input);
+		await expect(addTripWord(office.engineer, office.unitId, input)).rejects.toMatchObject({ kind: 'conflict' });
+		await analysed();
+		expect(await kinds()).toEqual(['oil-flow', 'oil-flow']);
+
+		// A unit's own words come before those of every unit.
+		await addTripWord(office.engineer, office.unitId, { ...input, kind: 'motor-temperature', unitId: office.unitId });
+		await analysed();
+		expect(await kinds()).toEqual(['motor-temperature', 'motor-temperature']);
+		for (const word of (await tripWordsOf(office.client, office.unitId)).words)
+			await removeTripWord(office.engineer, office.unitId, word.id);
+		await analysed();
+		expect(await kinds()).toEqual(['unknown', 'unknown']);
+		expect(all.unitId).toBeNull();
+	});
+});

@@ -6,6 +6,7 @@ import type { Method } from '$lib/model/wire/method';
 import type { UnitRecord } from '$lib/model/wire/noted';
 import type { Site, Unit } from '$lib/model/wire/site-unit';
 import type { Start } from '$lib/model/wire/start';
+import type { TripWords } from '$lib/model/wire/trip-word';
 import type { Upload } from '$lib/model/wire/upload';
 import type { Days, UnitSummary } from '$lib/model/wire/views';
 import { ApiError, getJson, pathWith } from './api';
@@ -118,6 +119,13 @@ export function logsQuery(fetcher: typeof fetch, unit: string) {
 	return queryOptions({
 		queryKey: ['units', unit, 'logs'],
 		queryFn: () => getJson<{ logs: Log[] }>(fetcher, `/api/units/${unit}/logs?limit=500`)
+	});
+}
+
+export function tripWordsQuery(fetcher: typeof fetch, unit: string) {
+	return queryOptions({
+		queryKey: ['units', unit, 'trip-words'],
+		queryFn: () => getJson<TripWords>(fetcher, `/api/units/${unit}/trip-words`)
 	});
 }
 

@@ -1,6 +1,6 @@
 import type { Interval } from '$lib/model/series';
 import type { Tx } from '$lib/server/db/client';
-import { cases, changes, checks, tripWords, visits, type TimelineEntry } from '$lib/server/db/schema/circle';
+import { cases, changes, checks, visits, type TimelineEntry } from '$lib/server/db/schema/circle';
 import { and, asc, desc, eq, inArray, isNotNull, sql } from 'drizzle-orm';
 
 /** Cases, visits, checks and changes of the transaction's organisation. */
@@ -19,14 +19,6 @@ export async function listVisitSpans(tx: Tx, unitId: string): Promise<Interval[]
 	return rows.flatMap(({ from, to }) =>
 		from ? [{ from: from.getTime(), to: to?.getTime() ?? from.getTime() + 12 * 3_600_000 }] : []
 	);
-}
-
-/** A unit's own trade words that name a trip kind. */
-export async function listTripWords(tx: Tx, unitId: string): Promise<{ words: string; kind: string }[]> {
-	return tx
-		.select({ words: tripWords.words, kind: tripWords.kind })
-		.from(tripWords)
-		.where(eq(tripWords.unitId, unitId));
 }
 
 export function listChecks(tx: Tx, unitId: string): Promise<CheckRow[]> {

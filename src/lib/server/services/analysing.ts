@@ -9,7 +9,8 @@ import { firstMoverOf, matchedHeld } from '$lib/server/analysis/first-mover/firs
 import { cluesOfStart, evaluateSuspects, type SuspectEvidence } from '$lib/server/analysis/suspects';
 import { factsOf } from './facts';
 import { keepFirstMover } from './first-mover-shapes';
-import { listTripWords, listVisitSpans } from '$lib/server/repositories/circle';
+import { listVisitSpans } from '$lib/server/repositories/circle';
+import { listTripWords } from '$lib/server/repositories/trip-words';
 import type { Window } from '$lib/server/repositories/blocks';
 import { listLogs, listLogStates, updateLog, withLock } from '$lib/server/repositories/logs';
 import { listNoted } from '$lib/server/repositories/noted';
@@ -54,7 +55,7 @@ export async function circuitInputs(tx: Tx, unit: UnitRow, site: SiteRow, window
 	const limits = limitsOf(await listLimits(tx, [unit.id]));
 	const corrections = (await listCorrections(tx, unit.id)).map((row) => row.correction);
 	const visits = await listVisitSpans(tx, unit.id);
-	const tripWords = (await listTripWords(tx, unit.id)) as TripWord[];
+	const tripWords: TripWord[] = (await listTripWords(tx, unit.id)).map(({ words, kind }) => ({ words, kind }));
 	const others = await runningOfOthers(tx, site, unit);
 	const inputs: CircuitInput[] = [];
 	for (const circuit of circuits) {

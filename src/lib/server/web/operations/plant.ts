@@ -1,6 +1,7 @@
 import { pageQuerySchema } from '$lib/model/wire/common';
 import { siteInputSchema, siteSchema, unitInputSchema, unitPatchSchema, unitSchema } from '$lib/model/wire/site-unit';
 import { daysSchema, unitSummarySchema } from '$lib/model/wire/views';
+import { tripWordInputSchema, tripWordSchema, tripWordsSchema } from '$lib/model/wire/trip-word';
 import { z } from 'zod';
 import { operation } from '../operation';
 
@@ -99,4 +100,27 @@ export const getDays = operation({
 	right: 'read',
 	query: z.object({ from: dateQuery, to: dateQuery, circuit: z.string().optional() }),
 	response: daysSchema
+});
+export const listTripWords = operation({
+	method: 'get',
+	path: '/api/units/{unit}/trip-words',
+	summary: 'Words that name a trip kind for this unit, and texts of its trips that none names',
+	right: 'read',
+	response: tripWordsSchema
+});
+export const addTripWord = operation({
+	method: 'post',
+	path: '/api/units/{unit}/trip-words',
+	summary: 'Adds words that name a trip kind, for this unit or every unit; trips are told anew',
+	right: 'plant',
+	body: tripWordInputSchema,
+	response: tripWordSchema,
+	status: 201
+});
+export const removeTripWord = operation({
+	method: 'delete',
+	path: '/api/units/{unit}/trip-words/{word}',
+	summary: 'Takes words away',
+	right: 'plant',
+	status: 204
 });
