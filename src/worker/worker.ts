@@ -2,6 +2,7 @@
 import {
 	JOBS,
 	closeQueue,
+	enqueueAnalysis,
 	enqueueReading,
 	queue,
 	scheduleJobs,
@@ -12,7 +13,7 @@ import {
 import { tellLateLogs } from '$lib/server/services/deliveries';
 import { sendDigests } from '$lib/server/services/digest';
 import { sendMail, sweepMails } from '$lib/server/services/mails';
-import { unfinished } from '$lib/server/services/recovery';
+import { ofEarlierMethod, unfinished } from '$lib/server/services/recovery';
 import { sweepUploads } from '$lib/server/services/uploads';
 import { closeDatabase } from '$lib/server/repositories/transaction';
 import { fileURLToPath } from 'node:url';
@@ -47,6 +48,10 @@ async function main(): Promise<void> {
 		await sweepUploads();
 	};
 	await sweepSafely(sweep);
+	// After a new method version old and new figures stand side by side: every unit is computed again, one after another.
+	await sweepSafely(async () => {
+		for (const unit of await ofEarlierMethod()) await enqueueAnalysis(unit);
+	});
 	setInterval(() => void sweepSafely(sweep), SWEEP_MS).unref();
 }
 

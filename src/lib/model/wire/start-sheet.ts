@@ -76,6 +76,17 @@ export const beforeYouResetSchema = z.object({
 	cautions: z.array(z.string())
 });
 
+/** Old and new side by side after a new method version. */
+const previousMethodSchema = z.object({
+	methodVersion: z.string(),
+	/** sentences on what was told otherwise: outcome, trip kind, stall */
+	told: z.array(z.string()),
+	figures: z.array(
+		z.object({ key: z.string(), label: z.string(), before: z.number().nullable(), now: z.number().nullable() })
+	)
+});
+export type PreviousMethodShown = z.infer<typeof previousMethodSchema>;
+
 /** GET /api/starts/{start} */
 export const startSheetSchema = z
 	.object({
@@ -94,6 +105,8 @@ export const startSheetSchema = z
 		headroom: z.array(headroomSchema).optional(),
 		stateSinceLastRow: z.object({ lastRowAt: instantSchema, sentence: z.string() }).nullable().optional(),
 		beforeYouReset: beforeYouResetSchema.nullable().optional(),
+		/** what the method’s previous version said of this start, where it differs; figures in this answer’s units */
+		previousMethod: previousMethodSchema.nullable().optional(),
 		/** the leading suspect’s deciding check */
 		wouldDecide: z.string().nullable().optional(),
 		coverage: z.number().nullable().optional(),

@@ -1,3 +1,4 @@
+import { previousOf } from '$lib/model/previous-method';
 import type { StartCorrection, StartRecord, StartSource } from '$lib/model/start';
 import type { Tx } from '$lib/server/db/client';
 import { circuitResults, corrections, starts } from '$lib/server/db/schema/logs';
@@ -68,7 +69,20 @@ function keepIds(
 	});
 }
 
-/** Replaces a unit's starts; those that stay keep their ids. */
+/**
+ * A start's extras with what an earlier method version said of it: of the row it replaces, or (recomputed with the same
+ * version, after another limit or log) what that row had kept.
+ */
+function withPrevious(
+	row: { record: StartRecord; extras: StartRow['extras'] } | undefined,
+	{ record, extras }: { record: StartRecord; extras: StartRow['extras'] }
+): StartRow['extras'] {
+	if (!row) return extras;
+	const kept = row.record.methodVersion === record.methodVersion ? row.extras.previous : previousOf(row.record, record);
+	return kept ? { ...extras, previous: kept } : extras;
+}
+
+/** Replaces a unit's starts; those that stay keep their ids, and what an earlier method version said of them. */
 export async function replaceStarts(
 	tx: Tx,
 	organisationId: string,
@@ -76,13 +90,20 @@ export async function replaceStarts(
 	made: readonly { record: StartRecord; extras: StartRow['extras'] }[]
 ): Promise<void> {
 	const before = await tx
-		.select({ id: starts.id, circuit: starts.circuit, startedAt: starts.startedAt })
+		.select({
+			id: starts.id,
+			circuit: starts.circuit,
+			startedAt: starts.startedAt,
+			record: starts.record,
+			extras: starts.extras
+		})
 		.from(starts)
 		.where(eq(starts.unitId, unitId));
 	const ids = keepIds(
 		before,
 		made.map(({ record }) => record)
 	);
+	const rowOf = new Map(before.map((row) => [row.id, row]));
 	await tx.delete(starts).where(eq(starts.unitId, unitId));
 	const rows = made.map(({ record, extras }, i) => ({
 		organisationId,
@@ -94,7 +115,7 @@ export async function replaceStarts(
 		outcome: record.outcome,
 		source: record.source ?? 'log',
 		record,
-		extras
+		extras: withPrevious(rowOf.get(ids[i] ?? ''), { record, extras })
 	}));
 	for (let i = 0; i < rows.length; i += 200) await tx.insert(starts).values(rows.slice(i, i + 200));
 }
@@ -117,6 +138,15 @@ export async function saveCircuitResult(tx: Tx, row: typeof circuitResults.$infe
 			target: [circuitResults.organisationId, circuitResults.unitId, circuitResults.circuit],
 			set: { ...set, computedAt: new Date() }
 		});
+}
+
+/** Units with results of another method version than the given one. */
+export async function staleUnits(tx: Tx, methodVersion: string): Promise<string[]> {
+	const rows = await tx
+		.selectDistinct({ unitId: circuitResults.unitId })
+		.from(circuitResults)
+		.where(ne(circuitResults.methodVersion, methodVersion));
+	return rows.map((row) => row.unitId);
 }
 
 export function listCircuitResults(tx: Tx, unitIds: readonly string[]): Promise<CircuitResultRow[]> {

@@ -13,6 +13,7 @@ import { coverageOf } from './day-strips';
 import { firstMoverShape } from './first-mover-shapes';
 import { limitsOf, siteShape, unitShape } from './plant-shapes';
 import { siteClock, siteDate, shortDate } from './site-clock';
+import { previousShape } from './previous-shapes';
 import { figureInUnits, inUnits, iso, startShape, unitsObject } from './start-shapes';
 import { visibleStart } from './starts';
 
@@ -184,6 +185,7 @@ export async function startSheet(actor: Actor, startId: string, system: UnitSyst
 			headroom: headroomOf(record, limitsOf(limitRows), system),
 			stateSinceLastRow: stateSince(row, span?.to ?? null, rows.slice(at + 1)),
 			beforeYouReset: record.trip ? beforeReset(record.trip.kind, lastHour, unit.nature.startsPerHour ?? null) : null,
+			previousMethod: row.extras.previous ? previousShape(row.extras.previous, record, system) : null,
 			wouldDecide:
 				suspects && result?.suspects[system].verdict === 'fault-pattern'
 					? (result.suspects[system].suspects[0]?.decisiveCheck.title ?? null)

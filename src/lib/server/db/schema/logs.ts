@@ -4,6 +4,7 @@ import type { NotedBody } from '$lib/model/noted';
 import type { StartRecord, StartSource } from '$lib/model/start';
 import type { Clue, SuspectKey, SuspectsResult } from '$lib/model/suspect';
 import type { KeptFirstMover } from '$lib/model/first-mover';
+import type { PreviousMethod } from '$lib/model/previous-method';
 import type { Log } from '$lib/model/wire/log';
 import {
 	bigint,
@@ -31,6 +32,8 @@ export type StartExtras = {
 	clues: Record<UnitSystem, (Clue & { suspect: SuspectKey })[]>;
 	/** in stored units */
 	firstMover: KeptFirstMover | null;
+	/** what the method said before its present version, where it differs */
+	previous?: PreviousMethod | undefined;
 };
 
 const bytes = customType<{ data: Uint8Array; driverData: Uint8Array }>({ dataType: () => 'bytea' });
