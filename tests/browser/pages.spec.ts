@@ -26,6 +26,12 @@ for (const size of SIZES)
 				'/cases',
 				'/visits',
 				'/office',
+				'/office/plant',
+				'/office/keys',
+				'/office/mail',
+				'/office/jobs',
+				'/office/audit',
+				'/office/settings',
 				'/method',
 				'/account'
 			];

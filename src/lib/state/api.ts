@@ -35,9 +35,12 @@ export async function getJson<T>(fetcher: typeof fetch, path: string): Promise<T
 	return (await answer.json()) as T;
 }
 
+/** A call that takes longer has lost its connection: the form says so, and keeps what was typed. */
+const MOST_MS = 60_000;
+
 /**
  * An unsafe call with a JSON body; an empty answer gives undefined.
- * @throws ApiError on a refusal, TypeError when there is no connection
+ * @throws ApiError on a refusal, TypeError or DOMException when there is no connection or no answer within a minute
  */
 export async function sendJson<T = undefined>(
 	method: 'POST' | 'PUT' | 'PATCH' | 'DELETE',
@@ -47,7 +50,8 @@ export async function sendJson<T = undefined>(
 	const answer = await fetch(path, {
 		method,
 		headers: { accept: 'application/json', ...(body === undefined ? {} : { 'content-type': 'application/json' }) },
-		body: body === undefined ? undefined : JSON.stringify(body)
+		body: body === undefined ? undefined : JSON.stringify(body),
+		signal: AbortSignal.timeout(MOST_MS)
 	});
 	if (!answer.ok) throw new ApiError(await problemOf(answer));
 	if (answer.status === 204 || answer.headers.get('content-length') === '0') return undefined as T;

@@ -3,6 +3,8 @@ import { problemOf } from './api';
 import { dropUnsent, keepUnsent, listUnsent, type Unsent } from './unsent-store';
 
 const AGAIN_MS = 15_000;
+/** A connection that takes longer for one item is taken as none: a photo over a plant's thin network may need minutes. */
+const MOST_MS = 240_000;
 
 const PATHS = { check: 'checks', change: 'changes', noted: 'record' } as const;
 
@@ -17,13 +19,15 @@ async function post(item: Unsent): Promise<Response> {
 		return fetch(`/api/units/${item.unitId}/photos?${query}`, {
 			method: 'POST',
 			headers: { 'content-type': item.picture.type || 'application/octet-stream' },
-			body: item.picture
+			body: item.picture,
+			signal: AbortSignal.timeout(MOST_MS)
 		});
 	}
 	return fetch(`/api/units/${item.unitId}/${PATHS[item.what]}`, {
 		method: 'POST',
 		headers: { 'content-type': 'application/json' },
-		body: JSON.stringify({ ...item.body, clientKey: item.key })
+		body: JSON.stringify({ ...item.body, clientKey: item.key }),
+		signal: AbortSignal.timeout(MOST_MS)
 	});
 }
 
@@ -86,11 +90,14 @@ export class UnsentRecords {
 		}
 	}
 
-	/** Keeps records and tries to send them at once. @throws Error when the browser cannot keep them */
+	/**
+	 * Keeps records, and begins to send them; they are kept once this resolves, sent when the connection allows.
+	 * @throws Error when the browser cannot keep them
+	 */
 	async keep(items: readonly Unsent[]): Promise<void> {
 		for (const item of items) await keepUnsent(item);
 		await this.#look();
-		await this.send();
+		void this.send();
 	}
 
 	async drop(keys: readonly string[]): Promise<void> {

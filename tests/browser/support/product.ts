@@ -4,3 +4,5 @@ export const FIXED_NOW = '2026-02-17T18:00:00Z';
 export const PASSWORD = 'cold-start-0600';
 
 export const origin = (): string => process.env.FIRSTPULL_ORIGIN ?? '';
+/** Where the product keeps its data, and the mail it has sent as files. */
+export const dataFolder = (): string => process.env.FIRSTPULL_DATA ?? '';

@@ -58,5 +58,6 @@ export default async function setup(): Promise<() => Promise<void>> {
 		throw error;
 	}
 	process.env.FIRSTPULL_ORIGIN = origin;
+	process.env.FIRSTPULL_DATA = folder;
 	return stop;
 }

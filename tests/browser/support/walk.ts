@@ -6,6 +6,15 @@ export type Paper = 'day' | 'night';
 export type Person = 'owner' | 'manager' | 'engineer' | 'technician' | 'client';
 export const WIDTHS = { desk: { width: 1440, height: 1000 }, phone: { width: 360, height: 740 } } as const;
 
+/** Signs a member of the demo in on a page, as a person does. */
+export async function enter(page: Page, person: Person): Promise<void> {
+	await page.goto(`${origin()}/sign-in`);
+	await page.getByLabel(/mail/i).fill(`${person}@firstpull.test`);
+	await page.getByLabel(/password/i).fill(PASSWORD);
+	await page.getByRole('button', { name: /sign in/i }).click();
+	await page.waitForURL((url) => url.pathname === '/');
+}
+
 /** A signed-in context whose pages fail the test on a console error, with the clock where the product's own stands. */
 export async function signedIn(
 	browser: Browser,
@@ -26,11 +35,7 @@ export async function signedIn(
 	});
 	page.on('pageerror', (error) => errors.push(error.message));
 	await page.clock.setFixedTime(new Date(FIXED_NOW));
-	await page.goto(`${origin()}/sign-in`);
-	await page.getByLabel(/mail/i).fill(`${person}@firstpull.test`);
-	await page.getByLabel(/password/i).fill(PASSWORD);
-	await page.getByRole('button', { name: /sign in/i }).click();
-	await page.waitForURL((url) => url.pathname === '/');
+	await enter(page, person);
 	return { context, page, errors };
 }
 

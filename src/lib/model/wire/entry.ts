@@ -18,3 +18,11 @@ export const acceptSchema = z.object({
 });
 /** A link of a message, opened by somebody who needs to give nothing more. */
 export const linkSchema = z.object({ token: z.string() });
+/** The first visit: the office and its owner, with the code that the start command printed. */
+export const foundSchema = z.object({
+	code: z.string().trim().min(1, 'Give the code that the start command printed.'),
+	office: z.string().trim().min(1, 'Give the office a name.').max(120),
+	name: z.string().trim().min(1, 'Give your name.').max(120),
+	email: z.email('This is no e-mail address.'),
+	password: passwordSchema
+});

@@ -3,9 +3,9 @@ import { hashToken, randomToken } from '$lib/server/auth/tokens';
 import { config, now } from '$lib/server/config';
 import { countOrganisations } from '$lib/server/repositories/identity';
 import { findToken, insertToken, useToken } from '$lib/server/repositories/tokens';
-import { passwordSchema } from '$lib/model/wire/entry';
-import { z } from 'zod';
-import { foundOrganisation } from './people';
+import type { foundSchema } from '$lib/model/wire/entry';
+import type { z } from 'zod';
+import { demandLength, foundOrganisation } from './people';
 
 /** Is there no organisation yet, and no demo to bring one? */
 export async function isFirstRun(): Promise<boolean> {
@@ -34,25 +34,11 @@ export async function firstRunCode(): Promise<string | null> {
 	return code;
 }
 
-const form = z.object({
-	code: z.string().min(1, 'Give the code that the start command printed.'),
-	office: z.string().min(1, 'Give the office a name.').max(120),
-	name: z.string().min(1, 'Give your name.').max(120),
-	email: z.email('This is no e-mail address.'),
-	password: passwordSchema
-});
-
-/** Makes the organisation and its owner with the code. @throws AppError `invalid` that names the field */
-export async function foundWithCode(input: z.input<typeof form>): Promise<void> {
-	const parsed = form.safeParse(input);
-	if (!parsed.success) {
-		const issue = parsed.error.issues[0];
-		throw new AppError('invalid', issue?.message ?? 'This does not fit.', {
-			errors: [{ field: String(issue?.path[0] ?? ''), message: issue?.message ?? '' }]
-		});
-	}
+/** Makes the organisation and its owner with the code. @throws AppError `invalid` that names the field, `conflict` */
+export async function foundWithCode(input: z.output<typeof foundSchema>): Promise<void> {
 	if (!(await isFirstRun())) throw new AppError('conflict', 'There is an organisation already. Sign in.');
-	const { code, office, ...owner } = parsed.data;
+	const { code, office, ...owner } = input;
+	demandLength(owner.password);
 	const token = await findToken(hashToken(code), 'first-owner', now());
 	if (!token || !(await useToken(token.tokenHash, now())))
 		throw new AppError('invalid', 'This code is wrong or has expired. Start again for a new one.', {
