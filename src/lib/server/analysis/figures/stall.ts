@@ -44,7 +44,8 @@ export function findStall(context: FigureContext, stage = 0): Stall | null {
 		if (moreWanted(view, stretch, fit.mean)) return true;
 		return namesLimit(context.circuit, stretch) && !(view.stepped && setpointMet(waterOver(view, stretch)));
 	};
-	const width = Math.max(FLAT_MS, 2000 * context.spacing);
+	// Two rows are no stretch: a coarse log must show the flat capacity three spacings long.
+	const width = Math.max(FLAT_MS, 3000 * context.spacing);
 	const stretches = goodStretches(from, to, width, 30_000, held).filter((s) => !isRamp(context, load, s));
 	const stalls = stretches.map((stretch) => describe(context, load, stretch, waterOver(view, stretch)));
 	const rank = (stall: Stall) => (stall.verdict === 'stall' ? 1e12 : 0) + (stall.to - stall.from);

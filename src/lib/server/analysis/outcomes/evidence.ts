@@ -35,13 +35,15 @@ export function readStop(
 	// A command that repeats the status falls in the stop's own row; one that falls before it stopped the machine.
 	const fell = commandFall(circuit.input.series.startCommand, run, stop);
 	const water = readWater(circuit, run.lastOn);
+	// Long at its minimum with the water under its setpoint it is as unloaded as it gets, however long ago that was.
+	const idle = water !== null && water <= -UNDER_SETPOINT && atLeast(circuit, run, spacing);
 	return {
 		commandFellAt: fell !== null && (commandTells || fell <= run.lastOn) ? fell : null,
-		unloaded: unloading.unloaded,
+		unloaded: idle || unloading.unloaded,
 		valveClosed: valveClosed(circuit, run),
 		setpointMet: water === null ? null : water <= 0.05,
 		waterAbove: water === null ? null : water > 0.05,
-		loaded: unloading.loaded,
+		loaded: idle ? false : unloading.loaded,
 		allStopped: othersStopped(circuit, run, stop)
 	};
 }
@@ -61,6 +63,17 @@ export function commandFall(command: Series | undefined, run: Run, stop: number)
 		if (now) fell = null;
 	}
 	return fell !== null && stop - fell <= 600_000 ? fell : null;
+}
+
+/** Water this far under its setpoint asks for nothing, K [ours]. */
+const UNDER_SETPOINT = 0.5;
+
+/** Does the capacity stand at the least it runs at in the last running readings? */
+function atLeast(circuit: Circuit, run: Run, spacing: number): boolean {
+	const capacity = circuit.trace('capacity');
+	if (capacity === undefined || circuit.leastCapacity === null) return false;
+	const last = lastReading(capacity, run.lastOn, Math.max(30, 2 * spacing));
+	return last !== null && last.value <= circuit.leastCapacity + 3;
 }
 
 /** Falls of this many points or more toward the minimum are an unloading [ours]. */

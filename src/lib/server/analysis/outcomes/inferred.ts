@@ -29,6 +29,8 @@ export function inferTrip(
 	if (evidence.commandFellAt !== null) return null;
 	const hint = flowHint(circuit, run, stop) ?? bestHint(circuit, run, stop, spacing, learned);
 	if (hint === null) return null;
+	// Water that is only on its way to its limit has met its setpoint before: that stops a machine too.
+	if (!hint.past && hint.kind === 'low-leaving-water' && evidence.setpointMet === true) return null;
 	if (evidence.waterAbove === false && hint.kind !== 'low-leaving-water' && hint.kind !== 'loss-of-water-flow')
 		return null;
 	const sureness = evidence.waterAbove === null ? hint.sureness * 0.8 : hint.sureness;

@@ -81,6 +81,9 @@ function pumpFollowed({ run, evidence }: Case, alarm: Activation): boolean {
 	return after && commanded !== null && commanded <= run.lastOn;
 }
 
+/** Stops known no better than this, s, are not known to be of one moment [ours]. */
+const SAME_MOMENT = 120;
+
 /**
  * Did the supply go: other units too, or the pumps that usually run on, stopped in the same moment, with nothing of a
  * normal stop before it? A command that falls in the stop's own row may have gone with the supply.
@@ -89,6 +92,8 @@ function supplyWent(one: Case): boolean {
 	const { evidence, run } = one;
 	if (evidence === null || evidence.unloaded === true || evidence.valveClosed || one.onSchedule) return false;
 	if (evidence.commandFellAt !== null && evidence.commandFellAt <= run.lastOn) return false;
+	// Rows minutes apart cannot show that all stopped in one moment.
+	if (run.endUncertainty > SAME_MOMENT) return false;
 	if (one.pumpsStopped === false) return false;
 	return one.pumpsStopped === true || (evidence.allStopped && evidence.commandFellAt === null);
 }

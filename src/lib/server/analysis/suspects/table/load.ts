@@ -7,6 +7,7 @@ import { checkClue, figureClue, recent, telling } from '../clue-builders';
 import { type ClueRule, natureIs, SILENT, type SuspectRow } from '../clue-rule';
 import type { Context } from '../context';
 import { plateau, ramp } from '../strength';
+import { restsLoadIt } from './oil';
 import { capacityRuns, latestCheck, stallShare } from './shared';
 
 const slide = natureIs('capacityControl', 'slide');
@@ -202,6 +203,7 @@ export const slideNotLoading: SuspectRow = {
 						stall.sureness *
 						ramp(stall.share, 0.1, 0.4) *
 						ramp(start.value, 56, 51) *
+						ramp(restsLoadIt(context)?.more ?? 0, 6, 2.5) *
 						ramp(stall.level, 90, 84) *
 						ramp(context.figure('settledMargin', recent(context, 'settledMargin'))?.value ?? 0, 13, 10),
 					sentence: `It stalls although capacity at start is ordinary: ${context.words.percent(start.value)}.`,

@@ -1,4 +1,5 @@
 import type { FieldCheckFact } from '$lib/model/checks';
+import type { StartRecord } from '$lib/model/start';
 import { cautionsFor } from '../cautions';
 import { besideClue, checkClue, driftClue, figureClue, growthOf, recent, telling } from '../clue-builders';
 import { always, type ClueRule, natureIs, SILENT, type SuspectRow } from '../clue-rule';
@@ -74,6 +75,37 @@ const stallsAsOilChanges: ClueRule = {
 	}
 };
 
+/** How much more loaded the machine starts after long rests than after short ones, points; null without two of each. */
+export function restsLoadIt(context: Context): { more: number; long: number; short: number } | null {
+	const capacity = (starts: readonly StartRecord[]) => context.figure('startCapacity', starts);
+	const rest = (start: StartRecord) => start.restSeconds ?? NaN;
+	const long = capacity(context.starts.filter((start) => rest(start) >= 6 * 3600));
+	const short = capacity(context.starts.filter((start) => rest(start) < 3 * 3600));
+	if (!long || !short || long.values.length < 2 || short.values.length < 2) return null;
+	return { more: long.value - short.value, long: long.value, short: short.value };
+}
+
+/** Oil drains from the cylinder over a long rest when there is little of it: common practice, no source. */
+const moreLoadedAfterRests: ClueRule = {
+	key: 'more-loaded-after-long-rests',
+	direction: 'for',
+	weight: 0.25,
+	readAt: 'start',
+	applies: oilMoved,
+	needs: ['capacity'],
+	read: (context) => {
+		const rests = restsLoadIt(context);
+		if (!rests) return SILENT;
+		return {
+			strength: ramp(rests.more, 2.5, 6),
+			sentence: `Capacity at start ${context.words.percent(rests.long)} after rests of 6 h and more, ${context.words.percent(rests.short)} after short ones.`,
+			figures: { long: rests.long, short: rests.short },
+			starts: context.starts.slice(-5),
+			show: { signals: ['capacity'], from: 0, to: 180 }
+		};
+	}
+};
+
 export const lowOil: SuspectRow = {
 	key: 'low-oil',
 	family: 'oil',
@@ -99,6 +131,7 @@ export const lowOil: SuspectRow = {
 		}),
 		stallNearFull,
 		stallsAsOilChanges,
+		moreLoadedAfterRests,
 		figureClue({
 			key: 'oil-hot',
 			weight: 0.25,

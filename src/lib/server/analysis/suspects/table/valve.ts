@@ -109,7 +109,7 @@ export const valveUnderfeeding: SuspectRow = {
 		{ key: 'liquid-line-restriction', share: 0.3 },
 		{ key: 'low-oil', share: 0.3 },
 		{ key: 'slide-not-unloading', share: 0.3 },
-		{ key: 'plant-staging', share: 0.4 },
+		{ key: 'plant-staging', share: 0.6 },
 		{ key: 'evap-saturation-sensor', share: 0.4 }
 	],
 	trips: 'low-side',

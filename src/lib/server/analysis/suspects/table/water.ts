@@ -71,7 +71,7 @@ function flowShare(
 function flowAllows(context: Context): number {
 	const flow = flowShare(context);
 	if (!flow) return 1;
-	return (flow.byPlant ? 0.3 : 1) * (flow.from === 'design' ? ramp(flow.value, 0.97, 0.85) : 1);
+	return (flow.byPlant ? 0.3 : 1) * (flow.from === 'design' ? ramp(flow.value, 0.86, 0.72) : 1);
 }
 
 const flowLow: ClueRule = {
@@ -215,7 +215,7 @@ export const lowWaterFlow: SuspectRow = {
 	showsWithoutSymptom: true,
 	explainedBy: [
 		{ key: 'evap-saturation-sensor', share: 0.4 },
-		{ key: 'plant-staging', share: 0.2 }
+		{ key: 'plant-staging', share: 0.5 }
 	],
 	check: {
 		key: 'shell-pressure-drop',
