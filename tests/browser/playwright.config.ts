@@ -15,6 +15,11 @@ export default defineConfig({
 	globalSetup: './support/start.ts',
 	outputDir: '/tmp/firstpull-browser-results',
 	workers: 1,
+	// Pictures first, of the demo as it was loaded: the walks after them add units and notes.
+	projects: [
+		{ name: 'pictures', testMatch: /pictures\.spec/ },
+		{ name: 'walks', testIgnore: /pictures\.spec/ }
+	],
 	retries: 0,
 	timeout: 60_000,
 	reporter: [

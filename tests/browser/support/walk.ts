@@ -39,6 +39,11 @@ export async function signedIn(
 	return { context, page, errors };
 }
 
+/** Changes the paper under a page as the system would: it follows at once, so a page is loaded once for both. */
+export async function inPaper(page: Page, paper: Paper): Promise<void> {
+	await page.emulateMedia({ colorScheme: paper === 'night' ? 'dark' : 'light', reducedMotion: 'reduce' });
+}
+
 /** axe finds nothing wrong with the page, and it is no wider than the window. */
 export async function expectSound(page: Page, name: string): Promise<void> {
 	const { violations } = await new AxeBuilder({ page }).analyze();
