@@ -56,7 +56,7 @@ export async function receiveFile(source: Readable, name: string): Promise<Incom
 				if (head) {
 					head = Buffer.concat([head, chunk]);
 					if (head.length >= SNIFF_BYTES) {
-						look(head);
+						look(head.subarray(0, SNIFF_BYTES));
 						head = null;
 					}
 				}

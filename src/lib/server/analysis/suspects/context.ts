@@ -4,6 +4,7 @@ import type { FigureKey, StartRecord } from '$lib/model/start';
 import { limitAt, type LimitKey, type UnitNature } from '$lib/model/unit';
 import type { Series } from '$lib/model/series';
 import { saturationPressure, saturationTemperature } from '../refrigerants/saturation';
+import { mapDistinct } from '../series/map-distinct';
 import { saturationsOf } from '../series/derived';
 import { shownNature } from '../nature-shown';
 import { median } from '../statistics/median';
@@ -122,7 +123,10 @@ function withSaturations(input: CircuitInput): CircuitInput['series'] {
 function pressuresOf(input: CircuitInput): Partial<Record<'evapPressure' | 'condPressure', Series>> {
 	const from = (pressure: Series | undefined, saturation: Series | undefined): Series | undefined => {
 		if (pressure?.t.length || !saturation?.t.length) return undefined;
-		return { ...saturation, v: saturation.v.map((value) => saturationPressure(input.refrigerant, value) ?? NaN) };
+		return {
+			...saturation,
+			v: mapDistinct(saturation.v, (value) => saturationPressure(input.refrigerant, value) ?? NaN)
+		};
 	};
 	const { evapPressure, evapSaturation, condPressure, condSaturation } = input.series;
 	const [evap, cond] = [from(evapPressure, evapSaturation), from(condPressure, condSaturation)];

@@ -99,7 +99,29 @@ const lines = fc.array(
 	{ maxLength: 40 }
 );
 
+/** Only one column in the middle is wanted: what stands behind it is passed over, unless it is too much. */
+const FEW: RowPlan = { ...PLAN, numbers: [1], words: [] };
+
 describe('readRows', () => {
+	it('passes over columns that nobody wants as the exact reader does', async () => {
+		const plain = fc.constantFrom('', '1', '2.25', 'on', ' ', '123456789.125');
+		const any = fc.array(
+			fc.oneof(
+				fc.array(plain, { maxLength: 7 }).map((cells) => ['2025-03-05 10:00', ...cells].join(',')),
+				row
+			),
+			{
+				maxLength: 30
+			}
+		);
+		await fc.assert(
+			fc.asyncProperty(any, fc.constantFrom('\n', '\r\n'), fc.integer({ min: 1, max: 200 }), async (all, eol, size) => {
+				const text = all.join(eol);
+				expect(await read(text, 'auto', size, FEW)).toEqual(await read(text, 'exact', 10_000, FEW));
+			})
+		);
+	});
+
 	it('reads alike with the scanner and with PapaParse, however the bytes are cut', async () => {
 		await fc.assert(
 			fc.asyncProperty(

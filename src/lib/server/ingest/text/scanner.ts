@@ -9,7 +9,9 @@ const NUMBER = 1;
 const WORD = 2;
 const TIME = 3;
 const CLOCK = 4;
-const [LF, CR, SPACE, QUOTE, ZERO, NINE, MINUS, PLUS] = [10, 13, 32, 34, 48, 57, 45, 43];
+const [LF, CR, SPACE, QUOTE, ZERO, NINE, MINUS, PLUS, POINT] = [10, 13, 32, 34, 48, 57, 45, 43, 46];
+/** Digits of a double printed in full, with room. */
+const MOST_DIGITS = 24;
 
 /**
  * Reads rows straight from UTF-8 bytes, without making strings of plain numbers and stamps. It stops at the first
@@ -39,6 +41,9 @@ export class RowScanner {
 	#clockTo = -1;
 	#cells = 0;
 	#surplus = false;
+	/** The last column that anybody wants; and whether the piece at hand has no quote. */
+	readonly #lastWanted: number;
+	#plain = false;
 
 	constructor(plan: RowPlan, handler: RowHandler, dictionaries: Dictionary[], line: number) {
 		this.plan = plan;
@@ -59,6 +64,7 @@ export class RowScanner {
 		});
 		this.#set(plan.time.column, TIME, 0);
 		if (plan.time.clockColumn >= 0) this.#set(plan.time.clockColumn, CLOCK, 0);
+		this.#lastWanted = this.#jobs.findLastIndex((job) => job !== SKIP);
 		this.view = {
 			line: 0,
 			wall: NaN,
@@ -79,6 +85,7 @@ export class RowScanner {
 		let b = this.rest.length > 0 ? Buffer.concat([this.rest, chunk]) : chunk;
 		if (last && b.length > 0 && b[b.length - 1] !== LF) b = Buffer.concat([b, Buffer.from([LF])]);
 		const end = b.lastIndexOf(LF) + 1;
+		this.#plain = !b.includes(QUOTE);
 		let at = 0;
 		while (at < end) {
 			const next = this.#record(b, at, end);
@@ -126,6 +133,15 @@ export class RowScanner {
 				}
 			}
 			column++;
+			if (this.#plain && column > this.#lastWanted && b[stop] !== LF) {
+				// Nobody wants the rest of the row: its cells are only counted, up to those beyond the table.
+				let c = b[stop] as number;
+				while (column < width && c !== LF) {
+					c = b[++stop] as number;
+					if (c === delimiter) column++;
+				}
+				if (c === LF) column++;
+			}
 			if (b[stop] === LF) {
 				if (column < width) this.#blankFrom(column);
 				this.#cells = column;
@@ -189,8 +205,14 @@ export class RowScanner {
 		if (c === CR && b[i + 1] === LF) c = b[++i] as number;
 		if (c === delimiter || c === LF) {
 			// Up to 15 digits both parts are exact, so one division rounds as a full parser would.
-			if (digits > 0 && digits <= 15) {
-				const value = places > 0 ? mantissa / (POW10[places] as number) : mantissa;
+			if (digits > 0 && (digits <= 15 || (digits <= MOST_DIGITS && this.#decimal === POINT))) {
+				// More digits than a double holds are left to the engine's own parser, which rounds them once.
+				const value =
+					digits > 15
+						? Number(b.latin1Slice(whole, afterDigits))
+						: places > 0
+							? mantissa / (POW10[places] as number)
+							: mantissa;
 				this.view.numbers[slot] = negative ? -value : value;
 				this.view.bad[slot] = 0;
 				const word = this.#mixed[column] as number;
