@@ -93,6 +93,57 @@ describe('a log', () => {
 		expect(await startsOf(unitId)).toEqual(before);
 	});
 
+	it('that overlaps another counts where they differ', async () => {
+		const unitId = await newUnit('Differs');
+		const rows = (from: number, water: number) =>
+			['Time,Compressor Running,Leaving Water (°C)']
+				.concat(
+					Array.from({ length: 90 }, (_, i) => {
+						const at = new Date(Date.UTC(2025, 2, 4, 6, from + i)).toISOString().slice(0, 19).replace('T', ' ');
+						return `${at},${from + i > 20 ? 1 : 0},${(water + (from + i) / 100).toFixed(2)}`;
+					})
+				)
+				.join('\n');
+		const one = await upload(unitId, Buffer.from(rows(0, 7)), 'one.csv');
+		expect(one.quality.conflicts).toBe(0);
+		// Worked by hand: the last 30 of the first's 90 minutes come again with other water, and like running.
+		const two = await upload(unitId, Buffer.from(rows(60, 8)), 'two.csv');
+		expect(two.quality.conflicts).toBe(30);
+	});
+
+	it('with a header confirmed at one site is known at another of the organisation, on its own clock', async () => {
+		const { confirmMapping, logRowOf } = await import('$lib/server/services/logs');
+		const { runReading } = await import('$lib/server/services/reading');
+		const rows = (month: string) =>
+			['Time;Compressor Running;Pipe A;Pipe B']
+				.concat(
+					Array.from(
+						{ length: 60 },
+						(_, i) => `2025-${month}-04 06:${String(i).padStart(2, '0')};${i > 9 ? 1 : 0};12,${i};7,${i}`
+					)
+				)
+				.join('\n');
+		const first = await newUnit('Shares', { timeZone: 'Europe/Berlin' });
+		const asked = await upload(first, Buffer.from(rows('02')), 'week.csv');
+		const column = (name: string) => asked.mapping.find((entry) => entry.column === name);
+		const mapping = asked.mapping.map((entry) => ({
+			...entry,
+			signal:
+				entry.column === 'Compressor Running' ? 'running' : entry.column === 'Pipe A' ? 'evapWaterIn' : 'evapWaterOut',
+			unitOfMeasure: entry.column === 'Compressor Running' ? null : 'degC'
+		}));
+		expect(column('Pipe A')).toBeDefined();
+		await confirmMapping(actor, asked.id, { mapping, timeZone: 'Europe/Berlin', choices: { zone: 'Europe/Berlin' } });
+		await runReading({ organisationId: actor.organisationId, logId: asked.id });
+		const second = await newUnit('Is shared with', { timeZone: 'America/New_York' });
+		const known = await upload(second, Buffer.from(rows('03')), 'other.csv');
+		expect(known.state, JSON.stringify(known.problems)).toBe('ready');
+		const row = await logRowOf(actor, known.id);
+		expect(new Set(row.mapping.map((entry) => entry.unitId))).toEqual(new Set([second]));
+		// IANA tz: New York is five hours behind UTC on 4 March 2025.
+		expect(known.firstAt).toBe('2025-03-04T11:00:00.000Z');
+	});
+
 	it('that is broken off in the middle of reading is read again without doubling', async () => {
 		const { updateLog } = await import('$lib/server/repositories/logs');
 		const { withOrganisation } = await import('$lib/server/repositories/transaction');

@@ -18,7 +18,7 @@ const log = (over: Partial<Log> = {}): Log => ({
 	samples: 0,
 	firstAt: '2026-05-04T00:00:00Z',
 	lastAt: '2026-05-10T23:59:00Z',
-	quality: { gaps: 0, longestGapSeconds: 0, repeats: 0, outOfOrder: 0, badValues: {}, coverage: 1 },
+	quality: { gaps: 0, longestGapSeconds: 0, repeats: 0, outOfOrder: 0, badValues: {}, coverage: 1, conflicts: 0 },
 	problems: [],
 	createdAt: '2026-05-11T00:00:00Z',
 	...over

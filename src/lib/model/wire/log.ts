@@ -55,7 +55,10 @@ export const logSchema = z
 			repeats: z.number(),
 			outOfOrder: z.number(),
 			badValues: z.record(z.string(), z.number()),
-			coverage: z.number()
+			coverage: z.number(),
+			conflicts: z.number().int().meta({
+				description: 'readings that differ from those of overlapping logs; the later upload’s count'
+			})
 		}),
 		problems: z.array(problemLineSchema),
 		createdAt: instantSchema

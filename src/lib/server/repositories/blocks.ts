@@ -1,6 +1,6 @@
 import type { Tx } from '$lib/server/db/client';
 import { blockTimes, blocks, events, logs, textBlocks } from '$lib/server/db/schema/logs';
-import { and, asc, eq, gte, inArray, lte, sql } from 'drizzle-orm';
+import { and, asc, eq, gte, inArray, lte, ne, sql } from 'drizzle-orm';
 
 /** Samples as blocks (see the schema): written by reading, read by analysis and traces. */
 
@@ -60,6 +60,23 @@ export function findBlocks(
 		.orderBy(asc(logs.ordinal), asc(blocks.part));
 }
 export type FoundBlock = Awaited<ReturnType<typeof findBlocks>>[number];
+
+/** Has another log of the unit samples in a window of time? */
+export async function overlapsAnother(tx: Tx, unitId: string, logId: string, window: Window): Promise<boolean> {
+	const [row] = await tx
+		.select({ logId: blocks.logId })
+		.from(blocks)
+		.where(
+			and(
+				eq(blocks.unitId, unitId),
+				ne(blocks.logId, logId),
+				lte(blocks.firstAt, window.to),
+				gte(blocks.lastAt, window.from)
+			)
+		)
+		.limit(1);
+	return row !== undefined;
+}
 
 /** The instants of some parts of some logs. */
 export async function findTimes(tx: Tx, parts: readonly { logId: string; part: number }[]) {

@@ -98,8 +98,10 @@ export async function unfinishedLogs(
 	return open;
 }
 
+/** The mappings the organisation's people confirmed, those of one site first, then the newest. */
 export async function findRemembered(tx: Tx, siteId: string): Promise<(typeof rememberedMappings.$inferSelect)[]> {
-	return tx.select().from(rememberedMappings).where(eq(rememberedMappings.siteId, siteId));
+	const rows = await tx.select().from(rememberedMappings).orderBy(desc(rememberedMappings.confirmedAt));
+	return rows.sort((a, b) => Number(b.siteId === siteId) - Number(a.siteId === siteId));
 }
 
 export async function remember(tx: Tx, row: typeof rememberedMappings.$inferInsert): Promise<void> {

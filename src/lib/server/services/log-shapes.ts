@@ -11,7 +11,8 @@ const NO_QUALITY: Log['quality'] = {
 	repeats: 0,
 	outOfOrder: 0,
 	badValues: {},
-	coverage: 0
+	coverage: 0,
+	conflicts: 0
 };
 
 /** A log as the API gives it. */
@@ -31,7 +32,7 @@ export function logShape(row: LogRow): Log {
 		samples: row.samples,
 		firstAt: row.firstAt?.toISOString() ?? null,
 		lastAt: row.lastAt?.toISOString() ?? null,
-		quality: row.quality ?? NO_QUALITY,
+		quality: { ...NO_QUALITY, ...row.quality },
 		problems: row.problems,
 		createdAt: row.createdAt.toISOString()
 	};

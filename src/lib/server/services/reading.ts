@@ -34,6 +34,7 @@ import {
 import { findSite, findUnit, listUnits, raiseRevision, type UnitRow } from '$lib/server/repositories/plant';
 import { withOrganisation } from '$lib/server/repositories/transaction';
 import { objectStore } from '$lib/server/store';
+import { countConflicts } from './conflicts';
 import type { KeptInspection } from './log-shapes';
 
 /** The job that turns a log's bytes into samples. Killed anywhere and begun again, it ends the same. */
@@ -70,15 +71,27 @@ async function contextOf(job: Job, log: LogRow): Promise<{ context: ReadContext;
 			zoneOverride: log.options.timeZone,
 			airPressure: airPressure(site.altitude ?? 0),
 			now: now().getTime(),
-			remembered: remembered.map((row) => ({
-				headerSignature: row.signature,
-				...(row.mapping as { mapping: ColumnMapping[]; choices: Record<string, string> })
-			})),
+			remembered: remembered.flatMap((row) => rememberedHere(row, site.id)),
 			ask: log.options.mapping === 'ask',
 			answers: log.options.choices
 		};
 		return { context, siteId: site.id };
 	});
+}
+
+type Remembered = ReadContext['remembered'][number];
+
+/**
+ * A remembered mapping as it counts at a site. What was confirmed elsewhere in the organisation is shared when it was
+ * one unit's; the clock of the other site, and the year of its log, are not taken along.
+ */
+function rememberedHere(row: { siteId: string; signature: string; mapping: unknown }, siteId: string): Remembered[] {
+	const { mapping, choices } = row.mapping as { mapping: ColumnMapping[]; choices: Record<string, string> };
+	if (row.siteId === siteId) return [{ headerSignature: row.signature, mapping, choices }];
+	const units = new Set(mapping.filter((entry) => entry.signal !== null).map((entry) => entry.unitId));
+	if (units.size > 1) return [];
+	const { zone: _zone, year: _year, ...shared } = choices;
+	return [{ headerSignature: row.signature, mapping, choices: shared }];
 }
 
 const sourcesOf = (log: LogRow): SourceFile[] =>
@@ -292,9 +305,15 @@ async function finish(
 			samples: result.samples,
 			firstAt: result.firstAt === null ? null : new Date(result.firstAt),
 			lastAt: result.lastAt === null ? null : new Date(result.lastAt),
-			quality: result.quality,
+			quality: { ...result.quality, conflicts: 0 },
 			problems: lines([...kept.inspection.problems, ...result.problems], log.files.length > 1)
 		});
+		if (result.firstAt !== null && result.lastAt !== null) {
+			const window = { from: result.firstAt, to: result.lastAt };
+			let conflicts = 0;
+			for (const unitId of new Set(touched)) conflicts += await countConflicts(tx, unitId, job.logId, window);
+			if (conflicts > 0) await updateLog(tx, job.logId, { quality: { ...result.quality, conflicts } });
+		}
 		for (const unitId of new Set(touched)) await raiseRevision(tx, unitId);
 	});
 }

@@ -39,13 +39,32 @@ function inSequence(blocks: readonly FoundBlock[]): FoundBlock[] | null {
 	return sorted;
 }
 
+/** Decodes blocks whose instants are among `times`. @throws Error when they are not */
+export function blockDecoder(
+	times: readonly { logId: string; part: number; times: Uint8Array }[]
+): (block: FoundBlock) => DecodedBlock {
+	const known = new Map(times.map((row) => [partKey(row.logId, row.part), decodeTimes(row.times)]));
+	return (block) => {
+		const t = known.get(partKey(block.logId, block.part));
+		if (!t) throw new Error(`block ${block.logId} ${block.part} has lost its instants`);
+		return {
+			ordinal: block.ordinal,
+			t,
+			v: decodeValues(block.values),
+			logging: block.change ? 'change' : 'interval',
+			increment: block.increment,
+			measure: block.measure
+		};
+	};
+}
+
 /** Makes one series of each group of blocks; row-aligned series of the same blocks share their instants. */
 class SeriesBuilder {
-	#times = new Map<string, Float64Array>();
+	readonly #decode: (block: FoundBlock) => DecodedBlock;
 	#joined = new Map<string, Float64Array>();
 
-	constructor(times: readonly { logId: string; part: number; times: Uint8Array }[]) {
-		for (const row of times) this.#times.set(partKey(row.logId, row.part), decodeTimes(row.times));
+	constructor(times: Parameters<typeof blockDecoder>[0]) {
+		this.#decode = blockDecoder(times);
 	}
 
 	build(blocks: readonly FoundBlock[]): Series {
@@ -63,19 +82,6 @@ class SeriesBuilder {
 			logging: last?.logging ?? 'interval',
 			...(increments.length > 0 ? { increment: Math.max(...increments) } : {}),
 			...(last?.measure ? { measure: last.measure } : {})
-		};
-	}
-
-	#decode(block: FoundBlock): DecodedBlock {
-		const t = this.#times.get(partKey(block.logId, block.part));
-		if (!t) throw new Error(`block ${block.logId} ${block.part} has lost its instants`);
-		return {
-			ordinal: block.ordinal,
-			t,
-			v: decodeValues(block.values),
-			logging: block.change ? 'change' : 'interval',
-			increment: block.increment,
-			measure: block.measure
 		};
 	}
 }

@@ -25,7 +25,8 @@ import {
 	type Problem,
 	type ReadContext,
 	type RememberedMapping,
-	type SourceFile
+	type SourceFile,
+	type UnitRef
 } from '../types';
 import { nothingKnown, openQuestions } from './decide';
 import { namePerSignal } from './per-signal';
@@ -209,17 +210,26 @@ function judgeColumns(samples: readonly ColumnSample[], fileOf: (i: number) => s
 	return { guesses, choices, problems };
 }
 
+/**
+ * The unit a remembered column goes to. A shape that was all one unit's is that of the unit the log came to: sister
+ * machines export alike. Only a shape that several units shared keeps its units, as far as they are at this site still.
+ */
+function ownerOf(known: ColumnMapping, remembered: RememberedMapping, ctx: ReadContext): UnitRef {
+	const units = new Set(remembered.mapping.filter((m) => m.signal !== null).map((m) => m.unitId));
+	const found = units.size > 1 ? ctx.siblings.find((u) => u.unitId === known.unitId) : undefined;
+	return found ?? ctx.unit;
+}
+
 function applyRemembered(entry: ColumnMapping, remembered: RememberedMapping | null, ctx: ReadContext): ColumnMapping {
 	const known = remembered ? recallColumn(remembered, entry.file, entry.column) : null;
-	if (!known) return entry;
-	// Shapes are remembered per site; a unit that has gone since is the log's own unit again.
-	const unitId = [ctx.unit, ...ctx.siblings].some((u) => u.unitId === known.unitId) ? known.unitId : entry.unitId;
+	if (!remembered || !known) return entry;
+	const unit = ownerOf(known, remembered, ctx);
 	const unitOfMeasure = known.unitOfMeasure && isMeasureKey(known.unitOfMeasure) ? known.unitOfMeasure : null;
 	return {
 		...entry,
 		signal: known.signal,
-		circuit: known.circuit,
-		unitId,
+		circuit: Number(known.circuit) <= unit.circuits ? known.circuit : entry.circuit,
+		unitId: unit.unitId,
 		unitOfMeasure,
 		confidence: 1,
 		confirmed: true

@@ -147,6 +147,18 @@ describe('questions', () => {
 		expect(got.decision).toBe('ready');
 		expect(got.mapping.filter((m) => m.signal === null)).toHaveLength(2);
 	});
+	it('remembers a shape for the sister unit too, and a shared file’s columns for their own units', async () => {
+		const first = await look(IP_FIELDS);
+		const mapping = first.columns.map((c) => ({ ...c.guess, confirmed: true }));
+		const remembered = [{ headerSignature: first.headerSignature, mapping, choices: {} }];
+		const sister = { unitId: 'unit-2', tag: 'CH-2', refrigerant: 'R-134a' as const, circuits: 1, ratedAmps: null };
+		const [home] = [context().unit];
+		const next = await look(IP_FIELDS, { unit: sister, siblings: [home], remembered });
+		expect(new Set(next.mapping.map((m) => m.unitId))).toEqual(new Set(['unit-2']));
+		const both = mapping.map((m, i) => (i % 2 === 0 ? m : { ...m, unitId: 'unit-2' }));
+		const shared = await look(IP_FIELDS, { siblings: [sister], remembered: [{ ...remembered[0], mapping: both }] });
+		expect(shared.mapping.map((m) => m.unitId)).toEqual(both.map((m) => m.unitId));
+	});
 	it('asks on the page even when sure, but never twice for one header', async () => {
 		const first = await look(IP_FIELDS, { ask: true });
 		expect(first.decision).toBe('needs-mapping');

@@ -209,7 +209,7 @@ export class RowScanner {
 				// More digits than a double holds are left to the engine's own parser, which rounds them once.
 				const value =
 					digits > 15
-						? Number(b.latin1Slice(whole, afterDigits))
+						? Number(b.toString('latin1', whole, afterDigits))
 						: places > 0
 							? mantissa / (POW10[places] as number)
 							: mantissa;
