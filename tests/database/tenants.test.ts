@@ -60,6 +60,8 @@ describe('the audit trail', () => {
 		]);
 		const rewrite = withOrganisation(one.organisationId, (tx) => tx.update(audit).set({ action: 'nothing' }));
 		await expect(rewrite).rejects.toMatchObject({ cause: { message: expect.stringMatching(/append only/) } });
+		const wipe = withOrganisation(one.organisationId, (tx) => tx.delete(audit));
+		await expect(wipe).rejects.toMatchObject({ cause: { message: expect.stringMatching(/append only/) } });
 	});
 });
 
