@@ -1,8 +1,8 @@
 /** `npm run admin -- …`: works against the database that `npm start` runs, from a second shell. */
+import { spawn } from 'node:child_process';
 import { existsSync } from 'node:fs';
 import { join } from 'node:path';
 import { dataFolder, root } from './lib/paths.mjs';
-import { run } from './lib/run.mjs';
 import { readState } from './lib/state.mjs';
 
 const state = readState(dataFolder());
@@ -19,8 +19,13 @@ const env = {
 	DATA_DIR: dataFolder(),
 	ORIGIN: process.env.ORIGIN ?? state?.origin
 };
-run(process.execPath, ['--enable-source-maps', program, ...process.argv.slice(2)], { env, cwd: process.cwd() }).catch(
-	() => {
-		process.exitCode = 1;
-	}
-);
+const child = spawn(process.execPath, ['--enable-source-maps', program, ...process.argv.slice(2)], {
+	env,
+	cwd: process.cwd(),
+	stdio: 'inherit'
+});
+// Who ends this command ends its work too: a watch goes on until then.
+for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.on(signal, () => child.kill(signal));
+child.once('exit', (code) => {
+	process.exitCode = code ?? 1;
+});
