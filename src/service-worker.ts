@@ -103,8 +103,9 @@ worker.addEventListener('fetch', (event) => {
 	const url = new URL(request.url);
 	if (url.origin !== worker.location.origin) return;
 	const entry = request.method === 'POST' && /^\/sign-(in|out)/.test(url.pathname);
-	if (entry || url.pathname === '/sign-in/callback') {
-		// Another person must not find what the last one saw.
+	const other = request.method === 'PUT' && url.pathname === '/api/account/office';
+	if (entry || other || url.pathname === '/sign-in/callback') {
+		// Another person, or the same one in another office, must not find what was seen before.
 		event.waitUntil(caches.delete(SEEN));
 		return;
 	}

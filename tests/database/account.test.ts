@@ -139,6 +139,29 @@ describe('another address', () => {
 	});
 });
 
+describe('somebody of two offices', () => {
+	it('goes over from one to the other with the session that asks, and to no third', async () => {
+		const { accountOf, enterOffice } = await import('$lib/server/services/account');
+		const { addMember } = await import('$lib/server/services/people');
+		const other = await invitedOffice('Second');
+		const third = await invitedOffice('Third');
+		const member = { email: 'client@office.test', name: 'client', password: null, role: 'technician' as const };
+		await addMember(other.organisationId, { ...member, siteIds: null });
+		const here = await signIn('client@office.test', PASSWORD);
+		const elsewhere = await signIn('client@office.test', PASSWORD);
+		const actor = await actorOf(here.token);
+		if (!actor) throw new Error('no session');
+		expect((await accountOf(actor, here.token)).offices).toMatchObject([
+			{ name: 'Office', role: 'client', present: true },
+			{ name: 'Second', role: 'technician', present: false }
+		]);
+		await enterOffice(actor, other.organisationId, here.token);
+		expect(await actorOf(here.token)).toMatchObject({ organisationId: other.organisationId, role: 'technician' });
+		expect(await actorOf(elsewhere.token)).toMatchObject({ organisationId: office.organisationId, role: 'client' });
+		await expect(enterOffice(actor, third.organisationId, here.token)).rejects.toMatchObject({ kind: 'not-found' });
+	});
+});
+
 describe('mail choices', () => {
 	it('are kept one by one, and a key cannot change them', async () => {
 		const { accountOf, changeAccount } = await import('$lib/server/services/account');

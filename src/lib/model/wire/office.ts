@@ -142,6 +142,7 @@ export const accountSchema = z
 		twoStep: z.object({ on: z.boolean(), recoveryCodesLeft: z.number().int() }),
 		provider: z.boolean(),
 		mailChoices: z.record(z.string(), z.boolean()),
+		offices: z.array(z.object({ id: idSchema, name: z.string(), role: z.enum(ROLES), present: z.boolean() })),
 		sessions: z.array(
 			z.object({
 				id: idSchema,

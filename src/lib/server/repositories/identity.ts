@@ -186,6 +186,11 @@ export async function findSessionActor(tokenHash: string, now: Date): Promise<Se
 	};
 }
 
+/** Moves a session to another office of its person. */
+export async function moveSession(tokenHash: string, organisationId: string): Promise<void> {
+	await database().update(sessions).set({ organisationId }).where(eq(sessions.tokenHash, tokenHash));
+}
+
 export async function touchSession(tokenHash: string, seenAt: Date, expiresAt: Date): Promise<void> {
 	await database().update(sessions).set({ seenAt, expiresAt }).where(eq(sessions.tokenHash, tokenHash));
 }

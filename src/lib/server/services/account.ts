@@ -7,9 +7,12 @@ import { now } from '$lib/server/config';
 import {
 	deleteOtherSessions,
 	deleteSession,
+	findOrganisation,
 	findPerson,
 	findPersonByEmail,
 	listSessions,
+	membershipsOf,
+	moveSession,
 	updatePerson
 } from '$lib/server/repositories/identity';
 import { endTokensOf, findToken, insertToken, useToken } from '$lib/server/repositories/tokens';
@@ -94,6 +97,27 @@ export async function confirmEmailChange(actor: Actor, token: string): Promise<s
 const sessionId = (tokenHash: string): string =>
 	tokenHash.slice(0, 32).replace(/^(.{8})(.{4})(.{4})(.{4})(.{12})$/, '$1-$2-$3-$4-$5');
 
+/** The offices a person is a present member of, the oldest membership first. */
+async function officesOf(actor: Actor) {
+	const offices = [];
+	for (const { organisationId, role } of await membershipsOf(actor.personId)) {
+		const name = (await findOrganisation(organisationId))?.name ?? '';
+		offices.push({ id: organisationId, name, role, present: organisationId === actor.organisationId });
+	}
+	return offices;
+}
+
+/**
+ * Goes over to another office with the session that asks; the other sessions stay where they are.
+ * @throws AppError `not-found` for an office this person is no member of, `forbidden` for a key
+ */
+export async function enterOffice(actor: Actor, organisationId: string, token: string | null): Promise<void> {
+	if (actor.via !== 'session' || token === null) throw new AppError('forbidden', 'This is done signed in on a page.');
+	const member = (await membershipsOf(actor.personId)).some((entry) => entry.organisationId === organisationId);
+	if (!member) throw notFound('office');
+	await moveSession(hashToken(token), organisationId);
+}
+
 /** Everything of a person's own account. `token` is the session that asks. @throws AppError `not-found` */
 export async function accountOf(actor: Actor, token: string | null) {
 	const person = await findPerson(actor.personId);
@@ -107,6 +131,7 @@ export async function accountOf(actor: Actor, token: string | null) {
 		twoStep: { on: person.totpConfirmed, recoveryCodesLeft: person.recoveryHashes.length },
 		provider: person.oidcSubject !== null,
 		mailChoices: Object.fromEntries(MAIL_CHOICES.map((kind) => [kind, person.mailChoices[kind] !== false])),
+		offices: await officesOf(actor),
 		sessions: live.map((row) => ({
 			id: sessionId(row.tokenHash),
 			browser: row.userAgent,

@@ -215,6 +215,14 @@ export const endTwoStep = operation({
 	body: passwordOnlySchema,
 	status: 204
 });
+export const enterOffice = operation({
+	method: 'put',
+	path: '/api/account/office',
+	summary: 'Goes over to another office you are a member of, with this session',
+	right: 'read',
+	body: z.object({ id: z.uuid() }),
+	status: 204
+});
 export const endSession = operation({
 	method: 'delete',
 	path: '/api/account/sessions/{session}',
