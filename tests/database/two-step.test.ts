@@ -40,6 +40,14 @@ describe('two-step sign-in', () => {
 		({ recoveryCodes } = await confirmTwoStep(office.owner, codeAt(-1)));
 		expect(recoveryCodes).toHaveLength(10);
 		await expect(beginTwoStep(office.owner, PASSWORD)).rejects.toMatchObject({ kind: 'conflict' });
+		const { auditOf } = await import('$lib/server/services/office');
+		const [line] = await auditOf(office.owner, { limit: 1 });
+		expect(line).toMatchObject({
+			by: 'Owner',
+			subject: 'their own account',
+			after: { what: 'Two-step sign-in is on' }
+		});
+		expect(JSON.stringify(line)).not.toContain(secret);
 	});
 
 	it('asks for a code after the right password only, and takes each once', async () => {

@@ -88,7 +88,7 @@ export async function confirmEmailChange(actor: Actor, token: string): Promise<s
 	if (await findPersonByEmail(email)) throw new AppError('conflict', 'This address belongs to somebody already.');
 	await updatePerson(actor.personId, { email });
 	await endTokensOf(actor.personId, ['reset'], now());
-	const before = { id: actor.personId, email: actor.email };
+	const before = { id: actor.personId, email: actor.email, name: actor.name };
 	await tellSafety(before, 'Your address was changed', `You sign in as ${email} from now on.`);
 	return email;
 }
