@@ -186,6 +186,10 @@ describe('late deliveries', () => {
 		expect(lateBy(24, since, new Date('2026-03-02T07:00:00Z'))).toBe(7);
 		expect(lateBy(null, since, new Date('2027-03-01T00:00:00Z'))).toBeNull();
 		await changeUnit(office.owner, office.unitId, { deliveryHours: 24 });
+		const { comingsOf } = await import('$lib/server/services/deliveries');
+		expect((await comingsOf(office.manager)).get(office.unitId)).toEqual({ lastAt: null, lateHours: null });
+		const later = (await comingsOf(office.manager, new Date(Date.now() + 2 * DAY))).get(office.unitId);
+		expect(later?.lateHours).toBeCloseTo(24, 0);
 		await tellLateLogs(new Date(Date.now() + 2 * DAY));
 		await tellLateLogs(new Date(Date.now() + 3 * DAY));
 		await deliver(office);

@@ -7,6 +7,10 @@ export type PlantUnit = {
 	circuits: number;
 	/** a log is expected at least this often, h; null: none comes by itself */
 	deliveryHours: number | null;
+	/** when the newest log came; null: none yet */
+	lastAt: string | null;
+	/** the next log is late by this, h; null: it is not, or none comes by itself */
+	lateHours: number | null;
 };
 export type PlantSite = { id: string; name: string; onCallId: string | null };
 

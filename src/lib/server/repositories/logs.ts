@@ -41,6 +41,15 @@ export function listLogStates(tx: Tx, unitIds: readonly string[]) {
 		.where(inArray(logs.unitId, [...unitIds]));
 }
 
+/** When the newest log of each unit came. */
+export async function listLastComings(tx: Tx): Promise<Map<string, Date>> {
+	const rows = await tx
+		.select({ unitId: logs.unitId, at: sql<string>`max(${logs.createdAt})` })
+		.from(logs)
+		.groupBy(logs.unitId);
+	return new Map(rows.map(({ unitId, at }) => [unitId, new Date(at)]));
+}
+
 /** Names and units of some logs, by their ids. */
 export async function listLogNames(
 	tx: Tx,

@@ -1,6 +1,8 @@
+import { maySeeSite, type Actor } from '$lib/model/people';
+import { demand } from '$lib/server/auth/guard';
 import { now } from '$lib/server/config';
 import { listOrganisations } from '$lib/server/repositories/identity';
-import { listLogs } from '$lib/server/repositories/logs';
+import { listLastComings, listLogs } from '$lib/server/repositories/logs';
 import { listSites, listUnits, markLateTold, type SiteRow, type UnitRow } from '$lib/server/repositories/plant';
 import { withOrganisation } from '$lib/server/repositories/transaction';
 import { formatDuration } from '$lib/utils/clock';
@@ -20,6 +22,25 @@ export function lateBy(deliveryHours: number | null, since: Date, at: Date): num
 	if (deliveryHours === null) return null;
 	const hours = (at.getTime() - since.getTime()) / HOUR;
 	return hours > deliveryHours * PATIENCE ? hours - deliveryHours : null;
+}
+
+/** The units a person may see, with when their newest log came and by how much the next one is late, h. */
+export async function comingsOf(
+	actor: Actor,
+	at: Date = now()
+): Promise<Map<string, { lastAt: string | null; lateHours: number | null }>> {
+	demand(actor, 'readOffice');
+	return withOrganisation(actor.organisationId, async (tx) => {
+		const last = await listLastComings(tx);
+		const units = (await listUnits(tx)).filter((unit) => maySeeSite(actor, unit.siteId));
+		return new Map(
+			units.map((unit) => {
+				const lastAt = last.get(unit.id) ?? null;
+				const lateHours = lateBy(unit.deliveryHours, lastAt ?? unit.createdAt, at);
+				return [unit.id, { lastAt: lastAt?.toISOString() ?? null, lateHours }];
+			})
+		);
+	});
 }
 
 /** The units of an office whose logs are late and were not told of yet. */
