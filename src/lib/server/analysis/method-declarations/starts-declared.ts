@@ -33,12 +33,12 @@ export const STARTS_SECTION: MethodSection = {
 		},
 		{
 			name: 'Inferred trip',
-			says: 'Only where the machine stopped loaded, without unloading or a valve closing before it, not near a command or a schedule, with water above setpoint, sampled every minute or finer, and a protective quantity past its limit or running to it.',
+			says: 'Only where the machine stopped loaded, without unloading or a valve closing before it, not near a command or a schedule, with water above setpoint, sampled every minute or finer, and a protective quantity past its limit or running to it. A flow proof that opens in the row of the stop and closes again by itself counts as past; water that is only on its way to its limit does not, since it has met its setpoint before.',
 			origin: 'ours'
 		},
 		{
 			name: 'Power failure',
-			says: 'Everything stops at once, other units too, often with a gap. Never counted as a trip.',
+			says: 'Everything stops at once, other units too, often with a gap. Never counted as a trip. Rows more than two minutes apart cannot show it.',
 			origin: 'ours'
 		},
 		{
@@ -55,6 +55,16 @@ export const STARTS_SECTION: MethodSection = {
 			name: 'Stall',
 			says: 'Capacity flat for five minutes, five points or more below what is demanded (or water well above setpoint), not at its maximum, and no limit in force. Where a limit’s quantity is not logged, it cannot be told.',
 			origin: 'ours'
+		},
+		{
+			name: 'A limit that is not logged',
+			says: 'Three flat stretches or more at one motor current (2 %), condensing (0.5 K) or evaporator saturation (0.4 K) but at capacities eight points apart were held by it, when the runs never go past that value; the saturation only while the water stands 0.8 K or more over its setpoint. A limit that was merely near is taken back where three other runs stall at the same capacity, within 1.5 points.',
+			origin: 'ours'
+		},
+		{
+			name: 'Nature that nobody gave',
+			says: 'Condenser water in the log means a water-cooled condenser, condenser air without it an air-cooled one, a level a flooded evaporator, a valve position an electronic valve; runs that settle at 3.5 K of superheat or more mean direct expansion. What is still not known halves a clue once.',
+			origin: 'practice'
 		},
 		{
 			name: 'Headroom',

@@ -59,6 +59,22 @@ export const STATISTICS_SECTION: MethodSection = {
 			origin: 'ours'
 		},
 		{
+			name: 'What is said first',
+			says: 'Sentences lead with the differences that tell most: how surely one group lies above the other, then by how much. What is certain but under 3 % of capacity, 0.6 K or 20 kPa is left to the table.',
+			origin: 'ours'
+		},
+		{
+			name: 'Next checks',
+			says: 'Ordered by what they separate: how evenly a check splits the weight of the leading suspects into those it decides, p, and the rest; less a little for each tool and for stopping the unit.',
+			formula: '4 · p · (1 − p) − 0.02 × tools − 0.08 if the unit must be off',
+			origin: 'ours'
+		},
+		{
+			name: 'A new method version',
+			says: 'Every unit is computed again, and what the version before said of a start stands beside the present wherever they differ.',
+			origin: 'ours'
+		},
+		{
 			name: 'Baseline',
 			says: 'A unit’s own held starts at like conditions come before any usual value.',
 			formula: 'median ± max(floor, 3 × median absolute deviation)',
