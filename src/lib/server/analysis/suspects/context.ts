@@ -133,6 +133,9 @@ function pressuresOf(input: CircuitInput): Partial<Record<'evapPressure' | 'cond
 	return { ...(evap ? { evapPressure: evap } : {}), ...(cond ? { condPressure: cond } : {}) };
 }
 
+/** A first row that may come minutes after the start shows a loaded machine, not how it started. */
+const isTooCoarse = (start: StartRecord, key: FigureKey) => start.marks[key] === 'coarse' && start.spacingSeconds > 60;
+
 function fullLoad(value: number | null, capacity: number | null): number | null {
 	if (value === null || capacity === null) return value;
 	return capacity < 35 ? null : value / (Math.min(100, capacity) / 100);
@@ -162,7 +165,9 @@ export function contextOf(
 	const beside = held.slice(-HELD_BESIDE);
 	const stuck = stuckFinder(reader);
 	const trusted = (start: StartRecord, key: FigureKey) =>
-		(FIGURE_SIGNALS[key] ?? []).some((signal) => stuck(signal, start)) ? null : start.figures[key];
+		isTooCoarse(start, key) || (FIGURE_SIGNALS[key] ?? []).some((signal) => stuck(signal, start))
+			? null
+			: start.figures[key];
 	return {
 		input,
 		nature: input.nature,

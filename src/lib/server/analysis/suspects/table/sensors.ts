@@ -161,6 +161,8 @@ const suctionOffAtRestToo: ClueRule = {
 		const approach = context.atFullLoad('evapApproach', recent(context, 'evapApproach'));
 		if (!rest || !runs) return null;
 		const off = runs.value - usualSuperheat(context);
+		// A pipe in warmer air stands over the evaporator by itself: only cooler air leaves it to the sensor.
+		const byAir = rest.value > 0 && (rest.air === null || rest.air > rest.value - 1) ? 0.6 : 1;
 		const together = Math.sign(off) === Math.sign(rest.value) ? Math.min(Math.abs(off), Math.abs(rest.value)) : 0;
 		const wide = context.nature.evaporator === 'dx' ? 9 : 4;
 		// Wet gas is no sensor's doing: a low superheat must go with a dry discharge, where that is logged.
@@ -168,6 +170,7 @@ const suctionOffAtRestToo: ClueRule = {
 		const dry = off > 0 || !discharge ? 1 : ramp(discharge.value, 6, 12);
 		return {
 			strength:
+				byAir *
 				dry *
 				ramp(together, 1.4, 2.2) *
 				ramp(rest.spread, 1, 0.5) *
