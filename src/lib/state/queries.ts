@@ -148,6 +148,9 @@ export type SignalNotes = {
 	spacingSeconds: number | null;
 	logging: string;
 	bad: number;
+	circuit: string;
+	/** stretches with readings, ms UTC */
+	covered: { from: number; to: number }[];
 	notes: string[];
 };
 

@@ -1,7 +1,14 @@
+import { alignedCuts, alignText } from './aligned';
 import { utf16Kind } from '../container/sniff';
 
 /** How a text's bytes are to be understood. */
-export type TextForm = { encoding: string; mark: number; crOnly: boolean };
+export type TextForm = {
+	encoding: string;
+	mark: number;
+	crOnly: boolean;
+	/** Where cells begin in a table aligned by spaces; null for one with delimiters. */
+	cuts: number[] | null;
+};
 
 /** Is this UTF-8? A character cut off at the end does not count against it. */
 function isUtf8(bytes: Uint8Array): boolean {
@@ -19,6 +26,13 @@ function isUtf8(bytes: Uint8Array): boolean {
  * degree and cube signs comes out right.
  */
 export function textForm(bytes: Uint8Array): TextForm {
+	const form = plainForm(bytes);
+	const text = new TextDecoder(form.encoding).decode(bytes);
+	// The piece at hand may end in the middle of a line.
+	return { ...form, cuts: alignedCuts(text.slice(0, Math.max(0, text.search(/[^\r\n]*$/)) || undefined)) };
+}
+
+function plainForm(bytes: Uint8Array): Omit<TextForm, 'cuts'> {
 	const wide = utf16Kind(bytes);
 	if (wide) {
 		const mark = (bytes[0] ?? 0) >= 0xfe ? 2 : 0;
@@ -31,8 +45,13 @@ export function textForm(bytes: Uint8Array): TextForm {
 	return { encoding: isUtf8(bytes) ? 'utf-8' : 'windows-1252', mark: 0, crOnly };
 }
 
-/** The text as UTF-8 bytes with line feeds, mark gone. Plain UTF-8 passes through without a copy. */
-export async function* toUtf8(source: AsyncIterable<Uint8Array>, form: TextForm): AsyncIterable<Buffer> {
+/** The text as UTF-8 bytes with line feeds, mark gone, cells apart. Plain UTF-8 passes through without a copy. */
+export function toUtf8(source: AsyncIterable<Uint8Array>, form: TextForm): AsyncIterable<Buffer> {
+	const text = decoded(source, form);
+	return form.cuts ? alignText(text, form.cuts) : text;
+}
+
+async function* decoded(source: AsyncIterable<Uint8Array>, form: TextForm): AsyncIterable<Buffer> {
 	let mark = form.mark;
 	const decoder = form.encoding === 'utf-8' ? null : new TextDecoder(form.encoding, { ignoreBOM: true });
 	for await (const raw of source) {
