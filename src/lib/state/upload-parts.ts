@@ -21,15 +21,18 @@ export type PartsReport = {
 };
 
 /**
- * A mark of these very files: names, sizes, times, and a hash of their ends where the browser has one (a page without
- * TLS has none).
+ * A mark of these very files: names, sizes and a hash of their ends; where the browser has no hash (a page without TLS)
+ * names, sizes and times.
  */
 export async function fingerprintOf(files: readonly File[]): Promise<string> {
-	const plain = files.map((file) => `${file.name} ${file.size} ${file.lastModified}`).join('\n');
+	const plain = (file: File): string => `${file.name} ${file.size}`;
 	const ends = files.flatMap((file) => [file.slice(0, 65_536), file.slice(Math.max(0, file.size - 65_536))]);
-	const text = new TextEncoder().encode(plain);
-	if (!globalThis.crypto?.subtle) return shortMark(text);
-	const bytes = await new Blob([text, ...ends]).arrayBuffer();
+	const encode = (text: string): Uint8Array<ArrayBuffer> => new TextEncoder().encode(text);
+	if (!globalThis.crypto?.subtle) {
+		return shortMark(encode(files.map((file) => `${plain(file)} ${file.lastModified}`).join('\n')));
+	}
+	// A log's ends carry its first and last stamps: two logs of one name and size do not share both.
+	const bytes = await new Blob([encode(files.map(plain).join('\n')), ...ends]).arrayBuffer();
 	const hash = new Uint8Array(await crypto.subtle.digest('SHA-256', bytes));
 	return [...hash].map((byte) => byte.toString(16).padStart(2, '0')).join('');
 }
