@@ -7,6 +7,7 @@ import { AlarmColumn } from './alarms';
 import { joinRepeats, reorder, risingOrder } from './order';
 import { RowClock, type TargetTally } from './quality';
 import type { RowTime } from './row-time';
+import { isGoodStatus } from './status';
 import type { Target } from './targets';
 
 const MOST_ROWS = 20_000;
@@ -14,10 +15,6 @@ const DAY = 86_400_000;
 const STATUS = BAD_KINDS.indexOf('status');
 const SENTINEL = BAD_KINDS.indexOf('sentinel');
 const IMPOSSIBLE = BAD_KINDS.indexOf('impossible');
-/** Status cells of a reading that counts; anything else written there makes it no reading. */
-const GOOD =
-	/^(|ok|good|normal|valid|0|192|true|online|active|-|none|\{?ok\}?|in service|good.*|.*\bok\b.*|overridden|alarm|unacked.*)$/i;
-
 /** Joins the name cells of a long row into the point's name. */
 export function pointName(parts: readonly string[]): string {
 	return parts.filter((part) => part !== '').join(' ');
@@ -141,7 +138,7 @@ export class LongRows {
 		const status = view.words[this.#file.roles.names.length + 1] ?? -1;
 		if (status >= 0 && this.#file.roles.status >= 0) {
 			const text = this.dictionaries[this.#file.roles.names.length + 1]?.list[status] ?? '';
-			if (!GOOD.test(text)) {
+			if (!isGoodStatus(text)) {
 				point.tally.note(STATUS, view.line);
 				return NaN;
 			}

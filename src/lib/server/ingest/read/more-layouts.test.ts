@@ -326,3 +326,15 @@ describe('a header that changes in mid-file', () => {
 		}
 	});
 });
+
+describe('one signal a file with a status', () => {
+	it('takes the readings that the status lets count', async () => {
+		const rows = Array.from({ length: 60 }, (_, i) => {
+			const status = i % 10 === 3 ? 'fault' : i % 10 === 7 ? 'stale' : 'ok';
+			return `2025-03-05T10:${String(i).padStart(2, '0')}:00-05:00 New_York,${(44 + i / 100).toFixed(2)}°F,${status}`;
+		});
+		const got = await readBack([sourceFile('leaving chilled water temp.csv', ['ts,val,status', ...rows].join('\n'))]);
+		expect(got.series('evapWaterOut').v).toHaveLength(48);
+		expect(got.result?.quality.badValues['status']).toBe(12);
+	});
+});

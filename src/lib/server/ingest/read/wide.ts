@@ -6,12 +6,14 @@ import { isSentinel, runStateOf, stateOf } from '../values/words';
 import { AlarmColumn } from './alarms';
 import { joinRepeats, reorder, risingOrder } from './order';
 import type { RowClock, TargetTally } from './quality';
+import { isGoodStatus } from './status';
 import type { Target } from './targets';
 
 /** Rows of one block at most: a day at 5 s with room. */
 const MOST_ROWS = 20_000;
 const SENTINEL = BAD_KINDS.indexOf('sentinel');
 const IMPOSSIBLE = BAD_KINDS.indexOf('impossible');
+const STATUS = BAD_KINDS.indexOf('status');
 const DAY = 86_400_000;
 
 type Column = {
@@ -38,6 +40,8 @@ export class WideRows {
 	readonly #plain: Column[];
 	readonly #wordy: Column[];
 	readonly #clock: RowClock;
+	/** Slot of the word that says whether the row's one reading counts; −1 without. */
+	readonly #status: number;
 	#t = new Float64Array(MOST_ROWS);
 	#lines = new Float64Array(MOST_ROWS);
 	#n = 0;
@@ -76,6 +80,8 @@ export class WideRows {
 		});
 		this.#plain = this.#columns.filter((column) => column.word < 0);
 		this.#wordy = this.#columns.filter((column) => column.word >= 0);
+		const { status } = file.roles;
+		this.#status = file.kind === 'per-signal' && status >= 0 ? words.push(status) - 1 : -1;
 		this.dictionaries = words.map(() => new Dictionary());
 		const { column, clockColumn, order, year } = file.time;
 		this.plan = {
@@ -108,6 +114,18 @@ export class WideRows {
 		for (const column of this.#wordy) {
 			if (column.texts) column.texts[n] = view.words[column.word] ?? -1;
 			else column.values[n] = this.#figure(column, view);
+		}
+		if (this.#status >= 0) this.#judge(n, view);
+	}
+
+	/** One signal a file with its status: a bad one makes the reading none. */
+	#judge(n: number, view: RowView): void {
+		const word = this.dictionaries[this.#status]?.list[view.words[this.#status] ?? -1] ?? '';
+		if (isGoodStatus(word)) return;
+		for (const column of this.#columns) {
+			if (column.texts) continue;
+			column.values[n] = NaN;
+			column.tally.note(STATUS, view.line);
 		}
 	}
 
