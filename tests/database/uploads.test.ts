@@ -113,6 +113,26 @@ describe('an upload in parts', () => {
 		});
 	});
 
+	it('goes with its unit, objects and all', async () => {
+		const { beginUpload, takePart } = await service();
+		const { addUnit, removeUnit } = await import('$lib/server/services/units');
+		const { objectKeysOf } = await import('$lib/server/services/office-export');
+		const given = {
+			siteId: office.siteId,
+			tag: 'Gone',
+			refrigerant: 'R-134a',
+			circuits: 1,
+			nature: {},
+			limits: {}
+		} as const;
+		const unit = await addUnit(office.owner, given);
+		const { upload } = await beginUpload(office.technician, unit.id, whole());
+		await takePart(office.technician, upload.id, { file: 0, from: 0 }, Readable.from([bytes.subarray(0, 6000)]));
+		expect((await objectKeysOf(office.organisationId)).filter((key) => key.includes(upload.id))).toHaveLength(1);
+		await removeUnit(office.owner, unit.id);
+		expect(objects(upload.id)).toEqual([]);
+	});
+
 	it('is thrown away when nobody goes on with it', async () => {
 		const { beginUpload, sweepUploads, takePart, uploadOf } = await service();
 		const { updateUpload } = await import('$lib/server/repositories/uploads');

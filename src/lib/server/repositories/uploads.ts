@@ -49,6 +49,19 @@ export function listParts(tx: Tx, uploadId: string): Promise<PartRow[]> {
 		.orderBy(asc(uploadParts.file), asc(uploadParts.begin));
 }
 
+/** Keys of the parts of a unit's open uploads. */
+export async function listPartKeys(tx: Tx, unitId: string): Promise<string[]> {
+	const rows = await tx
+		.select({ key: uploadParts.key })
+		.from(uploadParts)
+		.innerJoin(
+			uploads,
+			and(eq(uploads.organisationId, uploadParts.organisationId), eq(uploads.id, uploadParts.uploadId))
+		)
+		.where(eq(uploads.unitId, unitId));
+	return rows.map((row) => row.key);
+}
+
 /** Notes a part that is safe in the store; false when another stands at its place already. */
 export async function insertPart(tx: Tx, row: typeof uploadParts.$inferInsert): Promise<boolean> {
 	const stored = await tx.insert(uploadParts).values(row).onConflictDoNothing().returning({ file: uploadParts.file });

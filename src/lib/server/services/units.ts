@@ -21,7 +21,11 @@ import {
 	type SiteRow,
 	type UnitRow
 } from '$lib/server/repositories/plant';
+import { listLogs } from '$lib/server/repositories/logs';
+import { listPhotos } from '$lib/server/repositories/photos';
 import { withOrganisation, type Tx } from '$lib/server/repositories/transaction';
+import { listPartKeys } from '$lib/server/repositories/uploads';
+import { objectStore } from '$lib/server/store';
 import type { z } from 'zod';
 import { unitShape } from './plant-shapes';
 
@@ -149,9 +153,15 @@ export async function changeUnit(actor: Actor, id: string, change: UnitPatch): P
 /** Removes a unit with its logs and all that was computed from them. */
 export async function removeUnit(actor: Actor, id: string): Promise<void> {
 	demand(actor, 'plant');
-	await withOrganisation(actor.organisationId, async (tx) => {
+	const keys = await withOrganisation(actor.organisationId, async (tx) => {
 		const { unit } = await visibleUnit(tx, actor, id);
+		const kept = (await listLogs(tx, id)).flatMap((log) => log.files.map((file) => file.key));
+		kept.push(...(await listPhotos(tx, id)).flatMap((photo) => [photo.originalKey, photo.viewKey]));
+		kept.push(...(await listPartKeys(tx, id)));
 		await deleteUnit(tx, id);
 		await recordAudit(tx, actor, { action: 'removed', subject: 'unit', subjectId: id, before: unit });
+		return kept;
 	});
+	// Only once the rows are gone for good: a file too many does less harm than a row without its file.
+	for (const key of keys) await objectStore().remove(key);
 }
