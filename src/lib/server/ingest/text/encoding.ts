@@ -1,4 +1,5 @@
 import { alignedCuts, alignText } from './aligned';
+import { DOS_DEGREE, legacyEncoding } from './legacy';
 import { utf16Kind } from '../container/sniff';
 
 /** How a text's bytes are to be understood. */
@@ -9,6 +10,9 @@ export type TextForm = {
 	/** Where cells begin in a table aligned by spaces; null for one with delimiters. */
 	cuts: number[] | null;
 };
+
+/** So much of a text tells whether it is aligned by spaces. */
+const MOST_JUDGED = 65_536;
 
 /** Is this UTF-8? A character cut off at the end does not count against it. */
 function isUtf8(bytes: Uint8Array): boolean {
@@ -22,14 +26,14 @@ function isUtf8(bytes: Uint8Array): boolean {
 
 /**
  * Encoding, length of the byte-order mark and line ends of a text from its first bytes. What is neither UTF-16 nor
- * UTF-8 is read as Windows-1252: of the single-byte encodings it is the one in which every byte of a trend export's
- * degree and cube signs comes out right.
+ * UTF-8 is of an older logger, see {@link legacyEncoding}.
  */
 export function textForm(bytes: Uint8Array): TextForm {
 	const form = plainForm(bytes);
-	const text = new TextDecoder(form.encoding).decode(bytes);
+	const text = new TextDecoder(labelOf(form.encoding)).decode(bytes.subarray(0, MOST_JUDGED));
 	// The piece at hand may end in the middle of a line.
-	return { ...form, cuts: alignedCuts(text.slice(0, Math.max(0, text.search(/[^\r\n]*$/)) || undefined)) };
+	const whole = bytes.length > MOST_JUDGED ? text.lastIndexOf('\n') : -1;
+	return { ...form, cuts: alignedCuts(whole < 0 ? text : text.slice(0, whole)) };
 }
 
 function plainForm(bytes: Uint8Array): Omit<TextForm, 'cuts'> {
@@ -42,7 +46,7 @@ function plainForm(bytes: Uint8Array): Omit<TextForm, 'cuts'> {
 	}
 	const crOnly = !bytes.includes(10) && bytes.includes(13);
 	if (bytes[0] === 0xef && bytes[1] === 0xbb && bytes[2] === 0xbf) return { encoding: 'utf-8', mark: 3, crOnly };
-	return { encoding: isUtf8(bytes) ? 'utf-8' : 'windows-1252', mark: 0, crOnly };
+	return { encoding: isUtf8(bytes) ? 'utf-8' : legacyEncoding(bytes), mark: 0, crOnly };
 }
 
 /** The text as UTF-8 bytes with line feeds, mark gone, cells apart. Plain UTF-8 passes through without a copy. */
@@ -53,7 +57,8 @@ export function toUtf8(source: AsyncIterable<Uint8Array>, form: TextForm): Async
 
 async function* decoded(source: AsyncIterable<Uint8Array>, form: TextForm): AsyncIterable<Buffer> {
 	let mark = form.mark;
-	const decoder = form.encoding === 'utf-8' ? null : new TextDecoder(form.encoding, { ignoreBOM: true });
+	const decoder = form.encoding === 'utf-8' ? null : new TextDecoder(labelOf(form.encoding), { ignoreBOM: true });
+	const dos = form.encoding === 'ibm850';
 	for await (const raw of source) {
 		let chunk: Buffer = Buffer.from(raw.buffer, raw.byteOffset, raw.byteLength);
 		if (mark > 0) {
@@ -61,12 +66,22 @@ async function* decoded(source: AsyncIterable<Uint8Array>, form: TextForm): Asyn
 			mark -= cut;
 			chunk = chunk.subarray(cut);
 		}
+		if (dos) chunk = withDegrees(chunk);
 		if (decoder) chunk = Buffer.from(decoder.decode(chunk, { stream: true }), 'utf8');
 		if (chunk.length === 0) continue;
 		yield form.crOnly ? withLineFeeds(chunk) : chunk;
 	}
 	const rest = decoder?.decode();
 	if (rest) yield Buffer.from(rest, 'utf8');
+}
+
+/** What the platform's decoder calls an encoding; it knows none of DOS, whose degree sign is put right beforehand. */
+const labelOf = (encoding: string): string => (encoding === 'ibm850' ? 'windows-1252' : encoding);
+
+function withDegrees(chunk: Buffer): Buffer {
+	const out = Buffer.from(chunk);
+	for (let i = out.indexOf(DOS_DEGREE); i >= 0; i = out.indexOf(DOS_DEGREE, i + 1)) out[i] = 0xb0;
+	return out;
 }
 
 function withLineFeeds(chunk: Buffer): Buffer {
