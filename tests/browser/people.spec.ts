@@ -81,6 +81,7 @@ test('a forgotten password is chosen anew by a link in the mail', async ({ brows
 	const page = await context.newPage();
 	await page.goto(`${origin()}/sign-in`);
 	await page.getByRole('link', { name: 'Forgot the password' }).click();
+	await page.waitForURL(/\/reset$/);
 	await page.getByLabel('E-mail').fill('nobody@firstpull.test');
 	await page.getByRole('button', { name: 'Send me a link' }).click();
 	const said = page.getByText('If this address is known here, a link is on its way.');
