@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { accuracySchema } from '../accuracy';
 import { provenanceSchema } from '../unit';
 
 /** GET /api/method: what is computed, how, and where each number comes from. */
@@ -30,6 +31,8 @@ export const methodSchema = z
 				check: z.string()
 			})
 		),
+		/** how often the method was right on the evaluation's plant model */
+		accuracy: accuracySchema,
 		cautions: z.array(z.string())
 	})
 	.meta({ id: 'Method' });

@@ -16,5 +16,10 @@ describe('describeMethod', () => {
 			).toBe(true);
 		}
 	});
+	it('quotes a whole evaluation: 300 sound units or more, every fault', () => {
+		const all = method.accuracy.groups.find((group) => group.key === 'all');
+		expect(all?.soundLogs).toBeGreaterThanOrEqual(300);
+		expect(method.accuracy.families.length).toBeGreaterThan(20);
+	});
 	it('carries the cautions', () => expect(method.cautions.join(' ')).toContain('never bypass'));
 });

@@ -1,4 +1,6 @@
+import { accuracySchema } from '$lib/model/accuracy';
 import { METHOD_VERSION } from '$lib/model/circuit-input';
+import measured from '$lib/model/measured-accuracy.json';
 import { SUSPECT_WORDS } from '$lib/model/words';
 import type { Method } from '$lib/model/wire/method';
 import { METHOD_SECTIONS } from '$lib/server/analysis/method-declarations';
@@ -21,6 +23,7 @@ export function describeMethod(): Method {
 			clues: row.clues.map(({ key, direction, weight }) => ({ words: words(key), direction, weight })),
 			check: row.check.title
 		})),
+		accuracy: accuracySchema.parse(measured),
 		cautions: Object.values(CAUTIONS)
 	};
 }
