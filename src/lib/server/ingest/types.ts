@@ -25,6 +25,8 @@ export type RememberedMapping = {
 	headerSignature: string;
 	mapping: readonly ColumnMapping[];
 	choices: Readonly<Record<string, string>>;
+	/** Confirmed at another site of the organisation: its signals hold here, its units of measure need not. */
+	elsewhere?: boolean;
 };
 
 /** What reading needs to know from outside the files. Plain data: it crosses to a worker thread. */

@@ -79,19 +79,22 @@ async function contextOf(job: Job, log: LogRow): Promise<{ context: ReadContext;
 	});
 }
 
+/** What the format of an export decides, whichever site it comes from. */
+const SHARED_CHOICES: ReadonlySet<string> = new Set(['decimal', 'date-order']);
+
 type Remembered = ReadContext['remembered'][number];
 
 /**
  * A remembered mapping as it counts at a site. What was confirmed elsewhere in the organisation is shared when it was
- * one unit's; the clock of the other site, and the year of its log, are not taken along.
+ * one unit's; the other site's clock, year and units of measure are not taken along.
  */
 function rememberedHere(row: { siteId: string; signature: string; mapping: unknown }, siteId: string): Remembered[] {
 	const { mapping, choices } = row.mapping as { mapping: ColumnMapping[]; choices: Record<string, string> };
 	if (row.siteId === siteId) return [{ headerSignature: row.signature, mapping, choices }];
 	const units = new Set(mapping.filter((entry) => entry.signal !== null).map((entry) => entry.unitId));
 	if (units.size > 1) return [];
-	const { zone: _zone, year: _year, ...shared } = choices;
-	return [{ headerSignature: row.signature, mapping, choices: shared }];
+	const shared = Object.fromEntries(Object.entries(choices).filter(([key]) => SHARED_CHOICES.has(key)));
+	return [{ headerSignature: row.signature, mapping, choices: shared, elsewhere: true }];
 }
 
 const sourcesOf = (log: LogRow): SourceFile[] =>

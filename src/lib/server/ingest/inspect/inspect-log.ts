@@ -224,7 +224,10 @@ function applyRemembered(entry: ColumnMapping, remembered: RememberedMapping | n
 	const known = remembered ? recallColumn(remembered, entry.file, entry.column) : null;
 	if (!remembered || !known) return entry;
 	const unit = ownerOf(known, remembered, ctx);
-	const unitOfMeasure = known.unitOfMeasure && isMeasureKey(known.unitOfMeasure) ? known.unitOfMeasure : null;
+	// Another site may have set the same controller to other units: what this log shows itself comes first.
+	const shown = remembered.elsewhere && entry.signal === known.signal ? entry.unitOfMeasure : null;
+	const unitOfMeasure =
+		shown ?? (known.unitOfMeasure && isMeasureKey(known.unitOfMeasure) ? known.unitOfMeasure : null);
 	return {
 		...entry,
 		signal: known.signal,

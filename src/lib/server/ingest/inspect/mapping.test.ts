@@ -159,6 +159,21 @@ describe('questions', () => {
 		const shared = await look(IP_FIELDS, { siblings: [sister], remembered: [{ ...remembered[0], mapping: both }] });
 		expect(shared.mapping.map((m) => m.unitId)).toEqual(both.map((m) => m.unitId));
 	});
+	it('takes signals from another site, and units of measure from the log itself', async () => {
+		const first = await look(SI_FIELDS);
+		const fahrenheit = first.columns.map(({ guess: g }) => ({
+			...g,
+			unitOfMeasure: g.unitOfMeasure === 'degC' ? ('degF' as const) : g.unitOfMeasure,
+			confirmed: true
+		}));
+		const mapping = fahrenheit.map((m) => (m.column === 'Oil temp' ? { ...m, signal: 'dischargeTemp' as const } : m));
+		const shape = { headerSignature: first.headerSignature, mapping, choices: {} };
+		const here = await look(SI_FIELDS, { remembered: [shape] });
+		expect(guess(here, 'LWT')?.unitOfMeasure).toBe('degF');
+		const there = await look(SI_FIELDS, { remembered: [{ ...shape, elsewhere: true }] });
+		expect(guess(there, 'LWT')).toMatchObject({ signal: 'evapWaterOut', unitOfMeasure: 'degC', confirmed: true });
+		expect(guess(there, 'Oil temp')?.signal).toBe('dischargeTemp');
+	});
 	it('asks on the page even when sure, but never twice for one header', async () => {
 		const first = await look(IP_FIELDS, { ask: true });
 		expect(first.decision).toBe('needs-mapping');
