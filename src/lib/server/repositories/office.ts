@@ -33,10 +33,13 @@ export async function listJobs(organisationId: string, limit: number): Promise<J
 	}));
 }
 
-/** Samples are left out: they come back from the originals. */
+/** Samples are left out: they come back from the originals; and so is what is only on its way in. */
 const LEFT_OUT: ReadonlySet<string> = new Set([
 	'blocks',
 	'block_times',
+	'text_blocks',
+	'uploads',
+	'upload_parts',
 	'idempotency',
 	'tokens',
 	'sessions',
@@ -62,4 +65,14 @@ export async function* dumpTable(tx: Tx, table: string): AsyncGenerator<string[]
 		yield rows.map((row) => String(row['row']));
 	}
 	await tx.execute(sql`close dump`);
+}
+
+/** Where the bytes of mail attachments and of uploads that are not whole yet are kept. */
+export async function listLooseKeys(tx: Tx): Promise<string[]> {
+	const rows = await tx.execute(sql`
+		select key from upload_parts where organisation_id = current_setting('app.organisation')::uuid
+		union all
+		select attachment->>'key' from mails, jsonb_array_elements(attachments) as attachment
+		where organisation_id = current_setting('app.organisation')::uuid`);
+	return rows.map((row) => String(row['key']));
 }

@@ -4,7 +4,7 @@ import { config } from '$lib/server/config';
 import { recordAudit } from '$lib/server/repositories/audit';
 import { findOrganisation, listMembers } from '$lib/server/repositories/identity';
 import { listLogs } from '$lib/server/repositories/logs';
-import { dumpTable, tenantTables } from '$lib/server/repositories/office';
+import { dumpTable, listLooseKeys, tenantTables } from '$lib/server/repositories/office';
 import { listPhotos } from '$lib/server/repositories/photos';
 import { listUnits } from '$lib/server/repositories/plant';
 import { withOrganisation, type Tx } from '$lib/server/repositories/transaction';
@@ -116,7 +116,7 @@ export async function exportOffice(actor: Actor): Promise<ReadableStream<Uint8Ar
 /** Keys of everything an office keeps in the object store. */
 export async function objectKeysOf(organisationId: string): Promise<string[]> {
 	return withOrganisation(organisationId, async (tx) => {
-		const keys: string[] = [];
+		const keys = await listLooseKeys(tx);
 		for (const unit of await listUnits(tx)) {
 			for (const log of await listLogs(tx, unit.id)) keys.push(...log.files.map((file) => file.key));
 			for (const photo of await listPhotos(tx, unit.id)) keys.push(photo.originalKey, photo.viewKey);

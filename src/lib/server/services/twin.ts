@@ -43,8 +43,9 @@ export async function copyToTwin(actor: Actor, fromId: string, toId: string, par
 		}
 		// A site remembers its headers for all of its units; another site learns them with the twin's name in place.
 		if (parts.mapping && from.site.id !== to.site.id) {
-			const known = new Set((await findRemembered(tx, to.site.id)).map((row) => row.signature));
-			for (const row of await findRemembered(tx, from.site.id)) {
+			const rows = await findRemembered(tx, from.site.id);
+			const known = new Set(rows.filter((row) => row.siteId === to.site.id).map((row) => row.signature));
+			for (const row of rows.filter(({ siteId }) => siteId === from.site.id)) {
 				const text = JSON.stringify(row.mapping);
 				if (known.has(row.signature) || !text.includes(fromId)) continue;
 				const mapping: unknown = JSON.parse(text.replaceAll(fromId, toId));
