@@ -212,8 +212,8 @@ export async function changeMember(
 			action: 'changed',
 			subject: 'member',
 			subjectId: personId,
-			before: { role: before.role, siteIds: before.siteIds },
-			after
+			before: { name: before.name, role: before.role, siteIds: before.siteIds },
+			after: { name: before.name, ...after }
 		})
 	);
 }
@@ -227,6 +227,11 @@ export async function endMembership(actor: Actor, personId: string): Promise<voi
 	await updateMember(actor.organisationId, personId, { leftAt: now() });
 	await endAccess(actor.organisationId, personId, now());
 	await withOrganisation(actor.organisationId, (tx) =>
-		recordAudit(tx, actor, { action: 'ended', subject: 'member', subjectId: personId, before: { role: before.role } })
+		recordAudit(tx, actor, {
+			action: 'ended',
+			subject: 'member',
+			subjectId: personId,
+			before: { name: before.name, role: before.role }
+		})
 	);
 }
