@@ -8,7 +8,6 @@ import { dumpTable, listLooseKeys, tenantTables } from '$lib/server/repositories
 import { listPhotos } from '$lib/server/repositories/photos';
 import { listUnits } from '$lib/server/repositories/plant';
 import { withOrganisation, type Tx } from '$lib/server/repositories/transaction';
-import { listPartKeys } from '$lib/server/repositories/uploads';
 import { objectStore } from '$lib/server/store';
 import { strToU8 } from 'fflate';
 import { createReadStream, createWriteStream } from 'node:fs';
@@ -120,7 +119,6 @@ export async function objectKeysOf(organisationId: string): Promise<string[]> {
 		for (const unit of await listUnits(tx)) {
 			for (const log of await listLogs(tx, unit.id)) keys.push(...log.files.map((file) => file.key));
 			for (const photo of await listPhotos(tx, unit.id)) keys.push(photo.originalKey, photo.viewKey);
-			keys.push(...(await listPartKeys(tx, unit.id)));
 		}
 		return keys;
 	});
