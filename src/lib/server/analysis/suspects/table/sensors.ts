@@ -144,6 +144,9 @@ const usualSuperheat = (context: Context): number => {
 	return context.nature.evaporator === 'dx' ? 5 : 1.5;
 };
 
+/** How little the air can have cooled a resting suction pipe, 0…1; `air` is the air minus saturation, K. */
+const notByColdAir = (air: number | null): number => (air === null ? 0.7 : ramp(air, -2, 0));
+
 /**
  * Suction minus saturation at rest is no witness by itself (a pipe takes the room's temperature); it is one when every
  * settled run is off by the same amount to the same side, and the approach does not follow.
@@ -161,8 +164,10 @@ const suctionOffAtRestToo: ClueRule = {
 		const approach = context.atFullLoad('evapApproach', recent(context, 'evapApproach'));
 		if (!rest || !runs) return null;
 		const off = runs.value - usualSuperheat(context);
-		// A pipe in warmer air stands over the evaporator by itself: only cooler air leaves it to the sensor.
-		const byAir = rest.value > 0 && (rest.air === null || rest.air > rest.value - 1) ? 0.6 : 1;
+		// A pipe in warmer air stands over the evaporator by itself, and under it in colder air: only what the air cannot
+		// do is left to the sensor.
+		const overAir = rest.air === null || rest.air > rest.value - 1 ? 0.6 : 1;
+		const byAir = rest.value > 0 ? overAir : notByColdAir(rest.air);
 		const together = Math.sign(off) === Math.sign(rest.value) ? Math.min(Math.abs(off), Math.abs(rest.value)) : 0;
 		const wide = context.nature.evaporator === 'dx' ? 9 : 4;
 		// Wet gas is no sensor's doing: a low superheat must go with a dry discharge, where that is logged.
@@ -194,9 +199,11 @@ const suctionColdAtRest: ClueRule = {
 	read: (context) => {
 		const rest = suctionOffset(context);
 		if (!rest) return null;
-		const warmAir = rest.air === null ? 0.7 : ramp(rest.air, -2, 0);
 		return {
-			strength: ramp(rest.value, -LOG_TOLERANCE + 0.3, -LOG_TOLERANCE - 0.5) * ramp(rest.spread, 1.5, 0.8) * warmAir,
+			strength:
+				ramp(rest.value, -LOG_TOLERANCE + 0.3, -LOG_TOLERANCE - 0.5) *
+				ramp(rest.spread, 1.5, 0.8) *
+				notByColdAir(rest.air),
 			sentence: `At rest suction stands ${context.words.difference(-rest.value)} under evaporator saturation, which nothing there could cool it to.`,
 			figures: { atRest: rest.value },
 			starts: context.starts.slice(-5),
