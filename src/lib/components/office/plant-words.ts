@@ -1,3 +1,5 @@
+import type { Contact, NamePlate } from '$lib/model/unit';
+
 /** A unit as the office's sheet of sites and units needs it. */
 export type PlantUnit = {
 	id: string;
@@ -7,12 +9,19 @@ export type PlantUnit = {
 	circuits: number;
 	/** a log is expected at least this often, h; null: none comes by itself */
 	deliveryHours: number | null;
+	namePlate?: NamePlate;
 	/** when the newest log came; null: none yet */
 	lastAt: string | null;
 	/** the next log is late by this, h; null: it is not, or none comes by itself */
 	lateHours: number | null;
 };
-export type PlantSite = { id: string; name: string; onCallId: string | null };
+export type PlantSite = {
+	id: string;
+	name: string;
+	onCallId: string | null;
+	contacts: readonly Contact[];
+	accessNotes: string | null;
+};
 
 /** How often a unit's log comes by itself. */
 export const DELIVERIES = [
