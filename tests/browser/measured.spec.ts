@@ -4,7 +4,7 @@ import lighthouse, { desktopConfig } from 'lighthouse';
 import { origin } from './support/product';
 import { signedIn, worst } from './support/walk';
 
-/** What a page costs and how still it stands: script bytes, layout shift, and the audits of Lighthouse. */
+/** What a page costs: script bytes, and the audits of Lighthouse. */
 
 /** Bytes of the scripts a page loads before it is still, each compressed by itself as the server sends it. */
 async function scriptsOf(page: Page, path: string): Promise<number> {
@@ -18,24 +18,6 @@ async function scriptsOf(page: Page, path: string): Promise<number> {
 	await page.waitForLoadState('networkidle');
 	page.off('response', listen);
 	return (await Promise.all(bodies)).reduce((sum, bytes) => sum + bytes, 0);
-}
-
-/** Sum of the layout shifts since the page was opened (Layout Instability, W3C draft; no shift after an input counts). */
-async function shiftOf(page: Page, path: string): Promise<number> {
-	await page.goto(`${origin()}${path}`);
-	await page.waitForLoadState('networkidle');
-	return page.evaluate(
-		() =>
-			new Promise<number>((done) => {
-				let sum = 0;
-				const seen = new PerformanceObserver((list) => {
-					for (const entry of list.getEntries() as (PerformanceEntry & { value: number; hadRecentInput: boolean })[])
-						if (!entry.hadRecentInput) sum += entry.value;
-				});
-				seen.observe({ type: 'layout-shift', buffered: true });
-				setTimeout(() => done(sum), 300);
-			})
-	);
 }
 
 /** A context with nothing cached: a first visit loads every script. */
@@ -63,18 +45,6 @@ test('a start sheet loads at most 260 kB of script', async ({ browser }) => {
 	expect(bytes).toBeGreaterThan(10_000);
 	expect(bytes).toBeLessThanOrEqual(260_000);
 });
-
-for (const size of ['desk', 'phone'] as const)
-	test(`nothing moves while a page fills, at the ${size}`, async ({ browser }) => {
-		test.setTimeout(120_000);
-		const { context, page } = await signedIn(browser, 'engineer', size);
-		const { unit, start } = await worst(page);
-		const below = `/units/${unit.id}`;
-		const sheets = ['', '/starts', `/starts/${start}`, '/nights', '/side-by-side', '/suspects', '/checks', '/logs'];
-		for (const path of ['/', ...sheets.map((sheet) => `${below}${sheet}`), '/cases', '/visits', '/office', '/method'])
-			expect.soft(await shiftOf(page, path), path).toBeLessThanOrEqual(0.02);
-		await context.close();
-	});
 
 test('Lighthouse finds nothing to better in accessibility and practice', async ({ browser }) => {
 	test.setTimeout(240_000);

@@ -1,7 +1,7 @@
 import { expect, test } from '@playwright/test';
-import { expectSound, inPaper, signedIn, worst, type Paper, type WIDTHS } from './support/walk';
+import { expectSound, inPaper, shiftOf, signedIn, worst, type Paper, type WIDTHS } from './support/walk';
 
-/** Every page, in both papers and both widths: axe, no console error, no sideways scrolling. */
+/** Every page, in both papers and both widths: axe, no console error, no sideways scrolling, nothing that moves. */
 const SIZES: (keyof typeof WIDTHS)[] = ['desk', 'phone'];
 const PAPERS: Paper[] = ['day', 'night'];
 
@@ -40,6 +40,7 @@ for (const size of SIZES)
 			expect(answer?.status(), path).toBe(200);
 			await page.waitForLoadState('networkidle');
 			await expect(page.getByRole('heading', { level: 1 }), path).toBeVisible();
+			expect.soft(await shiftOf(page), `${path} moves while it fills`).toBeLessThanOrEqual(0.02);
 			for (const paper of PAPERS) {
 				await inPaper(page, paper);
 				await test.step(`${path} ${paper}`, () => expectSound(page, `${path} ${paper}`));

@@ -81,3 +81,19 @@ export async function worst(page: Page): Promise<{ unit: Summary['unit']; start:
 	const { starts } = await api<{ starts: { id: string }[] }>(page, `/api/units/${unit.id}/starts?outcome=tripped`);
 	return { unit, start: starts.at(-1)?.id ?? '' };
 }
+
+/** Sum of the layout shifts since the page was opened (Layout Instability, W3C draft; no shift after an input counts). */
+export async function shiftOf(page: Page): Promise<number> {
+	return page.evaluate(
+		() =>
+			new Promise<number>((done) => {
+				let sum = 0;
+				const seen = new PerformanceObserver((list) => {
+					for (const entry of list.getEntries() as (PerformanceEntry & { value: number; hadRecentInput: boolean })[])
+						if (!entry.hadRecentInput) sum += entry.value;
+				});
+				seen.observe({ type: 'layout-shift', buffered: true });
+				setTimeout(() => done(sum), 300);
+			})
+	);
+}
