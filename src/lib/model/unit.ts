@@ -131,13 +131,13 @@ const plateText = z.string().trim().max(120);
 export const namePlateSchema = z
 	.object({
 		serial: plateText,
-		year: z.number().int().min(1900).max(2200).nullable(),
+		year: z.number('a year, for example 2011').int().min(1900).max(2200).nullable(),
 		place: plateText,
 		/** kg */
-		charge: z.number().positive().nullable(),
+		charge: z.number('a number of kg, for example 212.5').positive().nullable(),
 		oilGrade: plateText,
 		/** L */
-		oilCharge: z.number().positive().nullable()
+		oilCharge: z.number('a number of L, for example 20').positive().nullable()
 	})
 	.partial();
 export type NamePlate = z.infer<typeof namePlateSchema>;
