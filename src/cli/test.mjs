@@ -59,11 +59,18 @@ async function main() {
 	if (wanted('database') && !existsSync('/usr/bin/pdftotext'))
 		await installDebian(['poppler-utils'], 'pdftotext, which reads the printed briefs back,');
 	await run('npx', ['svelte-kit', 'sync'], { cwd: root });
-	await check('lint', 'npx', ['eslint', '.']);
-	await check('format', 'npx', ['prettier', '--check', '--log-level', 'warn', '.']);
-	await check('layers', 'npx', ['depcruise', '--config', '.dependency-cruiser.cjs', 'src']);
-	await check('unused', 'npx', ['knip', '--no-progress']);
-	await check('types', 'npx', ['svelte-check', '--tsconfig', './tsconfig.json', '--fail-on-warnings']);
+	// Each of these keeps one core busy, so two run side by side.
+	await Promise.all([
+		(async () => {
+			await check('lint', 'npx', ['eslint', '.']);
+			await check('format', 'npx', ['prettier', '--check', '--log-level', 'warn', '.']);
+		})(),
+		(async () => {
+			await check('types', 'npx', ['svelte-check', '--tsconfig', './tsconfig.json', '--fail-on-warnings']);
+			await check('layers', 'npx', ['depcruise', '--config', '.dependency-cruiser.cjs', 'src']);
+			await check('unused', 'npx', ['knip', '--no-progress']);
+		})()
+	]);
 	const vitest = (project) => (file) => [
 		'vitest',
 		'run',
