@@ -42,6 +42,8 @@ export async function signedIn(
 /** Changes the paper under a page as the system would: it follows at once, so a page is loaded once for both. */
 export async function inPaper(page: Page, paper: Paper): Promise<void> {
 	await page.emulateMedia({ colorScheme: paper === 'night' ? 'dark' : 'light', reducedMotion: 'reduce' });
+	// Colours on their way from one paper to the other are neither's: the longest motion is 120 ms.
+	await page.waitForTimeout(300);
 }
 
 /** What a change of paper can break: the colours. The rest of a page is the same in both. */
